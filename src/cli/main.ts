@@ -1,0 +1,25 @@
+#!/usr/bin/env node
+import { limits } from './limits.ts';
+import { readCommand } from './read.ts';
+import { nameCommand, tableCommand } from './table.ts';
+import { USAGE } from './usage.ts';
+
+// The terminal: the engine of the desk for batches and scripts. Results on stdout or in --out, everything else on stderr.
+
+const COMMANDS: Readonly<Record<string, (args: readonly string[]) => Promise<number>>> = {
+  table: tableCommand,
+  name: nameCommand,
+  read: readCommand,
+  limits,
+};
+
+const [word, ...args] = process.argv.slice(2);
+const command = word === undefined ? undefined : COMMANDS[word];
+if (command) {
+  process.exitCode = await command(args);
+} else if (word === undefined || word === 'help' || word === '--help' || word === '-h') {
+  process.stdout.write(USAGE);
+} else {
+  process.stderr.write(`linewright: no command '${word}'; there are ${Object.keys(COMMANDS).join(', ')}\n`);
+  process.exitCode = 2;
+}

@@ -1,0 +1,64 @@
+import { mkdirSync, writeFileSync } from 'node:fs';
+import { basename, extname, join } from 'node:path';
+import { createEngine, type Engine, type SourceKind } from '../engine/index.ts';
+import { ProblemError, wordProblem } from '../problems/index.ts';
+import { TABLE_FORMATS, withoutArtefacts } from '../report/index.ts';
+import { type Arguments, parseArguments, UsageError } from './arguments.ts';
+import { openAtomicData, withFile } from './files.ts';
+
+export const tableCommand = (args: readonly string[]) => tables(args, 'spectrum');
+export const nameCommand = (args: readonly string[]) => tables(args, 'line-list');
+
+/** Exit code: 0 all done, 1 some file could not be read, 2 the command line could not be understood. */
+async function tables(args: readonly string[], kind: SourceKind): Promise<number> {
+  let options: Arguments;
+  try {
+    options = parseArguments(args);
+    if (options.words.length === 0) throw new UsageError('no file was named');
+    if (options.words.length > 1 && options.out === undefined) throw new UsageError('several files need --out DIR');
+  } catch (error) {
+    if (!(error instanceof UsageError)) throw error;
+    process.stderr.write(`linewright: ${error.message}\n`);
+    return 2;
+  }
+  const engine = createEngine(openAtomicData(), () => performance.now() / 1000);
+  if (options.out !== undefined) mkdirSync(options.out, { recursive: true });
+  let failures = 0;
+  for (const path of options.words) failures += (await oneTable(engine, path, kind, options)) ? 0 : 1;
+  return failures > 0 ? 1 : 0;
+}
+
+/** Whether the file could be read. */
+async function oneTable(engine: Engine, path: string, kind: SourceKind, options: Arguments): Promise<boolean> {
+  const tell = progressOnTerminal(basename(path));
+  try {
+    await withFile(path, async (source) => {
+      await engine.open(source, kind);
+      const analysis = await engine.analyse(options.settings, [], { progress: ({ stage, share }) => tell(stage, share) });
+      tell();
+      const format = TABLE_FORMATS[options.format];
+      const text = format.write(withoutArtefacts(analysis.table));
+      if (options.out === undefined) process.stdout.write(text);
+      else writeFileSync(join(options.out, `${basename(path, extname(path))}.${format.ending}`), text);
+      const named = analysis.features.filter((f) => f.name).length;
+      process.stderr.write(
+        `${basename(path)}: ${analysis.features.length} features, ${named} named, z = ${analysis.z.toFixed(6)} +/- ${analysis.zErr.toFixed(6)}\n`,
+      );
+      for (const remark of analysis.remarks) if (remark.weight === 'warning') process.stderr.write(`  ${wordProblem(remark)}\n`);
+      if (options.timings) for (const { stage, seconds } of analysis.timings) process.stderr.write(`  ${stage} ${seconds.toFixed(3)} s\n`);
+    });
+    return true;
+  } catch (error) {
+    tell();
+    if (!(error instanceof ProblemError)) throw error;
+    process.stderr.write(`linewright: ${wordProblem(error.problem)}\n`);
+    return false;
+  }
+}
+
+/** A progress line on stderr when a person looks at it; called without arguments it wipes the line. */
+function progressOnTerminal(name: string): (stage?: string, share?: number) => void {
+  if (!process.stderr.isTTY) return () => {};
+  return (stage, share) =>
+    process.stderr.write(stage === undefined ? '\r\u001b[K' : `\r\u001b[K${name}: ${stage} ${Math.round(100 * (share ?? 0))} %`);
+}

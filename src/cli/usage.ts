@@ -1,0 +1,22 @@
+export const USAGE = `linewright: names the emission lines of thin, glowing gas
+
+  linewright table SPECTRUM... [options]   measures and names; one row a feature
+  linewright name LINES.csv... [options]   names lines measured elsewhere (columns wavelength, flux; optional wavelength_err, flux_err, fwhm)
+  linewright read SPECTRUM [--hdu N] [--row K] [--order K]
+                                           the samples as CSV on stdout, how they were read as one JSON line on stderr
+  linewright limits ION... [--te K] [--ne CM3]
+                                           lifetimes, critical densities and survival of an ion's thin-gas lines
+
+  --out DIR              one file a spectrum in DIR instead of stdout
+  --format FORMAT        csv (default), latex, json ...
+  --z Z | --velocity KMS redshift, or velocity in the optical convention; without either it is found from the lines
+  --medium air|vacuum    medium of the wavelengths, where the file does not say
+  --resolution R         lambda / FWHM of the instrument
+  --kind KIND            unknown (default), hii-region, planetary-nebula, nova-shell, shocked-gas, narrow-line-galaxy
+  --threshold SIGMA      a feature is kept from this signal to noise on (default 5)
+  --te K, --ne CM3       electron temperature and density at which critical densities and companions are stated
+  --hdu N, --row K, --order K   which spectrum of the file
+  --timings              seconds of each stage on stderr
+
+Names are proposals: atomic data have errors, and the astronomer decides.
+`;

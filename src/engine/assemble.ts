@@ -1,0 +1,102 @@
+import type { AtomicData } from '../atomic/index.ts';
+import type { Mark, Naming, NamingSettings } from '../identify/index.ts';
+import type { Feature, Measurement, MeasureSettings } from '../measure/index.ts';
+import { sameKeys, type Verdict } from '../session/index.ts';
+import { fromVacuum } from '../spectrum/index.ts';
+import type { Analysis, CandidateView, FeatureView } from './analysis.ts';
+import { candidateViewer } from './candidateView.ts';
+import { lineLabel } from './lineNames.ts';
+import { lineTableOf } from './lineTableOf.ts';
+import type { Material } from './material.ts';
+
+/** The finished stages. */
+interface Parts {
+  readonly data: AtomicData;
+  readonly material: Material;
+  readonly measurement?: Measurement;
+  readonly features: readonly Feature[];
+  readonly marks: readonly Mark[];
+  readonly naming: Naming;
+  readonly byFeature: readonly (Verdict | undefined)[];
+  readonly lost: readonly Verdict[];
+  readonly measureSettings: MeasureSettings;
+  readonly namingSettings: NamingSettings;
+  readonly timings: Analysis['timings'];
+}
+
+/** Stages, verdicts and names put together as they are shown and printed. */
+export function assemble(parts: Parts): Analysis {
+  const { data, material, measurement, naming, namingSettings } = parts;
+  const { medium, mediumStated, fluxUnit, name: title } = material.reading;
+  const view = candidateViewer({ data, medium, te: namingSettings.te });
+  const features = parts.features.map((measured, k): FeatureView => {
+    const { candidates, noneProbability } = naming.features[k];
+    const verdict = parts.byFeature[k];
+    const shown = candidates.map(view);
+    const name = nameInForce(shown, noneProbability, measured, verdict);
+    return {
+      number: k + 1,
+      centroid: measured.centroid,
+      centroidErr: measured.centroidErr,
+      at: parts.marks[k].wavelength,
+      atErr: Number.isFinite(measured.centroidErr) ? measured.centroidErr : 0,
+      measured,
+      candidates: shown,
+      noneProbability,
+      ...(verdict ? { verdict } : {}),
+      ...(name ? { name } : {}),
+    };
+  });
+  return {
+    reading: material.reading,
+    ...(material.spectrum && measurement ? { samples: samplesOf(material.spectrum, measurement) } : {}),
+    groups: measurement?.groups ?? [],
+    resolvingPower: measurement?.resolvingPower,
+    resolvingPowerFrom: measurement?.resolvingPowerFrom,
+    noiseFactor: measurement?.noiseFactor,
+    expectedFalse: measurement?.expectedFalse,
+    features,
+    redshifts: naming.redshifts,
+    z: naming.z,
+    zErr: naming.zErr,
+    dispersionKms: naming.dispersionKms,
+    settings: { measure: parts.measureSettings, naming: namingSettings },
+    missing: naming.missing.map((m) => ({
+      label: lineLabel(data, m.line, medium),
+      expectedAt: fromVacuum(m.expectedAt, medium),
+      predictedFlux: m.predictedFlux,
+    })),
+    remarks: [...material.reading.remarks, ...(measurement?.remarks ?? []), ...naming.remarks],
+    lostVerdicts: parts.lost,
+    table: lineTableOf(features, {
+      title,
+      medium,
+      mediumStated,
+      fluxUnit,
+      z: naming.z,
+      zErr: naming.zErr,
+      te: namingSettings.te,
+      resolvingPower: measurement?.resolvingPower,
+      atomicVersion: data.version,
+    }),
+    timings: parts.timings,
+  };
+}
+
+/** What the feature is called: the accepted name; without a verdict the best candidate, if it is likelier than "none of these"; else nothing. */
+function nameInForce(
+  shown: readonly CandidateView[],
+  noneProbability: number,
+  measured: Feature,
+  verdict: Verdict | undefined,
+): CandidateView | undefined {
+  if (verdict?.decision === 'accepted') return shown.find((candidate) => sameKeys(candidate.keys, verdict.accepted ?? []));
+  if (verdict?.decision !== undefined || measured.artefact !== undefined) return undefined;
+  return shown.length > 0 && shown[0].probability > noneProbability ? shown[0] : undefined;
+}
+
+function samplesOf(spectrum: NonNullable<Material['spectrum']>, measurement: Measurement): Analysis['samples'] {
+  const { wavelength, flux, masked } = spectrum;
+  const { continuum, model, noise } = measurement;
+  return { wavelength, flux, masked, continuum, model, noise };
+}

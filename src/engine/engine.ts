@@ -1,0 +1,121 @@
+import type { AtomicData } from '../atomic/index.ts';
+import { DEFAULT_NAMING_SETTINGS, type Naming, type NamingSettings, nameMarks } from '../identify/index.ts';
+import { DEFAULT_MEASURE_SETTINGS, type Measurement, type MeasureSettings, measure } from '../measure/index.ts';
+import type { ByteSource, ReadingChoices } from '../readers/index.ts';
+import { matchVerdicts, type Settings, type Verdict } from '../session/index.ts';
+import type { Analysis, Progress } from './analysis.ts';
+import { assemble } from './assemble.ts';
+import { fixedNames } from './fixedNames.ts';
+import { marksOf } from './marksOf.ts';
+import { guessKind, type Material, readMaterial, type SourceKind } from './material.ts';
+
+/** How a run is watched and stopped. */
+export interface RunControl {
+  readonly progress?: (progress: Progress) => void;
+  readonly signal?: AbortSignal;
+}
+
+/** One open source and the stages that follow from it; a stage whose inputs did not change is not run again. */
+export interface Engine {
+  readonly data: AtomicData;
+  /** Takes `source` for all following analyses; `guess` looks into the file whether it holds samples or measured lines. */
+  open(source: ByteSource, kind: SourceKind | 'guess'): Promise<SourceKind>;
+  /** @throws ProblemError when the source cannot be read as chosen; RangeError when nothing is open */
+  analyse(settings: Settings, verdicts: readonly Verdict[], control?: RunControl): Promise<Analysis>;
+}
+
+/**
+ * @param data the opened atomic bundle
+ * @param now  seconds from any origin, for the timings: the core asks no clock of its own
+ */
+export function createEngine(data: AtomicData, now: () => number): Engine {
+  let source: { readonly bytes: ByteSource; readonly kind: SourceKind } | undefined;
+  const material = stage<Material>();
+  const measured = stage<Measurement | undefined>();
+  const named = stage<Naming>();
+
+  return {
+    data,
+    async open(bytes, kind) {
+      const found = kind === 'guess' ? await guessKind(bytes) : kind;
+      source = { bytes, kind: found };
+      material.forget();
+      return found;
+    },
+    async analyse(settings, verdicts, control = {}) {
+      if (!source) throw new RangeError('analyse was called before open');
+      const { bytes, kind } = source;
+      const timings: { stage: string; seconds: number }[] = [];
+      const run = async <T>(name: string, work: (progress: (share: number) => void) => T | Promise<T>): Promise<T> => {
+        control.signal?.throwIfAborted();
+        control.progress?.({ stage: name, share: 0 });
+        const began = now();
+        const result = await work((share) => control.progress?.({ stage: name, share }));
+        timings.push({ stage: name, seconds: now() - began });
+        return result;
+      };
+
+      const what = await material.of([settings.reading], () =>
+        run('reading', (progress) =>
+          readMaterial(bytes, kind, settings.reading satisfies ReadingChoices, { progress, signal: control.signal }),
+        ),
+      );
+      const measureSettings: MeasureSettings = { ...DEFAULT_MEASURE_SETTINGS, ...settings.measure };
+      const measurement = await measured.of([material.stamp(), measureSettings], () =>
+        what.spectrum
+          ? run('measuring', (progress) =>
+              measure(what.spectrum, measureSettings, { progress: (_, share) => progress(share), signal: control.signal }),
+            )
+          : undefined,
+      );
+      const features = measurement?.features ?? what.features;
+      const marks = marksOf(features, what.reading.medium);
+      const { byFeature, lost } = matchVerdicts(
+        verdicts,
+        marks.map((mark, k) => ({ at: mark.wavelength, atErr: features[k].centroidErr })),
+      );
+      const namingSettings: NamingSettings = { ...DEFAULT_NAMING_SETTINGS, ...settings.naming };
+      const fixed = fixedNames(byFeature, data);
+      const naming = await named.of([material.stamp(), measured.stamp(), namingSettings, fixed], () =>
+        run('naming', () => nameMarks(marks, data, namingSettings, fixed)),
+      );
+      return assemble({
+        data,
+        material: what,
+        measurement,
+        features,
+        marks,
+        naming,
+        byFeature,
+        lost,
+        measureSettings,
+        namingSettings,
+        timings,
+      });
+    },
+  };
+}
+
+/** Keeps the last result of a stage with the inputs it came from. */
+function stage<T>() {
+  let key: string | undefined;
+  let kept: T | undefined;
+  let count = 0;
+  return {
+    /** The kept result when `inputs` (plain data) are the same as last time, else that of `make`. */
+    async of(inputs: readonly unknown[], make: () => T | Promise<T>): Promise<T> {
+      const asked = JSON.stringify(inputs);
+      if (asked !== key) {
+        kept = await make();
+        key = asked;
+        count++;
+      }
+      return kept as T;
+    },
+    /** Changes whenever the result does. */
+    stamp: () => count,
+    forget() {
+      key = undefined;
+    },
+  };
+}

@@ -1,0 +1,38 @@
+import type { Problem } from '../problems/index.ts';
+import type { Settings, Verdict } from '../session/index.ts';
+import type { Analysis, Progress, SamplesView } from './analysis.ts';
+
+/** What the screen asks of the worker. One request runs at a time; `id` comes back with the answer. To cancel, end the worker and start another. */
+export type WorkerRequest =
+  /** First message: where the atomic bundle is. */
+  | { readonly ask: 'start'; readonly id: number; readonly bundleUrl: string }
+  /** Takes the file as the source of all following analyses. */
+  | {
+      readonly ask: 'open';
+      readonly id: number;
+      readonly file: Blob;
+      readonly name: string;
+      readonly kind: 'spectrum' | 'line-list' | 'guess';
+    }
+  /** Analyses the open source; stages whose inputs did not change are not run again. `samplesKnown`: stamp of the samples the screen already holds. */
+  | {
+      readonly ask: 'analyse';
+      readonly id: number;
+      readonly settings: Settings;
+      readonly verdicts: readonly Verdict[];
+      readonly samplesKnown?: number;
+    };
+
+export type WorkerAnswer =
+  | { readonly say: 'started'; readonly id: number; readonly atomicVersion: string; readonly lineCount: number }
+  | { readonly say: 'opened'; readonly id: number; readonly kind: 'spectrum' | 'line-list' }
+  | { readonly say: 'progress'; readonly id: number; readonly progress: Progress }
+  /** `samples` is absent when the screen already holds those of `samplesStamp`. */
+  | {
+      readonly say: 'analysed';
+      readonly id: number;
+      readonly analysis: Omit<Analysis, 'samples'>;
+      readonly samples?: SamplesView;
+      readonly samplesStamp: number;
+    }
+  | { readonly say: 'problem'; readonly id: number; readonly problem: Problem };

@@ -1,0 +1,17 @@
+import { COLUMNS, type Column } from './columns.ts';
+import type { LineTable } from './lineTable.ts';
+
+/**
+ * The table as CSV by RFC 4180: one header row, CRLF line ends, cells quoted where they must be.
+ * Text that a spreadsheet would run as a formula (leading = @, or + - before something that is no number) is kept from it by a leading apostrophe.
+ */
+export function csvTable(table: LineTable): string {
+  const lines = [COLUMNS.map((c) => c.key).join(',')];
+  for (const row of table.rows) lines.push(COLUMNS.map((column) => csvCell(column, column.cell(row))).join(','));
+  return `${lines.join('\r\n')}\r\n`;
+}
+
+function csvCell(column: Column, text: string): string {
+  const safe = column.kind === 'text' && /^[=@\t\r]|^[+-](?![\d.])/.test(text) ? `'${text}` : text;
+  return /[",\r\n]/.test(safe) ? `"${safe.replaceAll('"', '""')}"` : safe;
+}

@@ -1,0 +1,22 @@
+import { csvTable } from './csv.ts';
+import { jsonTable } from './json.ts';
+import { latexTable } from './latex.ts';
+import type { LineTable } from './lineTable.ts';
+
+/** One way to write the table. */
+export interface TableFormat {
+  readonly label: string;
+  /** File name ending without the dot. */
+  readonly ending: string;
+  readonly mediaType: string;
+  readonly write: (table: LineTable) => string;
+}
+
+/** Every format by the word that chooses it in the terminal. */
+export const TABLE_FORMATS = {
+  csv: { label: 'CSV', ending: 'csv', mediaType: 'text/csv', write: csvTable },
+  latex: { label: 'LaTeX', ending: 'tex', mediaType: 'application/x-tex', write: latexTable },
+  json: { label: 'JSON', ending: 'json', mediaType: 'application/json', write: jsonTable },
+} as const satisfies Record<string, TableFormat>;
+
+export type TableFormatName = keyof typeof TABLE_FORMATS;

@@ -1,0 +1,47 @@
+import type { NamingSettings } from '../identify/index.ts';
+import type { MeasureSettings } from '../measure/index.ts';
+import type { ReadingChoices } from '../readers/index.ts';
+
+/** Choices of the user; what is absent is left to the engine's defaults and to what the file says. */
+export interface Settings {
+  readonly reading: ReadingChoices;
+  readonly measure: Partial<MeasureSettings>;
+  readonly naming: Partial<NamingSettings>;
+}
+
+/** The file the document is about: its bytes are not part of the document. */
+export interface Source {
+  readonly kind: 'spectrum' | 'line-list';
+  readonly name: string;
+  /** Bytes. */
+  readonly size: number;
+}
+
+/** A transition in a form that survives a new edition of the line list: ion and vacuum wavelength, `O III 5008.240`. */
+export type LineKey = string;
+
+export type Decision = 'accepted' | 'rejected' | 'unidentified' | 'artefact';
+
+/** What the user decided on a feature; a feature without one is open. */
+export interface Verdict {
+  /** Where the feature stood when the verdict was given, vacuum Angstrom, and how well it was known (one sigma): this finds it again after a refit. */
+  readonly at: number;
+  readonly atErr: number;
+  /** Absent while there is only a note. */
+  readonly decision?: Decision;
+  /** The accepted transition, or the parts of an accepted blend. */
+  readonly accepted?: readonly LineKey[];
+  /** Names turned down so far, each a transition or the parts of a blend. */
+  readonly turnedDown?: readonly (readonly LineKey[])[];
+  readonly note?: string;
+}
+
+/** All that is stored: where the light came from, what was set, what was decided. Everything else is derived. */
+export interface SessionDocument {
+  readonly source?: Source;
+  readonly settings: Settings;
+  /** Ascending `at`. */
+  readonly verdicts: readonly Verdict[];
+}
+
+export const EMPTY_DOCUMENT: SessionDocument = { settings: { reading: {}, measure: {}, naming: {} }, verdicts: [] };

@@ -1,0 +1,20 @@
+// The document - source, settings, verdicts - and everything that may be done to it: described, reversible changes, undo and redo, the session file.
+// Deliberately not here: anything derived (features, candidates, tables), and where the file is kept (the screen's storage).
+export { applyChange, type Change, inverseOf, type Step } from './change.ts';
+export {
+  accept,
+  acceptMany,
+  changeSettings,
+  declare,
+  openSource,
+  type PointedFeature,
+  type PointedName,
+  reject,
+  reopen,
+  sameKeys,
+  writeNote,
+} from './decide.ts';
+export { type Decision, EMPTY_DOCUMENT, type LineKey, type SessionDocument, type Settings, type Source, type Verdict } from './document.ts';
+export { readSession, writeSession } from './file.ts';
+export { type History, make, redo, startHistory, undo } from './history.ts';
+export { findVerdict, matchVerdicts, type Place } from './matchVerdicts.ts';

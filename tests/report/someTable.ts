@@ -1,0 +1,58 @@
+import type { LineRow, LineTable } from '../../src/report/index.ts';
+
+export const oIII: LineRow = {
+  feature: 1,
+  wavelengthObs: 5007.3634,
+  wavelengthObsErr: 0.0121,
+  wavelengthRestObs: 5006.8423,
+  flux: 985.2,
+  fluxErr: 3.1,
+  fwhm: 2.51,
+  fwhmErr: 0.03,
+  fwhmKms: 35.4,
+  ew: 410,
+  ewErr: 6,
+  snr: 317.8,
+  ion: '[O III]',
+  wavelengthLab: [5006.843],
+  lower: '2p2 3P 2',
+  upper: '2p2 1D 2',
+  nature: 'forbidden',
+  velocity: 31.2,
+  velocityErr: 0.7,
+  probability: 0.9987,
+  thinGas: true,
+  lifetimeS: 36.9,
+  nCrit: 7.1e5,
+  fluxHbeta100: 985.2,
+  fluxHbeta100Err: 12.3,
+  alternatives: [{ ion: 'Fe I', wavelengthLab: [5006.71], probability: 0.0007 }],
+  verdict: 'accepted',
+  artefact: false,
+  note: '',
+};
+
+export const blend: LineRow = {
+  feature: 2,
+  wavelengthObs: 3889.4,
+  flux: 1.23e-14,
+  ion: 'H I+He I',
+  wavelengthLab: [3889.05, 3888.647],
+  thinGas: false,
+  alternatives: [],
+  verdict: 'open',
+  artefact: false,
+  note: 'says "blend", 50 % & more; =SUM(A1)',
+};
+
+export const table = (...rows: LineRow[]): LineTable => ({
+  title: 'lantern_nebula.csv',
+  medium: 'air',
+  mediumStated: true,
+  fluxUnit: '1e-15 erg/s/cm2/A',
+  z: 1.04e-4,
+  zErr: 2e-6,
+  te: 10_000,
+  atomicVersion: '1',
+  rows,
+});

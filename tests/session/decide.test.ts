@@ -1,0 +1,80 @@
+import { describe, expect, test } from 'vitest';
+import {
+  accept,
+  acceptMany,
+  applyChange,
+  declare,
+  EMPTY_DOCUMENT,
+  inverseOf,
+  openSource,
+  reject,
+  reopen,
+  writeNote,
+} from '../../src/session/index.ts';
+
+const feature = { at: 5008.24, atErr: 0.02, label: 'feature 41' };
+const oIII = { label: '[O III] 5006.84', keys: ['O III 5008.240'] };
+const feI = { label: 'Fe I 5006.71', keys: ['Fe I 5008.100'] };
+
+describe('verdicts', () => {
+  test('accepting a name says so in a sentence and pins it to the place of the feature', () => {
+    const change = accept(EMPTY_DOCUMENT, feature, oIII);
+    expect(change.sentence).toBe('accepted [O III] 5006.84 for feature 41');
+    expect(applyChange(EMPTY_DOCUMENT, change).verdicts).toEqual([
+      { at: 5008.24, atErr: 0.02, decision: 'accepted', accepted: ['O III 5008.240'] },
+    ]);
+  });
+
+  test('a rejected name is remembered when another one is accepted', () => {
+    let document = applyChange(EMPTY_DOCUMENT, reject(EMPTY_DOCUMENT, feature, feI));
+    expect(document.verdicts[0]).toMatchObject({ decision: 'rejected', turnedDown: [['Fe I 5008.100']] });
+    document = applyChange(document, accept(document, feature, oIII));
+    expect(document.verdicts[0]).toMatchObject({ decision: 'accepted', accepted: ['O III 5008.240'], turnedDown: [['Fe I 5008.100']] });
+  });
+
+  test('rejecting another name does not touch an acceptance, rejecting the accepted one ends it', () => {
+    let document = applyChange(EMPTY_DOCUMENT, accept(EMPTY_DOCUMENT, feature, oIII));
+    document = applyChange(document, reject(document, feature, feI));
+    expect(document.verdicts[0].decision).toBe('accepted');
+    document = applyChange(document, reject(document, feature, oIII));
+    expect(document.verdicts[0]).toMatchObject({ decision: 'rejected', turnedDown: [['Fe I 5008.100'], ['O III 5008.240']] });
+    expect(document.verdicts[0].accepted).toBeUndefined();
+  });
+
+  test('a note outlives a reopened verdict', () => {
+    let document = applyChange(EMPTY_DOCUMENT, writeNote(EMPTY_DOCUMENT, feature, 'asymmetric'));
+    document = applyChange(document, declare(document, feature, 'unidentified'));
+    document = applyChange(document, reopen(document, feature));
+    expect(document.verdicts).toEqual([{ at: 5008.24, atErr: 0.02, note: 'asymmetric' }]);
+    document = applyChange(document, writeNote(document, feature, ' '));
+    expect(document.verdicts).toEqual([]);
+  });
+
+  test('deciding the same again changes nothing', () => {
+    const document = applyChange(EMPTY_DOCUMENT, accept(EMPTY_DOCUMENT, feature, oIII));
+    expect(accept(document, feature, oIII).steps).toEqual([]);
+  });
+
+  test('accepting many is one change and one undo', () => {
+    const change = acceptMany(
+      EMPTY_DOCUMENT,
+      [
+        { feature, name: oIII },
+        { feature: { at: 4960.3, atErr: 0.02, label: 'feature 40' }, name: { label: '[O III] 4958.91', keys: ['O III 4960.295'] } },
+      ],
+      'accepted 2 names',
+    );
+    const document = applyChange(EMPTY_DOCUMENT, change);
+    expect(document.verdicts.map((v) => v.at)).toEqual([4960.3, 5008.24]);
+    expect(applyChange(document, inverseOf(change))).toEqual(EMPTY_DOCUMENT);
+  });
+
+  test('another source takes the verdicts with it, and undo brings them back', () => {
+    const document = applyChange(EMPTY_DOCUMENT, accept(EMPTY_DOCUMENT, feature, oIII));
+    const change = openSource(document, { kind: 'spectrum', name: 'other.fits', size: 10 });
+    const opened = applyChange(document, change);
+    expect(opened.verdicts).toEqual([]);
+    expect(opened.source?.name).toBe('other.fits');
+    expect(applyChange(opened, inverseOf(change)).verdicts).toEqual(document.verdicts);
+  });
+});
