@@ -6,7 +6,9 @@ export interface Column {
   readonly meaning: string;
   /** Unit by the VOUnits recommendation; empty for numbers without one; `flux` stands for the flux unit of the table. */
   readonly unit: string;
-  readonly kind: 'number' | 'text' | 'boolean';
+  readonly kind: 'integer' | 'number' | 'text' | 'boolean';
+  /** What the column is by the IVOA's vocabulary of unified content descriptors (UCD1+); empty where none fits. */
+  readonly ucd: string;
   readonly cell: (row: LineRow) => string;
 }
 
@@ -28,53 +30,72 @@ export function significant(value: number | undefined, digits: number): string {
 /** Laboratory wavelengths of a name, blend parts joined by `+`. */
 export const labText = (wavelengths: readonly number[] | undefined) => (wavelengths ?? []).map((w) => decimals(w, 3)).join('+');
 
-const number = (key: string, meaning: string, unit: string, cell: (row: LineRow) => string): Column => ({
+const number = (key: string, meaning: string, unit: string, ucd: string, cell: (row: LineRow) => string): Column => ({
   key,
   meaning,
   unit,
+  ucd,
   kind: 'number',
   cell,
 });
-const text = (key: string, meaning: string, cell: (row: LineRow) => string): Column => ({ key, meaning, unit: '', kind: 'text', cell });
+const text = (key: string, meaning: string, ucd: string, cell: (row: LineRow) => string): Column => ({
+  key,
+  meaning,
+  unit: '',
+  ucd,
+  kind: 'text',
+  cell,
+});
+
+/** Unit of a column in this table: flux columns carry the spectrum's flux unit times Angstrom, where it is known. */
+export function unitOf(column: Column, fluxUnit: string): string {
+  if (column.unit !== 'flux') return column.unit;
+  return fluxUnit === '' ? '' : `${fluxUnit} Angstrom`;
+}
 
 /** All columns of the machine-readable table, in their order. */
 export const COLUMNS: readonly Column[] = [
-  number('feature', 'number of the feature', '', (r) => String(r.feature)),
-  number('wavelength_obs', 'observed wavelength', 'Angstrom', (r) => decimals(r.wavelengthObs, 4)),
-  number('wavelength_obs_err', 'its error', 'Angstrom', (r) => decimals(r.wavelengthObsErr, 4)),
-  number('wavelength_rest_obs', 'observed wavelength in the rest frame', 'Angstrom', (r) => decimals(r.wavelengthRestObs, 4)),
-  number('flux', 'flux', 'flux', (r) => significant(r.flux, 6)),
-  number('flux_err', 'its error', 'flux', (r) => significant(r.fluxErr, 4)),
-  number('fwhm', 'observed full width at half maximum', 'Angstrom', (r) => decimals(r.fwhm, 4)),
-  number('fwhm_err', 'its error', 'Angstrom', (r) => decimals(r.fwhmErr, 4)),
-  number('fwhm_kms', 'full width at half maximum, instrument removed where it is known', 'km/s', (r) => decimals(r.fwhmKms, 2)),
-  number('ew', 'equivalent width, positive in emission', 'Angstrom', (r) => significant(r.ew, 5)),
-  number('ew_err', 'its error', 'Angstrom', (r) => significant(r.ewErr, 3)),
-  number('snr', 'signal to noise of the flux', '', (r) => decimals(r.snr, 2)),
-  text('ion', 'ion, brackets by the nature of the line', (r) => r.ion ?? ''),
-  text('wavelength_lab', 'laboratory wavelength, Angstrom', (r) => labText(r.wavelengthLab)),
-  text('lower', 'lower level', (r) => r.lower ?? ''),
-  text('upper', 'upper level', (r) => r.upper ?? ''),
-  text('nature', 'permitted, intercombination, forbidden or sky', (r) => r.nature ?? ''),
-  number('velocity', 'velocity, optical convention', 'km/s', (r) => decimals(r.velocity, 2)),
-  number('velocity_err', 'its error', 'km/s', (r) => decimals(r.velocityErr, 2)),
-  number('probability', 'probability of the name', '', (r) => decimals(r.probability, 4)),
+  { key: 'feature', meaning: 'number of the feature', unit: '', ucd: 'meta.id;meta.main', kind: 'integer', cell: (r) => String(r.feature) },
+  number('wavelength_obs', 'observed wavelength', 'Angstrom', 'em.wl', (r) => decimals(r.wavelengthObs, 4)),
+  number('wavelength_obs_err', 'its error', 'Angstrom', 'stat.error;em.wl', (r) => decimals(r.wavelengthObsErr, 4)),
+  number('wavelength_rest_obs', 'observed wavelength in the rest frame', 'Angstrom', 'em.wl', (r) => decimals(r.wavelengthRestObs, 4)),
+  number('flux', 'flux', 'flux', 'spect.line.intensity', (r) => significant(r.flux, 6)),
+  number('flux_err', 'its error', 'flux', 'stat.error;spect.line.intensity', (r) => significant(r.fluxErr, 4)),
+  number('fwhm', 'observed full width at half maximum', 'Angstrom', 'spect.line.width;em.wl', (r) => decimals(r.fwhm, 4)),
+  number('fwhm_err', 'its error', 'Angstrom', 'stat.error;spect.line.width', (r) => decimals(r.fwhmErr, 4)),
+  number('fwhm_kms', 'full width at half maximum, instrument removed where it is known', 'km/s', 'spect.line.width', (r) =>
+    decimals(r.fwhmKms, 2),
+  ),
+  number('ew', 'equivalent width, positive in emission', 'Angstrom', 'spect.line.eqWidth', (r) => significant(r.ew, 5)),
+  number('ew_err', 'its error', 'Angstrom', 'stat.error;spect.line.eqWidth', (r) => significant(r.ewErr, 3)),
+  number('snr', 'signal to noise of the flux', '', 'stat.snr', (r) => decimals(r.snr, 2)),
+  text('ion', 'ion, brackets by the nature of the line', 'phys.atmol.element', (r) => r.ion ?? ''),
+  text('wavelength_lab', 'laboratory wavelength, Angstrom', 'em.wl;spect.line', (r) => labText(r.wavelengthLab)),
+  text('lower', 'lower level', 'phys.atmol.level', (r) => r.lower ?? ''),
+  text('upper', 'upper level', 'phys.atmol.level', (r) => r.upper ?? ''),
+  text('nature', 'permitted, intercombination, forbidden or sky', 'phys.atmol.transition', (r) => r.nature ?? ''),
+  number('velocity', 'velocity, optical convention', 'km/s', 'spect.dopplerVeloc.opt', (r) => decimals(r.velocity, 2)),
+  number('velocity_err', 'its error', 'km/s', 'stat.error;spect.dopplerVeloc.opt', (r) => decimals(r.velocityErr, 2)),
+  number('probability', 'probability of the name', '', 'stat.probability', (r) => decimals(r.probability, 4)),
   {
     key: 'thin_gas',
     meaning: 'upper level metastable: needs low density',
     unit: '',
+    ucd: 'meta.code',
     kind: 'boolean',
     cell: (r) => (r.thinGas === undefined ? '' : String(r.thinGas)),
   },
-  number('lifetime_s', 'radiative lifetime of the upper level', 's', (r) => significant(r.lifetimeS, 4)),
-  number('n_crit', 'critical density of the upper level', 'cm-3', (r) => significant(r.nCrit, 4)),
-  number('flux_hbeta100', 'flux, H beta = 100', '', (r) => significant(r.fluxHbeta100, 5)),
-  number('flux_hbeta100_err', 'its error', '', (r) => significant(r.fluxHbeta100Err, 3)),
-  number('intensity_hbeta100', 'intensity corrected for reddening, H beta = 100', '', (r) => significant(r.intensityHbeta100, 5)),
-  number('intensity_hbeta100_err', 'its error', '', (r) => significant(r.intensityHbeta100Err, 3)),
-  text('alternatives', 'other names: ion|wavelength|probability', (r) =>
+  number('lifetime_s', 'radiative lifetime of the upper level', 's', 'phys.atmol.lifetime', (r) => significant(r.lifetimeS, 4)),
+  number('n_crit', 'critical density of the upper level', 'cm-3', 'phys.density', (r) => significant(r.nCrit, 4)),
+  number('flux_hbeta100', 'flux, H beta = 100', '', 'spect.line.intensity;arith.ratio', (r) => significant(r.fluxHbeta100, 5)),
+  number('flux_hbeta100_err', 'its error', '', 'stat.error;spect.line.intensity', (r) => significant(r.fluxHbeta100Err, 3)),
+  number('intensity_hbeta100', 'intensity corrected for reddening, H beta = 100', '', 'spect.line.intensity;arith.ratio', (r) =>
+    significant(r.intensityHbeta100, 5),
+  ),
+  number('intensity_hbeta100_err', 'its error', '', 'stat.error;spect.line.intensity', (r) => significant(r.intensityHbeta100Err, 3)),
+  text('alternatives', 'other names: ion|wavelength|probability', 'meta.note', (r) =>
     r.alternatives.map((a) => `${a.ion}|${labText(a.wavelengthLab)}|${decimals(a.probability, 4)}`).join('; '),
   ),
-  text('verdict', 'what the user decided', (r) => r.verdict),
-  text('note', 'note', (r) => r.note),
+  text('verdict', 'what the user decided', 'meta.code', (r) => r.verdict),
+  text('note', 'note', 'meta.note', (r) => r.note),
 ];
