@@ -1,0 +1,11 @@
+// Lines and atoms: the bundled line list (Ritz wavelengths, strengths, sources), n-level atoms and what follows from them.
+// The tables stand in ./tables, ./build compiles them into public/atomic.bin (`npm run data`).
+// Not here: spectra, features, what a line is taken for. Strengths are those of a reference nebula that holds every
+// ionization zone (Te 10^4 K): they rank lines within an ion, across ions only to 0.5 dex.
+export type { AtomicData, SkyBand } from './atomicData.ts';
+export type { StrengthBasis } from './bundleFormat.ts';
+export type { Level, LevelModel } from './levelModel.ts';
+export { UPSILON_TE } from './levelModel.ts';
+export type { Ion, LineList, Mechanism, Nature } from './lineList.ts';
+export { linesBetween } from './linesBetween.ts';
+export { loadAtomicData } from './loadAtomicData.ts';

@@ -1,0 +1,77 @@
+import type { AtomicData, SkyBand } from './atomicData.ts';
+import { type Bundle, openBundle } from './bundle.ts';
+import { NO_LEVEL, STRENGTH_BASES } from './bundleFormat.ts';
+import { openLevelModels } from './openLevelModels.ts';
+import { openLineList } from './openLineList.ts';
+
+/**
+ * Opens the bundled atomic data.
+ *
+ * @param bytes `public/atomic.bin` as it stands on disk (not compressed); kept as the ground of the arrays, so leave it unchanged
+ * @throws RangeError when the bytes are no bundle of this program's schema
+ * Speed: tests/bench/atomicBench.ts. Checked in tests/atomic/loadAtomicData.test.ts.
+ */
+export function loadAtomicData(bytes: Uint8Array): AtomicData {
+  const bundle = openBundle(bytes);
+  const { inputsHash, schema } = bundle.header;
+  const models = openLevelModels(bundle);
+  return {
+    version: `${schema}-${inputsHash.slice(0, 8)}`,
+    inputsHash,
+    lines: openLineList(bundle),
+    modelIons: models.names,
+    levelModel: models.model,
+    referenceAbundance: bundle.f32('ion.abundance'),
+    skyBands: skyBands(bundle),
+    ...lineRecords(bundle),
+  };
+}
+
+function skyBands(bundle: Bundle): SkyBand[] {
+  const texts = bundle.text('texts');
+  const [low, high] = [bundle.f64('band.low'), bundle.f64('band.high')];
+  const [kind, species, note] = [bundle.u16('band.kind'), bundle.u16('band.species'), bundle.u16('band.note')];
+  const kindOf = (text: string): SkyBand['kind'] => (text === 'telluric' || text === 'lamp' ? text : 'emission');
+  return Array.from(low, (lowVac, i) => ({
+    kind: kindOf(texts[kind[i]]),
+    species: texts[species[i]],
+    lowVac,
+    highVac: high[i],
+    note: texts[note[i]],
+  })).sort((p, q) => p.lowVac - q.lowVac);
+}
+
+type LineRecords = Omit<AtomicData, 'version' | 'inputsHash' | 'lines' | 'modelIons' | 'levelModel' | 'referenceAbundance' | 'skyBands'>;
+
+/** Texts and energies of single lines, decoded when asked for. */
+function lineRecords(bundle: Bundle): LineRecords {
+  const [lower, upper] = [bundle.u16('line.lower'), bundle.u16('line.upper')];
+  const [energy, canonical] = [bundle.f64('level.energy'), bundle.u16('level.canonical')];
+  const [configuration, term, j] = [bundle.u16('level.configuration'), bundle.u16('level.term'), bundle.u16('level.j')];
+  const text = (index: number): string => bundle.text('texts')[index];
+  const citations = (section: string, line: number): string[] => bundle.text('sources')[bundle.u8(section)[line]].split('\t');
+  const termLabel = (level: number): string => [text(configuration[level]), text(term[level])].filter((t) => t !== '').join(' ');
+  const label = (level: number): string => {
+    if (level === NO_LEVEL) return '';
+    const own = canonical[level];
+    return [termLabel(own), text(j[own]).replaceAll(' ', ',')].filter((t) => t !== '').join(' ');
+  };
+  const energyOf = (level: number): number => (level === NO_LEVEL ? Number.NaN : energy[level]);
+  return {
+    multipletName: (line) => {
+      if (lower[line] === NO_LEVEL) return '';
+      const moore = text(bundle.u16('line.moore')[line]);
+      return `${termLabel(canonical[lower[line]])} - ${termLabel(canonical[upper[line]])}${moore === '' ? '' : ` (${moore})`}`;
+    },
+    lowerLabel: (line) => label(lower[line]),
+    upperLabel: (line) => label(upper[line]),
+    lowerEnergyCm1: (line) => energyOf(lower[line]),
+    upperEnergyCm1: (line) => energyOf(upper[line]),
+    lineName: (line) => text(bundle.u16('line.name')[line]),
+    ritzVac: (line) => 1e8 / (energyOf(upper[line]) - energyOf(lower[line])),
+    wavelengthNote: (line) => citations('line.wavelengthSource', line).join('; '),
+    strengthBasis: (line) => STRENGTH_BASES[(bundle.u8('line.kind')[line] >> 5) & 3],
+    strengthNote: (line) => citations('line.strengthSource', line).join('; '),
+    lineSources: (line) => citations('line.source', line),
+  };
+}

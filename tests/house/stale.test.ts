@@ -1,0 +1,10 @@
+import { readFileSync } from 'node:fs';
+import { expect, it } from 'vitest';
+import { buildBundle } from '../../src/atomic/build/buildBundle.ts';
+import { readTables } from '../../src/atomic/build/readTables.ts';
+
+it('public/atomic.bin is what the tables of src/atomic give today', () => {
+  const built = Buffer.from(buildBundle(readTables()));
+  const kept = readFileSync(new URL('../../public/atomic.bin', import.meta.url));
+  expect(built.equals(kept), 'public/atomic.bin is stale: run `npm run data` and commit the result').toBe(true);
+});
