@@ -193,7 +193,14 @@ export function buildBundle({ files, hash }: TableFiles): Uint8Array {
   const families = [...files.keys()].filter((name) => name.startsWith('lines-')).sort();
   const lines = families.flatMap((name) => assembleFamily(ions, levels, table(name)));
   const taken = new Set(lines.map((line) => `${levels.levels[line.lower].canonical}-${levels.levels[line.upper].canonical}`));
-  lines.push(...forbiddenLines(ions, levels, { a, upsilon, wavelengths: table('nebular-wavelengths.csv') }, taken));
+  lines.push(
+    ...forbiddenLines(
+      ions,
+      levels,
+      { a, upsilon, wavelengths: table('nebular-wavelengths.csv'), strengths: table('strengths-from-spectra.csv') },
+      taken,
+    ),
+  );
   const sky = table('sky.csv');
   lines.push(...assembleSky(ions, sky));
   const vacuum = (line: LineEntry): number =>

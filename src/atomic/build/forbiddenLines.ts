@@ -12,8 +12,16 @@ export const REFERENCE_NE = 3_000;
 const H_BETA_EMISSIVITY = 1.239e-25;
 /** h c, erg cm (CODATA 2018, exact constants). */
 const HC_ERG_CM = 1.986_445_857e-16;
-/** Lines fainter than this share of the ion's strongest are left out, unless they hold this share of their upper level's decays. */
+/** Lines fainter than this share of the ion's strongest - of those short of `INFRARED`, or of those beyond - are left out. */
 const FAINTEST_SHARE = 1e-4;
+/** Vacuum Angstrom: fine-structure lines beyond outshine everything else and must not set the limit for the optical. */
+const INFRARED = 25_000;
+/** Other gas than the reference: how far a strength moves within the ion between these is taken as two sigma. */
+const OTHER_TE = [8_000, 14_000] as const;
+const OTHER_NE = [300, 30_000] as const;
+/** Scatter of published rates, and of the estimate of estimatedCollisions.ts. */
+const RATES_ERR_DEX = 0.1;
+const ESTIMATE_ERR_DEX = 0.5;
 const SHORTEST = 900;
 const LONGEST = 300_000;
 
@@ -35,6 +43,68 @@ function weight(level: LevelEntry): number {
   return (2 * top) / (bottom ?? 1) + 1;
 }
 
+interface IonRates extends AtomAtTe {
+  /** Upper levels whose collisions are estimated. */
+  readonly estimated: ReadonlySet<number>;
+  readonly decays: readonly { readonly lower: number; readonly upper: number; readonly a: number; readonly source: string }[];
+}
+
+function ratesOf(ion: string, own: readonly LevelEntry[], a: CsvTable, upsilon: CsvTable): IonRates {
+  const rowsOf = (table: CsvTable) => table.rows.filter((row) => row['ion'] === ion);
+  const pair = (table: CsvTable, row: Readonly<Record<string, string>>) => ({
+    lower: numberIn(table, row, 'lower'),
+    upper: numberIn(table, row, 'upper'),
+  });
+  const decays = rowsOf(a).map((row) => ({ ...pair(a, row), a: numberIn(a, row, 'a_s1'), source: row['source'] }));
+  const tabulated = rowsOf(upsilon).map((row) => ({ ...pair(upsilon, row), upsilon: upsilonAtReference(upsilon, row) }));
+  const g = own.map(weight);
+  const estimates = estimatedCollisions(own, g, tabulated);
+  return {
+    g,
+    energyCm1: own.map((level) => level.energyCm1),
+    radiative: decays,
+    decays,
+    collisions: [...tabulated, ...estimates],
+    estimated: new Set(estimates.map((c) => c.upper)),
+  };
+}
+
+/** log10 of the emissivities of all decays at one temperature and density, relative to the largest short of `INFRARED` (or of all). */
+function relativeEmissivities(atom: IonRates, te: number, ne: number, reference: number): number[] {
+  const population = equilibrium(atom, te, ne);
+  const logs = atom.decays.map((d) =>
+    Math.log10(Math.max(1e-99, population[d.upper] * d.a * (atom.energyCm1[d.upper] - atom.energyCm1[d.lower]))),
+  );
+  return logs.map((value) => value - logs[reference]);
+}
+
+/** Half of how far each line moves against the ion's strongest when temperature or density is another, dex. */
+function scatterOfGas(atom: IonRates, reference: number): number[] {
+  const spread = (one: readonly number[], other: readonly number[]): number[] => one.map((value, i) => Math.abs(value - other[i]) / 2);
+  const te = spread(
+    relativeEmissivities(atom, OTHER_TE[0], REFERENCE_NE, reference),
+    relativeEmissivities(atom, OTHER_TE[1], REFERENCE_NE, reference),
+  );
+  const ne = spread(
+    relativeEmissivities(atom, REFERENCE_TE, OTHER_NE[0], reference),
+    relativeEmissivities(atom, REFERENCE_TE, OTHER_NE[1], reference),
+  );
+  return te.map((value, i) => Math.hypot(value, ne[i]));
+}
+
+export interface ForbiddenTables {
+  readonly a: CsvTable;
+  readonly upsilon: CsvTable;
+  /** `nebular-wavelengths.csv` */
+  readonly wavelengths: CsvTable;
+  /** `strengths-from-spectra.csv`: sets one line of an upper level; the others of the level follow by branching. */
+  readonly strengths: CsvTable;
+}
+
+function rowFor(table: CsvTable, ion: string, lower: number, upper: number): Readonly<Record<string, string>> | undefined {
+  return table.rows.find((row) => row['ion'] === ion && Number(row['lower']) === lower && Number(row['upper']) === upper);
+}
+
 /**
  * Collisionally excited lines of all n-level atoms, with strengths from level populations in the reference nebula.
  *
@@ -43,71 +113,85 @@ function weight(level: LevelEntry): number {
 export function forbiddenLines(
   ions: readonly IonEntry[],
   levels: LevelIndex,
-  tables: { readonly a: CsvTable; readonly upsilon: CsvTable; readonly wavelengths: CsvTable },
+  tables: ForbiddenTables,
   taken: ReadonlySet<string>,
 ): LineEntry[] {
-  const out: LineEntry[] = [];
-  const rowsOf = (table: CsvTable, ion: string) => table.rows.filter((row) => row['ion'] === ion);
-  ions.forEach((ion, ionNumber) => {
-    const decays = rowsOf(tables.a, ion.name).map((row) => ({
-      lower: numberIn(tables.a, row, 'lower'),
-      upper: numberIn(tables.a, row, 'upper'),
-      a: numberIn(tables.a, row, 'a_s1'),
-      source: row['source'],
-    }));
-    if (decays.length === 0) return;
+  return ions.flatMap((ion, ionNumber) => {
     const own = levels.levels.filter((level, k) => level.ion === ionNumber && level.canonical === k && level.modelLevel >= 0);
-    const g = own.map(weight);
-    const tabulated = rowsOf(tables.upsilon, ion.name).map((row) => ({
-      lower: numberIn(tables.upsilon, row, 'lower'),
-      upper: numberIn(tables.upsilon, row, 'upper'),
-      upsilon: upsilonAtReference(tables.upsilon, row),
-    }));
-    const known = new Set(tabulated.map((c) => c.upper));
-    const estimates = estimatedCollisions(own, g, tabulated);
-    const atom: AtomAtTe = { g, energyCm1: own.map((l) => l.energyCm1), radiative: decays, collisions: [...tabulated, ...estimates] };
-    const population = equilibrium(atom, REFERENCE_TE, REFERENCE_NE);
-    const total = g.map((_, u) => decays.reduce((sum, d) => (d.upper === u ? sum + d.a : sum), 0));
-    const found = decays
-      .map((decay) => {
-        const lower = levels.modelRow(ion.name, decay.lower);
-        const upper = levels.modelRow(ion.name, decay.upper);
-        const ritz = ritzWavelength(levels.levels[lower], levels.levels[upper]);
-        const emissivity = (population[decay.upper] * decay.a * HC_ERG_CM) / (ritz * 1e-8) / REFERENCE_NE;
-        return { decay, lower, upper, ritz, strength: (100 * ion.abundance * emissivity) / H_BETA_EMISSIVITY };
-      })
-      .filter((line) => line.ritz >= SHORTEST && line.ritz <= LONGEST);
-    const strongest = Math.max(...found.map((line) => line.strength));
-    for (const { decay, lower, upper, ritz, strength } of found) {
-      if (taken.has(`${lower}-${upper}`)) continue;
-      const faint = strength < FAINTEST_SHARE * strongest;
-      if (faint) continue;
-      const given = tables.wavelengths.rows.find(
-        (row) => row['ion'] === ion.name && Number(row['lower']) === decay.lower && Number(row['upper']) === decay.upper,
-      );
-      const energyErr = Math.hypot(levels.levels[lower].energyErrCm1, levels.levels[upper].energyErrCm1);
-      const estimated = !known.has(decay.upper);
-      out.push({
+    const atom = ratesOf(ion.name, own, tables.a, tables.upsilon);
+    return atom.decays.length === 0 ? [] : linesOfIon(ion, ionNumber, own, levels, atom, tables, taken);
+  });
+}
+
+function linesOfIon(
+  ion: IonEntry,
+  ionNumber: number,
+  own: readonly LevelEntry[],
+  levels: LevelIndex,
+  atom: IonRates,
+  tables: ForbiddenTables,
+  taken: ReadonlySet<string>,
+): LineEntry[] {
+  const population = equilibrium(atom, REFERENCE_TE, REFERENCE_NE);
+  const ritz = atom.decays.map((d) => ritzWavelength(own[d.lower], own[d.upper]));
+  const seen = ritz.map((w) => w >= SHORTEST && w <= LONGEST);
+  const strength = atom.decays.map((d, i) => {
+    const emissivity = (population[d.upper] * d.a * HC_ERG_CM) / (ritz[i] * 1e-8) / REFERENCE_NE;
+    return (100 * ion.abundance * emissivity) / H_BETA_EMISSIVITY;
+  });
+  const anchored = new Map<number, { readonly factor: number; readonly errDex: number; readonly source: string }>();
+  for (const row of tables.strengths.rows.filter((r) => r['ion'] === ion.name)) {
+    const i = atom.decays.findIndex((d) => d.lower === Number(row['lower']) && d.upper === Number(row['upper']));
+    if (i < 0) throw new Error(`${tables.strengths.name}: ${ion.name} has no decay ${row['upper']}-${row['lower']}`);
+    anchored.set(atom.decays[i].upper, {
+      factor: numberIn(tables.strengths, row, 'strength') / strength[i],
+      errDex: numberIn(tables.strengths, row, 'strength_err_dex'),
+      source: row['source'],
+    });
+  }
+  // levels without an anchor share the typical factor of the ion's anchors, so that the ion stays in proportion
+  const factors = [...anchored.values()].map((f) => f.factor).sort((p, q) => p - q);
+  const common = factors.length > 0 ? factors[factors.length >> 1] : 1;
+  atom.decays.forEach((d, i) => {
+    strength[i] *= anchored.get(d.upper)?.factor ?? common;
+  });
+  const strongest = (among: (i: number) => boolean): number =>
+    strength.reduce((best, s, i) => (among(i) && s > (strength[best] ?? -1) ? i : best), -1);
+  const optical = strongest((i) => seen[i] && ritz[i] < INFRARED);
+  const infrared = strongest((i) => seen[i] && ritz[i] >= INFRARED);
+  const reference = optical >= 0 ? optical : infrared;
+  if (reference < 0) return [];
+  const scatter = scatterOfGas(atom, reference);
+  return atom.decays.flatMap((d, i): LineEntry[] => {
+    const lower = levels.modelRow(ion.name, d.lower);
+    const upper = levels.modelRow(ion.name, d.upper);
+    const limit = FAINTEST_SHARE * strength[ritz[i] < INFRARED ? optical : infrared];
+    if (!seen[i] || strength[i] < limit || taken.has(`${lower}-${upper}`)) return [];
+    const given = rowFor(tables.wavelengths, ion.name, d.lower, d.upper);
+    const anchor = anchored.get(d.upper);
+    const estimated = anchor !== undefined || atom.estimated.has(d.upper);
+    const energyErr = Math.hypot(own[d.lower].energyErrCm1, own[d.upper].energyErrCm1);
+    return [
+      {
         ion: ionNumber,
         lower,
         upper,
         givenVac: given ? numberIn(tables.wavelengths, given, 'wavelength_vac') : Number.NaN,
-        wavelengthErr: given ? numberIn(tables.wavelengths, given, 'wavelength_err') : (energyErr * ritz * ritz) / 1e8,
+        wavelengthErr: given ? numberIn(tables.wavelengths, given, 'wavelength_err') : (energyErr * ritz[i] * ritz[i]) / 1e8,
         wavelengthSource: given ? given['source'] : 'ritz',
-        a: decay.a,
+        a: d.a,
         moore: '',
-        nature: natureOf(levels.levels[lower], levels.levels[upper]),
-        strength,
-        strengthErrDex: estimated ? 0.5 : Math.hypot(0.1, decay.a < 0.05 * total[decay.upper] ? 0.15 : 0),
+        nature: natureOf(own[d.lower], own[d.upper]),
+        strength: strength[i],
+        strengthErrDex: Math.min(2, Math.hypot(anchor?.errDex ?? (estimated ? ESTIMATE_ERR_DEX : RATES_ERR_DEX), scatter[i])),
         mechanism: 'collisional',
         basis: estimated ? 'estimate' : 'computed',
-        strengthSource: estimated ? 'n-level+upsilon-estimate' : 'n-level',
-        source: `${levels.levels[upper].source}+${decay.source}`,
+        strengthSource: anchor ? `strength-anchored+${anchor.source}` : estimated ? 'n-level+upsilon-estimate' : 'n-level',
+        source: own[d.upper].source === d.source ? d.source : `${own[d.upper].source}+${d.source}`,
         name: '',
-      });
-    }
+      },
+    ];
   });
-  return out;
 }
 
 /** Spin multiplicity of an LS term (`3Po` -> 3); NaN where the label has none. */
