@@ -1,6 +1,7 @@
 import type { AtomicData, SkyBand } from './atomicData.ts';
 import { type Bundle, openBundle } from './bundle.ts';
 import { NO_LEVEL, STRENGTH_BASES } from './bundleFormat.ts';
+import type { LevelModel } from './levelModel.ts';
 import { openLevelModels } from './openLevelModels.ts';
 import { openLineList } from './openLineList.ts';
 
@@ -23,7 +24,7 @@ export function loadAtomicData(bytes: Uint8Array): AtomicData {
     levelModel: models.model,
     referenceAbundance: bundle.f32('ion.abundance'),
     skyBands: skyBands(bundle),
-    ...lineRecords(bundle),
+    ...lineRecords(bundle, (ion) => models.model(ion)?.sources),
   };
 }
 
@@ -44,10 +45,11 @@ function skyBands(bundle: Bundle): SkyBand[] {
 type LineRecords = Omit<AtomicData, 'version' | 'inputsHash' | 'lines' | 'modelIons' | 'levelModel' | 'referenceAbundance' | 'skyBands'>;
 
 /** Texts and energies of single lines, decoded when asked for. */
-function lineRecords(bundle: Bundle): LineRecords {
+function lineRecords(bundle: Bundle, modelSources: (ion: string) => LevelModel['sources'] | undefined): LineRecords {
   const [lower, upper] = [bundle.u16('line.lower'), bundle.u16('line.upper')];
   const [energy, canonical] = [bundle.f64('level.energy'), bundle.u16('level.canonical')];
   const [configuration, term, j] = [bundle.u16('level.configuration'), bundle.u16('level.term'), bundle.u16('level.j')];
+  const [model, lineIon, ionName] = [bundle.i16('level.model'), bundle.u16('line.ion'), bundle.u16('ion.name')];
   const text = (index: number): string => bundle.text('texts')[index];
   const citations = (section: string, line: number): string[] => bundle.text('sources')[bundle.u8(section)[line]].split('\t');
   const termLabel = (level: number): string => [text(configuration[level]), text(term[level])].filter((t) => t !== '').join(' ');
@@ -72,6 +74,12 @@ function lineRecords(bundle: Bundle): LineRecords {
     wavelengthNote: (line) => citations('line.wavelengthSource', line).join('; '),
     strengthBasis: (line) => STRENGTH_BASES[(bundle.u8('line.kind')[line] >> 5) & 3],
     strengthNote: (line) => citations('line.strengthSource', line).join('; '),
-    lineSources: (line) => citations('line.source', line),
+    lineSources: (line) => {
+      const own = citations('line.source', line);
+      // rows of the n-level atoms name their compilation; the papers behind stand with the atom
+      if (lower[line] === NO_LEVEL || canonical[upper[line]] !== upper[line] || model[upper[line]] < 0) return own;
+      const papers = modelSources(text(ionName[lineIon[line]]));
+      return papers === undefined ? own : [...new Set([...own, ...papers.energies, ...papers.radiative])];
+    },
   };
 }

@@ -121,23 +121,29 @@ function levelSections(levels: readonly LevelEntry[], texts: TextPool): Record<s
   };
 }
 
+interface ModelTables {
+  readonly levels: CsvTable;
+  readonly a: CsvTable;
+  readonly upsilon: CsvTable;
+  /** `model-papers.csv`: the papers behind each quantity of an ion. */
+  readonly papers: CsvTable;
+}
+
 function modelSections(
   ions: readonly IonEntry[],
   levels: LevelIndex,
-  model: CsvTable,
-  a: CsvTable,
-  upsilon: CsvTable,
+  { levels: model, a, upsilon, papers }: ModelTables,
   texts: TextPool,
   bib: Bibliography,
 ): Record<string, Section> {
   const names = [...new Set(model.rows.map((row) => row['ion']))];
   const count = (table: CsvTable, ion: string): number => table.rows.filter((row) => row['ion'] === ion).length;
-  const cited = (table: CsvTable, ion: string): number =>
-    texts.number(
-      [
-        ...new Set(table.rows.filter((row) => row['ion'] === ion).flatMap((row) => bib.citations(row['source'], `${table.name}: ${ion}`))),
-      ].join('\t'),
-    );
+  const cited = (table: CsvTable, quantity: string, ion: string): number => {
+    const keys = table.rows.filter((row) => row['ion'] === ion).map((row) => row['source']);
+    if (keys.length === 0) return 0;
+    keys.push(...papers.rows.filter((row) => row['ion'] === ion && row['quantity'] === quantity).map((row) => row['source']));
+    return texts.number([...new Set(keys.flatMap((key) => bib.citations(key, `${table.name}: ${ion}`)))].join('\t'));
+  };
   const te = upsilon.columns.filter((c) => c.startsWith('upsilon_'));
   const check = (table: CsvTable): void => {
     for (const row of table.rows) {
@@ -155,9 +161,9 @@ function modelSections(
     'model.levels': { type: 'u8', values: names.map((ion) => count(model, ion)) },
     'model.decays': { type: 'u16', values: names.map((ion) => count(a, ion)) },
     'model.collisions': { type: 'u16', values: names.map((ion) => count(upsilon, ion)) },
-    'model.energySources': { type: 'u16', values: names.map((ion) => cited(model, ion)) },
-    'model.aSources': { type: 'u16', values: names.map((ion) => cited(a, ion)) },
-    'model.upsilonSources': { type: 'u16', values: names.map((ion) => cited(upsilon, ion)) },
+    'model.energySources': { type: 'u16', values: names.map((ion) => cited(model, 'energies', ion)) },
+    'model.aSources': { type: 'u16', values: names.map((ion) => cited(a, 'radiative', ion)) },
+    'model.upsilonSources': { type: 'u16', values: names.map((ion) => cited(upsilon, 'collisions', ion)) },
     'a.lower': { type: 'u8', values: ofIons(a, 'lower') },
     'a.upper': { type: 'u8', values: ofIons(a, 'upper') },
     'a.value': { type: 'f32', values: ofIons(a, 'a_s1') },
@@ -217,7 +223,7 @@ export function buildBundle({ files, hash }: TableFiles): Uint8Array {
   const sections: Record<string, Section> = {
     ...lineSections(sorted, levels.levels, texts, bib),
     ...levelSections(levels.levels, texts),
-    ...modelSections(ions, levels, model, a, upsilon, texts, bib),
+    ...modelSections(ions, levels, { levels: model, a, upsilon, papers: table('model-papers.csv') }, texts, bib),
     'ion.name': { type: 'u16', values: ions.map((ion) => texts.number(ion.name)) },
     'ion.element': { type: 'u16', values: ions.map((ion) => texts.number(ion.element)) },
     'ion.charge': { type: 'u8', values: ions.map((ion) => ion.charge) },
