@@ -43,6 +43,8 @@ export interface AtomicData {
   readonly strengthBasis: (line: number) => StrengthBasis;
   /** How the strength was made, with its citation. */
   readonly strengthNote: (line: number) => string;
+  /** What is known of the accuracy of `lines.aValue`; empty when nothing. */
+  readonly aNote: (line: number) => string;
   /** Citations of the line's levels and A value. */
   readonly lineSources: (line: number) => readonly string[];
   /** Telluric bands and broad glows, ascending start. */

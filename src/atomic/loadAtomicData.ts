@@ -74,6 +74,7 @@ function lineRecords(bundle: Bundle, modelSources: (ion: string) => LevelModel['
     wavelengthNote: (line) => citations('line.wavelengthSource', line).join('; '),
     strengthBasis: (line) => STRENGTH_BASES[(bundle.u8('line.kind')[line] >> 5) & 3],
     strengthNote: (line) => citations('line.strengthSource', line).join('; '),
+    aNote: (line) => text(bundle.u16('line.aNote')[line]),
     lineSources: (line) => {
       const own = citations('line.source', line);
       // rows of the n-level atoms name their compilation; the papers behind stand with the atom

@@ -9,6 +9,33 @@ function oneOf<T extends string>(allowed: readonly T[], value: string, where: st
   return found;
 }
 
+/** What the classes of NIST ASD promise. */
+const ACCURACY: Readonly<Record<string, string>> = {
+  AAA: '0.3 %',
+  AA: '1 %',
+  'A+': '2 %',
+  A: '3 %',
+  'B+': '7 %',
+  B: '10 %',
+  'C+': '18 %',
+  C: '25 %',
+  'D+': '40 %',
+  D: '50 %',
+  E: 'more than 50 %',
+};
+
+function accuracyNote(accuracy: string, where: string): string {
+  if (accuracy === '') return '';
+  if (accuracy === 'exact') return 'exact hydrogenic value';
+  if (accuracy === 'memory') return 'from memory';
+  if (accuracy === 'calculated') return 'calculated, accuracy not stated';
+  if (accuracy === 'coulomb') return 'Coulomb approximation, no published value';
+  // a prime beside the letter does not change what the class promises
+  const within = ACCURACY[accuracy.replace(/'$/, '')];
+  if (within === undefined) throw new Error(`${where}: accuracy ${accuracy} is no class of NIST ASD`);
+  return `NIST accuracy class ${accuracy}: ${within}`;
+}
+
 /** Lines of one family table (`lines-*.csv`). */
 export function assembleFamily(ions: readonly IonEntry[], levels: LevelIndex, table: CsvTable): LineEntry[] {
   const ionIndex = new Map(ions.map((ion, i) => [ion.name, i]));
@@ -26,6 +53,7 @@ export function assembleFamily(ions: readonly IonEntry[], levels: LevelIndex, ta
       wavelengthErr: numberIn(table, row, 'wavelength_err'),
       wavelengthSource: row['wavelength_source'],
       a: numberIn(table, row, 'a_s1'),
+      aNote: accuracyNote(row['a_accuracy'], where),
       moore: row['multiplet'],
       nature: oneOf(NATURES, row['nature'], where),
       strength: known ? strength : Number.NaN,
@@ -71,6 +99,7 @@ export function assembleSky(ions: IonEntry[], table: CsvTable): LineEntry[] {
       wavelengthErr: row['species'] === 'DIB' ? 0.1 : 0.01,
       wavelengthSource: row['source'],
       a: Number.NaN,
+      aNote: '',
       moore: '',
       nature: row['kind'] === 'interstellar' ? 'interstellar' : row['kind'] === 'telluric' ? 'telluric' : 'sky',
       strength: intensity > 0 ? intensity : Number.NaN,

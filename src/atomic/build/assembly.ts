@@ -39,6 +39,8 @@ export interface LineEntry {
   readonly wavelengthErr: number;
   readonly wavelengthSource: string;
   readonly a: number;
+  /** Accuracy of the A value in words, empty when nothing is known of it. */
+  readonly aNote: string;
   /** Multiplet number of Moore's tables, empty when unknown. */
   readonly moore: string;
   readonly nature: (typeof NATURES)[number];

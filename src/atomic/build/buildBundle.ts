@@ -101,6 +101,7 @@ function lineSections(
     'line.strengthSource': { type: 'u8', values: lines.map((l) => cite(l.strengthSource, where(l))) },
     'line.logA': { type: 'i16', values: lines.map((l) => logFixed(l.a, LOG_A_SCALE)) },
     'line.multiplet': { type: 'u16', values: lines.map((l) => multiplets.number(multipletKey(l, levels))) },
+    'line.aNote': { type: 'u16', values: lines.map((l) => texts.number(l.aNote)) },
     'line.moore': { type: 'u16', values: lines.map((l) => texts.number(l.moore)) },
     'line.name': { type: 'u16', values: lines.map((l) => texts.number(l.name)) },
     'line.source': { type: 'u8', values: lines.map((l) => cite(l.source, where(l))) },

@@ -46,7 +46,13 @@ function weight(level: LevelEntry): number {
 interface IonRates extends AtomAtTe {
   /** Upper levels whose collisions are estimated. */
   readonly estimated: ReadonlySet<number>;
-  readonly decays: readonly { readonly lower: number; readonly upper: number; readonly a: number; readonly source: string }[];
+  readonly decays: readonly {
+    readonly lower: number;
+    readonly upper: number;
+    readonly a: number;
+    readonly check: number;
+    readonly source: string;
+  }[];
 }
 
 function ratesOf(ion: string, own: readonly LevelEntry[], a: CsvTable, upsilon: CsvTable): IonRates {
@@ -55,7 +61,12 @@ function ratesOf(ion: string, own: readonly LevelEntry[], a: CsvTable, upsilon: 
     lower: numberIn(table, row, 'lower'),
     upper: numberIn(table, row, 'upper'),
   });
-  const decays = rowsOf(a).map((row) => ({ ...pair(a, row), a: numberIn(a, row, 'a_s1'), source: row['source'] }));
+  const decays = rowsOf(a).map((row) => ({
+    ...pair(a, row),
+    a: numberIn(a, row, 'a_s1'),
+    check: numberIn(a, row, 'a_check_s1'),
+    source: row['source'],
+  }));
   const tabulated = rowsOf(upsilon).map((row) => ({ ...pair(upsilon, row), upsilon: upsilonAtReference(upsilon, row) }));
   const g = own.map(weight);
   const estimates = estimatedCollisions(own, g, tabulated);
@@ -180,6 +191,7 @@ function linesOfIon(
         wavelengthErr: given ? numberIn(tables.wavelengths, given, 'wavelength_err') : (energyErr * ritz[i] * ritz[i]) / 1e8,
         wavelengthSource: given ? given['source'] : 'ritz',
         a: d.a,
+        aNote: checkNote(d.a, d.check),
         moore: '',
         nature: natureOf(own[d.lower], own[d.upper]),
         strength: strength[i],
@@ -192,6 +204,16 @@ function linesOfIon(
       },
     ];
   });
+}
+
+/** How the compilation not chosen differs. */
+function checkNote(a: number, check: number): string {
+  if (Number.isNaN(check)) return 'one compilation only';
+  const percent = Math.round((check / a - 1) * 100);
+  if (percent === 0) return 'both compilations agree';
+  return percent > 300
+    ? `other compilation ${Math.round(check / a)} times as large`
+    : `other compilation ${percent > 0 ? '+' : '-'}${Math.abs(percent)} %`;
 }
 
 /** Spin multiplicity of an LS term (`3Po` -> 3); NaN where the label has none. */
