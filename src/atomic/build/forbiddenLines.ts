@@ -5,9 +5,12 @@ import { type CsvTable, numberIn } from './csvTable.ts';
 import { estimatedCollisions } from './estimatedCollisions.ts';
 import { type AtomAtTe, equilibrium } from './populations.ts';
 
-/** The reference nebula: electron temperature K, density cm^-3 (middle, in the logarithm, of 10^3 and 10^4). */
-export const REFERENCE_TE = 10_000;
-export const REFERENCE_NE = 3_000;
+/** The reference nebula: density cm^-3 (middle, in the logarithm, of 10^3 and 10^4). */
+const REFERENCE_NE = 3_000;
+/** Electron temperature, K, where helium is at most singly ionized, and where ions made above He+ live (He++ zones of nebulae, shells and shocks are hotter). */
+const REFERENCE_TE = 10_000;
+const HOT_REFERENCE_TE = 15_000;
+const HELIUM_PLUS_EV = 54.4;
 /** 4 pi j(H beta) / (ne np), erg cm^3 s^-1, case B at 10^4 K and 10^4 cm^-3: Storey & Hummer 1995. */
 const H_BETA_EMISSIVITY = 1.239e-25;
 /** h c, erg cm (CODATA 2018, exact constants). */
@@ -16,9 +19,9 @@ const HC_ERG_CM = 1.986_445_857e-16;
 const FAINTEST_SHARE = 1e-4;
 /** Vacuum Angstrom: fine-structure lines beyond outshine everything else and must not set the limit for the optical. */
 const INFRARED = 25_000;
-/** Other gas than the reference: how far a strength moves within the ion between these is taken as two sigma. */
-const OTHER_TE = [8_000, 14_000] as const;
-const OTHER_NE = [300, 30_000] as const;
+/** Other gas than the reference (temperature as a factor, density in cm^-3): how far a strength moves within the ion between these is two sigma. */
+const OTHER_TE_FACTORS = [0.8, 1.4] as const;
+const OTHER_NE = [200, 200_000] as const;
 /** Scatter of published rates, and of the estimate of estimatedCollisions.ts. */
 const RATES_ERR_DEX = 0.1;
 const ESTIMATE_ERR_DEX = 0.5;
@@ -27,11 +30,10 @@ const LONGEST = 300_000;
 
 const TEMPERATURES = [2_000, 3_000, 5_000, 7_500, 10_000, 12_500, 15_000, 20_000, 30_000];
 
-/** Effective collision strength at the reference temperature, or the nearest temperature the source has. */
-function upsilonAtReference(table: CsvTable, row: Readonly<Record<string, string>>): number {
-  const order = [10_000, 12_500, 7_500, 15_000, 5_000, 20_000, 30_000, 3_000, 2_000];
+/** Effective collision strength at a tabulated temperature, or the nearest temperature the source has. */
+function upsilonAt(reference: number, table: CsvTable, row: Readonly<Record<string, string>>): number {
+  const order = [...TEMPERATURES].sort((p, q) => Math.abs(Math.log(p / reference)) - Math.abs(Math.log(q / reference)));
   for (const te of order) {
-    if (!TEMPERATURES.includes(te)) continue;
     const value = numberIn(table, row, `upsilon_${te}`);
     if (value > 0) return value;
   }
@@ -44,6 +46,8 @@ function weight(level: LevelEntry): number {
 }
 
 interface IonRates extends AtomAtTe {
+  /** Reference temperature of the ion, K. */
+  readonly te: number;
   /** Upper levels whose collisions are estimated. */
   readonly estimated: ReadonlySet<number>;
   readonly decays: readonly {
@@ -55,7 +59,7 @@ interface IonRates extends AtomAtTe {
   }[];
 }
 
-function ratesOf(ion: string, own: readonly LevelEntry[], a: CsvTable, upsilon: CsvTable): IonRates {
+function ratesOf(ion: string, te: number, own: readonly LevelEntry[], a: CsvTable, upsilon: CsvTable): IonRates {
   const rowsOf = (table: CsvTable) => table.rows.filter((row) => row['ion'] === ion);
   const pair = (table: CsvTable, row: Readonly<Record<string, string>>) => ({
     lower: numberIn(table, row, 'lower'),
@@ -67,10 +71,11 @@ function ratesOf(ion: string, own: readonly LevelEntry[], a: CsvTable, upsilon: 
     check: numberIn(a, row, 'a_check_s1'),
     source: row['source'],
   }));
-  const tabulated = rowsOf(upsilon).map((row) => ({ ...pair(upsilon, row), upsilon: upsilonAtReference(upsilon, row) }));
+  const tabulated = rowsOf(upsilon).map((row) => ({ ...pair(upsilon, row), upsilon: upsilonAt(te, upsilon, row) }));
   const g = own.map(weight);
   const estimates = estimatedCollisions(own, g, tabulated);
   return {
+    te,
     g,
     energyCm1: own.map((level) => level.energyCm1),
     radiative: decays,
@@ -93,12 +98,12 @@ function relativeEmissivities(atom: IonRates, te: number, ne: number, reference:
 function scatterOfGas(atom: IonRates, reference: number): number[] {
   const spread = (one: readonly number[], other: readonly number[]): number[] => one.map((value, i) => Math.abs(value - other[i]) / 2);
   const te = spread(
-    relativeEmissivities(atom, OTHER_TE[0], REFERENCE_NE, reference),
-    relativeEmissivities(atom, OTHER_TE[1], REFERENCE_NE, reference),
+    relativeEmissivities(atom, OTHER_TE_FACTORS[0] * atom.te, REFERENCE_NE, reference),
+    relativeEmissivities(atom, OTHER_TE_FACTORS[1] * atom.te, REFERENCE_NE, reference),
   );
   const ne = spread(
-    relativeEmissivities(atom, REFERENCE_TE, OTHER_NE[0], reference),
-    relativeEmissivities(atom, REFERENCE_TE, OTHER_NE[1], reference),
+    relativeEmissivities(atom, atom.te, OTHER_NE[0], reference),
+    relativeEmissivities(atom, atom.te, OTHER_NE[1], reference),
   );
   return te.map((value, i) => Math.hypot(value, ne[i]));
 }
@@ -129,7 +134,8 @@ export function forbiddenLines(
 ): LineEntry[] {
   return ions.flatMap((ion, ionNumber) => {
     const own = levels.levels.filter((level, k) => level.ion === ionNumber && level.canonical === k && level.modelLevel >= 0);
-    const atom = ratesOf(ion.name, own, tables.a, tables.upsilon);
+    const te = ion.creationEv > HELIUM_PLUS_EV ? HOT_REFERENCE_TE : REFERENCE_TE;
+    const atom = ratesOf(ion.name, te, own, tables.a, tables.upsilon);
     return atom.decays.length === 0 ? [] : linesOfIon(ion, ionNumber, own, levels, atom, tables, taken);
   });
 }
@@ -143,7 +149,7 @@ function linesOfIon(
   tables: ForbiddenTables,
   taken: ReadonlySet<string>,
 ): LineEntry[] {
-  const population = equilibrium(atom, REFERENCE_TE, REFERENCE_NE);
+  const population = equilibrium(atom, atom.te, REFERENCE_NE);
   const ritz = atom.decays.map((d) => ritzWavelength(own[d.lower], own[d.upper]));
   const seen = ritz.map((w) => w >= SHORTEST && w <= LONGEST);
   const strength = atom.decays.map((d, i) => {
@@ -173,6 +179,7 @@ function linesOfIon(
   const reference = optical >= 0 ? optical : infrared;
   if (reference < 0) return [];
   const scatter = scatterOfGas(atom, reference);
+  const nLevel = atom.te === HOT_REFERENCE_TE ? 'n-level-15kk' : 'n-level';
   return atom.decays.flatMap((d, i): LineEntry[] => {
     const lower = levels.modelRow(ion.name, d.lower);
     const upper = levels.modelRow(ion.name, d.upper);
@@ -198,7 +205,7 @@ function linesOfIon(
         strengthErrDex: Math.min(2, Math.hypot(anchor?.errDex ?? (estimated ? ESTIMATE_ERR_DEX : RATES_ERR_DEX), scatter[i])),
         mechanism: 'collisional',
         basis: estimated ? 'estimate' : 'computed',
-        strengthSource: anchor ? `strength-anchored+${anchor.source}` : estimated ? 'n-level+upsilon-estimate' : 'n-level',
+        strengthSource: anchor ? `strength-anchored+${anchor.source}` : estimated ? `${nLevel}+upsilon-estimate` : nLevel,
         source: own[d.upper].source === d.source ? d.source : `${own[d.upper].source}+${d.source}`,
         name: '',
       },
