@@ -65,3 +65,9 @@ export interface Assembly {
 export function ritzWavelength(lower: LevelEntry, upper: LevelEntry): number {
   return 1e8 / (upper.energyCm1 - lower.energyCm1);
 }
+
+/** J as a number from `3/2`. */
+export function jOf(level: LevelEntry): number {
+  const [top, bottom] = level.j.split('/').map(Number);
+  return top / (bottom ?? 1);
+}
