@@ -55,7 +55,7 @@ export interface MeasureSettings {
   readonly absorption: boolean;
 }
 
-export const DEFAULT_MEASURE_SETTINGS: MeasureSettings = { thresholdSigma: 5, absorption: true };
+export const DEFAULT_MEASURE_SETTINGS: MeasureSettings = { thresholdSigma: 4.5, absorption: true };
 
 /** Everything measured on a spectrum; arrays are one value a sample, in the flux unit. */
 export interface Measurement {

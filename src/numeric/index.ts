@@ -1,5 +1,9 @@
 // Mathematics that knows no light: robust statistics, seeded random numbers, the normal distribution, solvers.
 // Deliberately not here: anything with a physical unit.
+export { type LeastSquaresEnd, levenbergMarquardt, type NormalEquations } from './levenbergMarquardt.ts';
+export { solveLinear } from './linearSolve.ts';
+export { interpolateMonotone } from './monotoneInterpolation.ts';
 export { erfc, normalTail } from './normalDistribution.ts';
 export { median, quantile, robustSigma, SIGMA_PER_MAD } from './robust.ts';
 export { type SeededRandom, seededRandom } from './seededRandom.ts';
+export { whittaker } from './whittaker.ts';

@@ -1,0 +1,133 @@
+import type { Feature, FitEnd, Group } from './feature.ts';
+import { type FitSamples, firstAtLeast, type GroupFit } from './fitGroup.ts';
+import type { LineSpread } from './lineSpread.ts';
+import { gaussianInto } from './profile.ts';
+
+const FWHM_PER_SIGMA = 2.354_820_045;
+const SPEED_OF_LIGHT_KMS = 299_792.458;
+/** A fitted line narrower than this share of the usual width is no line of the instrument. */
+const TOO_NARROW = 0.5;
+/** A line is called resolved when it is wider than the instrument by this many of its own errors. */
+const RESOLVED_SIGMA = 2;
+
+interface FitFacts {
+  readonly continuum: Float64Array;
+  readonly group: number;
+  readonly spread: LineSpread;
+  readonly threshold: number;
+  readonly masked: Uint8Array;
+}
+
+/** The components of a fit that stand above the threshold, as features (their `index` is given later). */
+export function featuresOfFit(samples: FitSamples, fit: GroupFit, facts: FitFacts): Feature[] {
+  const size = fit.parameters.length;
+  const covariance = fit.end.ended === 'converged' ? fit.end.covariance : undefined;
+  const inflation = Math.max(1, fit.chi2 / fit.dof);
+  const err = (i: number) => (covariance ? Math.sqrt(Math.max(0, covariance[i * size + i]) * inflation) : Number.NaN);
+  return fit.components.flatMap((component, k): Feature[] => {
+    const { flux, centre, sigma } = component;
+    const snr = Math.abs(flux) / amplitudeErr(samples, fit, centre, sigma);
+    if (flux === 0 || snr < facts.threshold) return [];
+    const at = Math.min(samples.x.length - 1, firstAtLeast(samples.x, centre));
+    const continuum = facts.continuum[at] + offsetAt(samples, fit, centre);
+    const fwhm = FWHM_PER_SIGMA * sigma;
+    const fwhmErr = fwhm * err(3 * k + 2);
+    const fluxErr = err(3 * k);
+    const ew = continuum > 0 ? flux / continuum : Number.NaN;
+    const narrow = fwhm < (TOO_NARROW * centre) / facts.spread.resolvingPower;
+    return [
+      {
+        index: 0,
+        kind: flux > 0 ? 'emission' : 'absorption',
+        ...(narrow ? { artefact: 'narrower than the instrument' } : {}),
+        centroid: centre,
+        centroidErr: err(3 * k + 1),
+        flux,
+        fluxErr,
+        fwhm,
+        fwhmErr,
+        ...intrinsicWidth(centre, fwhm, fwhmErr, facts.spread),
+        ew,
+        ewErr: Number.isFinite(ew) ? Math.hypot(fluxErr / continuum, (ew * samples.noise[at]) / continuum / Math.sqrt(Math.max(1, fit.last - fit.first))) : Number.NaN,
+        snr,
+        continuum,
+        group: facts.group,
+        fit: fitEnd(fit),
+        notes: notesOf(samples, fit, k, facts),
+      },
+    ];
+  });
+}
+
+/** One sigma of the flux at fixed shape: the noise under the profile. */
+function amplitudeErr(samples: FitSamples, fit: GroupFit, centre: number, sigma: number): number {
+  const profile = { value: 0, byCentre: 0, bySigma: 0 };
+  let information = 0;
+  for (let i = fit.first; i <= fit.last; i++) {
+    if (!samples.usable[i]) continue;
+    gaussianInto(profile, samples.x[i], FWHM_PER_SIGMA * sigma < 4 * samples.sampleWidth[i] ? samples.sampleWidth[i] : 0, centre, sigma);
+    information += (profile.value / samples.noise[i]) ** 2;
+  }
+  return 1 / Math.sqrt(information);
+}
+
+function offsetAt(samples: FitSamples, fit: GroupFit, wavelength: number): number {
+  const { parameters: p, first, last } = fit;
+  const middle = 0.5 * (samples.x[first] + samples.x[last]);
+  const half = Math.max(1e-9, 0.5 * (samples.x[last] - samples.x[first]));
+  return p[p.length - 2] + (p[p.length - 1] * (wavelength - middle)) / half;
+}
+
+/** km/s with the instrument removed, where the instrument is known apart from the lines. */
+function intrinsicWidth(centre: number, fwhm: number, fwhmErr: number, spread: LineSpread): { intrinsicFwhmKms?: number } {
+  if (spread.from !== 'user' && spread.from !== 'file') return {};
+  const instrument = centre / spread.resolvingPower;
+  const square = fwhm * fwhm - instrument * instrument;
+  const resolved = fwhm - instrument > RESOLVED_SIGMA * fwhmErr;
+  return { intrinsicFwhmKms: square > 0 && resolved ? (Math.sqrt(square) / centre) * SPEED_OF_LIGHT_KMS : 0 };
+}
+
+function fitEnd(fit: GroupFit): FitEnd {
+  if (fit.end.ended === 'converged') return { ended: 'converged' };
+  if (fit.end.ended === 'singular') return { ended: 'no-uncertainty' };
+  return { ended: 'failed', reason: `no convergence in ${fit.end.steps} steps` };
+}
+
+/** Errors grow by more than this share through a neighbour: the two are blended. */
+const BLENDED_FWHM = 1.5;
+
+function notesOf(samples: FitSamples, fit: GroupFit, k: number, facts: FitFacts): string[] {
+  const notes: string[] = [];
+  const { centre, sigma } = fit.components[k];
+  const fwhm = FWHM_PER_SIGMA * sigma;
+  if (fit.components.some((other, j) => j !== k && other.flux !== 0 && Math.abs(other.centre - centre) < BLENDED_FWHM * fwhm)) notes.push('blended');
+  const from = firstAtLeast(samples.x, centre - fwhm);
+  let missing = from === 0 || samples.x[samples.x.length - 1] < centre + fwhm;
+  for (let i = from; i < samples.x.length && samples.x[i] <= centre + fwhm; i++) missing ||= facts.masked[i] === 1;
+  if (missing) notes.push('cut by missing samples');
+  return notes;
+}
+
+/** A spike as a feature that is shown but never named. */
+export function artefactFeature(samples: FitSamples, at: number, continuum: Float64Array, groups: readonly Group[]): Feature {
+  const flux = samples.y[at] * samples.sampleWidth[at];
+  const fluxErr = samples.noise[at] * samples.sampleWidth[at];
+  return {
+    index: 0,
+    kind: flux > 0 ? 'emission' : 'absorption',
+    artefact: 'a spike of one sample, narrower than the instrument',
+    centroid: samples.x[at],
+    centroidErr: samples.sampleWidth[at] / 2,
+    flux,
+    fluxErr,
+    fwhm: samples.sampleWidth[at],
+    fwhmErr: Number.NaN,
+    ew: continuum[at] > 0 ? flux / continuum[at] : Number.NaN,
+    ewErr: Number.NaN,
+    snr: Math.abs(flux) / fluxErr,
+    continuum: continuum[at],
+    group: groups.findIndex((group) => group.first <= at && at <= group.last),
+    fit: { ended: 'failed', reason: 'spikes are not fitted' },
+    notes: [],
+  };
+}

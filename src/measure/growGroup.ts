@@ -1,0 +1,102 @@
+import { addProfiles, type Component, fitGroup, type FitSamples, type GroupFit, type WidthPrior } from './fitGroup.ts';
+import { matchedFilter } from './matchedFilter.ts';
+
+/** Components that one group may gain beyond its peaks. */
+const MOST_ADDED = 8;
+/** Two components nearer than this (in expected FWHM) are one. */
+const NEAREST_FWHM = 0.45;
+/** A lone sample this many sigma off, whose neighbours are not, is a spike. */
+const SPIKE_SIGMA = 7;
+const FWHM_PER_SIGMA = 2.354_820_045;
+
+/**
+ * Fits a group and looks into its residuals for components that the peaks did not show, one at a time, as long as each improves the fit by more than
+ * its price: the Bayesian information criterion (Schwarz 1978, Ann. Statist. 6, 461) and the square of the detection threshold, whichever is more.
+ *
+ * @param spikes sample numbers found to be spikes are added here and marked unusable
+ */
+export function growGroup(samples: FitSamples, first: number, last: number, starts: readonly Component[], width: WidthPrior, threshold: number, spikes: number[]): GroupFit {
+  let fit = fitGroup(samples, first, last, mergeClose(starts, width), width);
+  const used = last - first + 1;
+  const price = Math.max(threshold * threshold, 3 * Math.log(used)) + 4;
+  for (let round = 0; round < MOST_ADDED; round++) {
+    const residual = residualOf(samples, fit);
+    const spike = loneSpike(samples, fit, residual);
+    if (spike !== undefined) {
+      samples.usable[spike] = 0;
+      spikes.push(spike);
+      fit = fitGroup(samples, first, last, fit.components, width);
+      continue;
+    }
+    const added = bestAddition(samples, fit, residual, width, threshold);
+    if (!added) break;
+    const trial = fitGroup(samples, first, last, [...fit.components, added], width);
+    if (totalChi2(fit) - totalChi2(trial) < price || !holds(trial, width)) break;
+    fit = trial;
+  }
+  return fit;
+}
+
+const totalChi2 = (fit: GroupFit) => fit.end.chi2;
+
+/** Whether the last component stands on its own: not on top of another, not vanished, not at the edge of the window. */
+function holds(fit: GroupFit, width: WidthPrior): boolean {
+  const last = fit.components[fit.components.length - 1];
+  if (last.flux === 0) return false;
+  return fit.components.slice(0, -1).every((c) => Math.abs(c.centre - last.centre) > NEAREST_FWHM * FWHM_PER_SIGMA * width.sigmaAt(last.centre));
+}
+
+function mergeClose(starts: readonly Component[], width: WidthPrior): Component[] {
+  const kept: Component[] = [];
+  for (const start of [...starts].sort((a, b) => Math.abs(b.flux) - Math.abs(a.flux))) {
+    const reach = NEAREST_FWHM * FWHM_PER_SIGMA * width.sigmaAt(start.centre);
+    if (kept.every((other) => Math.abs(other.centre - start.centre) > reach)) kept.push(start);
+  }
+  return kept.sort((a, b) => a.centre - b.centre);
+}
+
+/** Residual of the window, one value a sample of it. */
+function residualOf(samples: FitSamples, fit: GroupFit): Float64Array {
+  const model = new Float64Array(fit.last - fit.first + 1);
+  const window = windowOf(samples, fit);
+  const offset = new Float64Array(model.length);
+  addProfiles(window, fit.components, model, { fit: { ...fit, first: 0, last: model.length - 1 }, into: offset });
+  for (let i = 0; i < model.length; i++) model[i] = window.y[i] - model[i] - offset[i];
+  return model;
+}
+
+const windowOf = (samples: FitSamples, { first, last }: GroupFit): FitSamples => ({
+  x: samples.x.subarray(first, last + 1),
+  y: samples.y.subarray(first, last + 1),
+  noise: samples.noise.subarray(first, last + 1),
+  usable: samples.usable.subarray(first, last + 1),
+  sampleWidth: samples.sampleWidth.subarray(first, last + 1),
+});
+
+function loneSpike(samples: FitSamples, fit: GroupFit, residual: Float64Array): number | undefined {
+  const { noise, usable } = windowOf(samples, fit);
+  let worst: number | undefined;
+  for (let i = 1; i < residual.length - 1; i++) {
+    if (!usable[i]) continue;
+    const off = residual[i] / noise[i];
+    if (Math.abs(off) < SPIKE_SIGMA) continue;
+    const beside = Math.max(Math.abs(residual[i - 1] / noise[i - 1]), Math.abs(residual[i + 1] / noise[i + 1]));
+    if (beside < 0.25 * Math.abs(off) && (worst === undefined || Math.abs(off) > Math.abs(residual[worst] / noise[worst]))) worst = i;
+  }
+  return worst === undefined ? undefined : fit.first + worst;
+}
+
+function bestAddition(samples: FitSamples, fit: GroupFit, residual: Float64Array, width: WidthPrior, threshold: number): Component | undefined {
+  const window = windowOf(samples, fit);
+  const sigma = window.x.map((w, i) => width.sigmaAt(w) / window.sampleWidth[i]);
+  const snr = matchedFilter(residual, window.noise, window.usable, sigma);
+  let best = -1;
+  for (let i = 1; i < snr.length - 1; i++) {
+    const peak = snr[i] >= snr[i - 1] && snr[i] >= snr[i + 1];
+    if (peak && window.usable[i] && (best < 0 || snr[i] > snr[best])) best = i;
+  }
+  // the residual of a blend taken for one line is smaller than the second line itself: look at less than the threshold
+  if (best < 0 || snr[best] < 0.6 * threshold) return undefined;
+  const s = width.sigmaAt(window.x[best]);
+  return { flux: Math.max(residual[best], window.noise[best]) * s * Math.sqrt(2 * Math.PI), centre: window.x[best], sigma: s };
+}
