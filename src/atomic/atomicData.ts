@@ -34,6 +34,8 @@ export interface AtomicData {
   /** cm^-1; NaN when unknown. */
   readonly lowerEnergyCm1: (line: number) => number;
   readonly upperEnergyCm1: (line: number) => number;
+  /** Permitted and down to the ground term (lower level below 1100 cm^-1): its photons are easily trapped, and cold gas absorbs it. */
+  readonly isResonance: (line: number) => boolean;
   /** Trade name (`Lyman alpha`) or sky transition. */
   readonly lineName: (line: number) => string;
   /** Vacuum Angstrom from the level energies alone; NaN where a level's energy is unknown. */

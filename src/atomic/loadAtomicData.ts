@@ -1,9 +1,12 @@
 import type { AtomicData, SkyBand } from './atomicData.ts';
 import { type Bundle, openBundle } from './bundle.ts';
-import { NO_LEVEL, STRENGTH_BASES } from './bundleFormat.ts';
+import { NATURES, NO_LEVEL, STRENGTH_BASES } from './bundleFormat.ts';
 import type { LevelModel } from './levelModel.ts';
 import { openLevelModels } from './openLevelModels.ts';
 import { openLineList } from './openLineList.ts';
+
+/** cm^-1: widest ground term among the ions with permitted lines (Fe II 6D, 977 cm^-1). */
+const GROUND_TERM_CM1 = 1100;
 
 /**
  * Opens the bundled atomic data.
@@ -50,6 +53,7 @@ function lineRecords(bundle: Bundle, modelSources: (ion: string) => LevelModel['
   const [energy, canonical] = [bundle.f64('level.energy'), bundle.u16('level.canonical')];
   const [configuration, term, j] = [bundle.u16('level.configuration'), bundle.u16('level.term'), bundle.u16('level.j')];
   const [model, lineIon, ionName] = [bundle.i16('level.model'), bundle.u16('line.ion'), bundle.u16('ion.name')];
+  const kind = bundle.u8('line.kind');
   const text = (index: number): string => bundle.text('texts')[index];
   const citations = (section: string, line: number): string[] => bundle.text('sources')[bundle.u8(section)[line]].split('\t');
   const termLabel = (level: number): string => [text(configuration[level]), text(term[level])].filter((t) => t !== '').join(' ');
@@ -69,10 +73,11 @@ function lineRecords(bundle: Bundle, modelSources: (ion: string) => LevelModel['
     upperLabel: (line) => label(upper[line]),
     lowerEnergyCm1: (line) => energyOf(lower[line]),
     upperEnergyCm1: (line) => energyOf(upper[line]),
+    isResonance: (line) => NATURES[kind[line] & 7] === 'permitted' && energyOf(lower[line]) < GROUND_TERM_CM1,
     lineName: (line) => text(bundle.u16('line.name')[line]),
     ritzVac: (line) => 1e8 / (energyOf(upper[line]) - energyOf(lower[line])),
     wavelengthNote: (line) => citations('line.wavelengthSource', line).join('; '),
-    strengthBasis: (line) => STRENGTH_BASES[(bundle.u8('line.kind')[line] >> 5) & 3],
+    strengthBasis: (line) => STRENGTH_BASES[(kind[line] >> 5) & 3],
     strengthNote: (line) => citations('line.strengthSource', line).join('; '),
     aNote: (line) => text(bundle.u16('line.aNote')[line]),
     lineSources: (line) => {

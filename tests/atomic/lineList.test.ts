@@ -1,6 +1,6 @@
 import { expect, it } from 'vitest';
 import { linesBetween } from '../../src/atomic/index.ts';
-import { bundled, lineAtAir, strength } from './bundledData.ts';
+import { bundled, lineAt, lineAtAir, strength } from './bundledData.ts';
 
 const { lines } = bundled;
 const every = Array.from({ length: lines.count }, (_, i) => i);
@@ -150,4 +150,17 @@ it('telluric bands have two edges', () => {
   expect(bundled.skyBands.length).toBeGreaterThan(40);
   expect(bundled.skyBands.filter((band) => !(band.highVac > band.lowVac))).toEqual([]);
   expect(bundled.skyBands.some((band) => band.species === 'O2' && band.lowVac < 7600 && band.highVac > 7650)).toBe(true);
+});
+
+it('resonance lines end on the ground term', () => {
+  expect(bundled.isResonance(lineAtAir('Mg II', 2795.53))).toBe(true);
+  expect(bundled.isResonance(lineAtAir('Ca II', 3933.66))).toBe(true);
+  expect(bundled.isResonance(lineAtAir('Ca II', 8542.09))).toBe(false);
+  expect(bundled.isResonance(lineAtAir('O III', 5006.84))).toBe(false);
+});
+
+it('H I goes on into the infrared', () => {
+  const pfund = lineAt('H I', 74_598.5);
+  expect(bundled.upperLabel(pfund)).toBe('n=6');
+  expect(bundled.lowerLabel(pfund)).toBe('n=5');
 });
