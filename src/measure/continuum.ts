@@ -1,17 +1,19 @@
 import { quantile, whittaker } from '../numeric/index.ts';
 import { linearBetween } from './noise.ts';
 
-/** Samples this many sigma above or below the last continuum are lines, not continuum ... */
-const CLIP_SIGMA = 2.5;
+/**
+ * Samples this many sigma above or below the last continuum are lines, not continuum, pass by pass ... The first passes are lenient: what is clipped against a
+ * poor first estimate would never come back.
+ */
+const CLIP_SIGMA = [8, 6, 5, 4, 3.5, 3, 2.7, 2.7];
 /** ... and so are their neighbours to either side, in line widths (FWHM). */
 const GROW_FWHM = 1.2;
-const PASSES = 6;
 /** The stretch of the first estimate, in FWHM: longer than any crowd of lines. */
-const FIRST_STRETCH_FWHM = 60;
+const FIRST_STRETCH_FWHM = 40;
 /** Emission crowds a stretch from above: the first estimate takes a quantile below the median. */
 const FIRST_QUANTILE = 0.4;
 /** Period that the continuum follows by half, in FWHM: slower than any line, faster than dust bands and wiggles of the flat field. */
-const HALF_PERIOD_FWHM = 55;
+const HALF_PERIOD_FWHM = 35;
 
 /**
  * Continuum under emission and absorption lines: penalised least squares over the samples that are not taken for lines, which are found anew in every pass.
@@ -30,8 +32,8 @@ export function fitContinuum(flux: Float64Array, noise: Float64Array, usable: Ui
   const period = HALF_PERIOD_FWHM * typical(fwhm);
   const stiffness = (period / (2 * Math.PI)) ** 4;
   const unit = typical(noise);
-  for (let pass = 0; pass < PASSES; pass++) {
-    const line = markLines(flux, noise, continuum, fwhm);
+  for (const clip of CLIP_SIGMA) {
+    const line = markLines(flux, noise, continuum, fwhm, clip);
     for (let i = 0; i < n; i++) weight[i] = usable[i] && !line[i] && noise[i] > 0 ? Math.min(1e6, (unit / noise[i]) ** 2) : 0;
     continuum = whittaker(flux, weight, stiffness);
   }
@@ -61,7 +63,7 @@ function firstEstimate(flux: Float64Array, usable: Uint8Array, fwhm: Float64Arra
 }
 
 /** 1 = taken for part of a line: far from the continuum, or beside such samples. */
-function markLines(flux: Float64Array, noise: Float64Array, continuum: Float64Array, fwhm: Float64Array): Uint8Array {
+function markLines(flux: Float64Array, noise: Float64Array, continuum: Float64Array, fwhm: Float64Array, clip: number): Uint8Array {
   const n = flux.length;
   const line = new Uint8Array(n);
   let until = -1;
@@ -69,7 +71,7 @@ function markLines(flux: Float64Array, noise: Float64Array, continuum: Float64Ar
     // a running mean of three samples finds faint wings that single samples hide
     const residual = (flux[i] - continuum[i]) / noise[i];
     const mean = i > 0 && i < n - 1 ? (residual + (flux[i - 1] - continuum[i - 1]) / noise[i - 1] + (flux[i + 1] - continuum[i + 1]) / noise[i + 1]) / Math.sqrt(3) : residual;
-    if (Math.abs(residual) > CLIP_SIGMA || Math.abs(mean) > CLIP_SIGMA) {
+    if (Math.abs(residual) > clip || Math.abs(mean) > clip) {
       const reach = Math.ceil(GROW_FWHM * fwhm[i]);
       for (let j = Math.max(until + 1, i - reach, 0); j <= Math.min(n - 1, i + reach); j++) line[j] = 1;
       until = Math.max(until, Math.min(n - 1, i + reach));

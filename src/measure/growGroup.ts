@@ -8,6 +8,8 @@ const NEAREST_FWHM = 0.45;
 /** A lone sample this many sigma off, whose neighbours are not, is a spike. */
 const SPIKE_SIGMA = 7;
 const FWHM_PER_SIGMA = 2.354_820_045;
+/** Nothing is added this near to the ends of a window, in sigma: there a line and the slope of the continuum are one. */
+const MARGIN_SIGMA = 3;
 
 /**
  * Fits a group and looks into its residuals for components that the peaks did not show, one at a time, as long as each improves the fit by more than
@@ -91,7 +93,8 @@ function bestAddition(samples: FitSamples, fit: GroupFit, residual: Float64Array
   const sigma = window.x.map((w, i) => width.sigmaAt(w) / window.sampleWidth[i]);
   const snr = matchedFilter(residual, window.noise, window.usable, sigma);
   let best = -1;
-  for (let i = 1; i < snr.length - 1; i++) {
+  const margin = Math.ceil(MARGIN_SIGMA * sigma[0]);
+  for (let i = margin; i < snr.length - margin; i++) {
     const peak = snr[i] >= snr[i - 1] && snr[i] >= snr[i + 1];
     if (peak && window.usable[i] && (best < 0 || snr[i] > snr[best])) best = i;
   }

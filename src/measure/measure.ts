@@ -11,6 +11,8 @@ import { type LineSpread, sigmaAt, spreadOfLines, widthOfTallPeaks } from './lin
 import { matchedFilter } from './matchedFilter.ts';
 import { scatterNoise } from './noise.ts';
 import { findPeaks, type Peak } from './peaks.ts';
+import { isPlateau } from './plateau.ts';
+import { regularAxis } from './regularAxis.ts';
 import { findSpikes } from './spikes.ts';
 
 /** Progress is told as a share in [0, 1] of the named stage; a run is cancelled between groups. */
@@ -64,9 +66,10 @@ export function measure(spectrum: Spectrum, settings: MeasureSettings, control: 
     if (k % 16 === 0) control.progress?.('fitting', k / windows.length);
     const starts = window.peaks.map((peak) => startOf(state.samples, peak, width));
     const fit = growGroup(state.samples, window.first, window.last, starts, width, settings.thresholdSigma, spikes);
+    if (isPlateau(state.samples, fit, width)) return;
     groups.push({ first: fit.first, last: fit.last, chi2: fit.chi2, dof: fit.dof });
     addProfiles(state.samples, fit.components, model, { fit, into: model });
-    features.push(...featuresOfFit(state.samples, fit, { continuum: state.continuum, group: k, spread, threshold: settings.thresholdSigma, masked: spectrum.masked }));
+    features.push(...featuresOfFit(state.samples, fit, { continuum: state.continuum, group: groups.length - 1, spread, threshold: settings.thresholdSigma, masked: spectrum.masked }));
   });
   for (const spike of new Set(spikes)) features.push(artefactFeature(state.samples, spike, state.continuum, groups));
   features.sort((a, b) => a.centroid - b.centroid);
@@ -96,14 +99,17 @@ interface Prepared {
 
 /** Noise, first line width, continuum and spikes. */
 function prepare(spectrum: Spectrum, settings: MeasureSettings, remarks: Remark[]): Prepared {
-  const { wavelength: x, flux } = spectrum;
+  const { flux } = spectrum;
+  const regular = regularAxis(spectrum.wavelength);
+  const x = regular ?? spectrum.wavelength;
+  if (regular) remarks.push({ code: 'axis-unrounded', weight: 'note', where: { file: spectrum.name }, found: 'the wavelengths are a regular axis printed with few digits; fits use the regular one' });
   const n = x.length;
   const noise = spectrum.fluxErr ? Float64Array.from(spectrum.fluxErr) : scatterNoise(spectrum);
   const usable = Uint8Array.from(spectrum.masked, (m, i) => (m === 0 && Number.isFinite(flux[i]) && noise[i] > 0 && Number.isFinite(noise[i]) ? 1 : 0));
   const sampleWidth = Float64Array.from(x, (_, i) => (x[Math.min(n - 1, i + 1)] - x[Math.max(0, i - 1)]) / (i > 0 && i < n - 1 ? 2 : 1));
   const told = settings.resolvingPower ?? spectrum.resolvingPower;
   const rough = roughContinuum(flux, usable);
-  const first = widthOfTallPeaks(x, Float64Array.from(flux, (f, i) => f - rough[i]), noise, usable);
+  const first = widthOfTallPeaks(x, flux.map((f, i) => f - rough[i]), noise, usable);
   const resolvingPower = told ?? first.resolvingPower;
   const fwhm = Float64Array.from(x, (w, i) => Math.max(1.5, w / resolvingPower / sampleWidth[i]));
   let continuum = fitContinuum(flux, noise, usable, fwhm);
