@@ -1,4 +1,5 @@
 import type { StrengthBasis } from './bundleFormat.ts';
+import type { CaseBTable } from './caseB.ts';
 import type { LevelModel } from './levelModel.ts';
 import type { LineList } from './lineList.ts';
 
@@ -49,6 +50,10 @@ export interface AtomicData {
   readonly aNote: (line: number) => string;
   /** Citations of the line's levels and A value. */
   readonly lineSources: (line: number) => readonly string[];
+  /** Case-B intensities of H I and He II, for `caseBIntensity`. */
+  readonly caseB: CaseBTable;
+  /** Line of H I or He II by principal quantum numbers; -1 when the list has none. */
+  readonly hydrogenicLine: (ion: string, nLower: number, nUpper: number) => number;
   /** Telluric bands and broad glows, ascending start. */
   readonly skyBands: readonly SkyBand[];
 }

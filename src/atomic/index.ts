@@ -4,8 +4,14 @@
 // ionization zone (Te 10^4 K): they rank lines within an ion, across ions only to 0.5 dex.
 export type { AtomicData, SkyBand } from './atomicData.ts';
 export type { StrengthBasis } from './bundleFormat.ts';
+export { type CaseBTable, caseBIntensity } from './caseB.ts';
 export type { Level, LevelModel } from './levelModel.ts';
 export { UPSILON_TE } from './levelModel.ts';
 export type { Ion, LineList, Mechanism, Nature } from './lineList.ts';
 export { linesBetween } from './linesBetween.ts';
 export { loadAtomicData } from './loadAtomicData.ts';
+export { isInsideRange, upsilonAt } from './physics/collisionRates.ts';
+export { criticalDensity, radiativeLifetime } from './physics/criticalDensity.ts';
+export { decayRate, emissivityPerIon, lineRatio, survival } from './physics/emissivity.ts';
+export { levelPopulations } from './physics/levelPopulations.ts';
+export { isMetastable, type ThinGasFacts, thinGasFacts } from './physics/thinGasFacts.ts';

@@ -1,7 +1,9 @@
 import type { AtomicData, SkyBand } from './atomicData.ts';
 import { type Bundle, openBundle } from './bundle.ts';
 import { NATURES, NO_LEVEL, STRENGTH_BASES } from './bundleFormat.ts';
+import type { CaseBTable } from './caseB.ts';
 import type { LevelModel } from './levelModel.ts';
+import type { LineList } from './lineList.ts';
 import { openLevelModels } from './openLevelModels.ts';
 import { openLineList } from './openLineList.ts';
 
@@ -19,15 +21,19 @@ export function loadAtomicData(bytes: Uint8Array): AtomicData {
   const bundle = openBundle(bytes);
   const { inputsHash, schema } = bundle.header;
   const models = openLevelModels(bundle);
+  const lines = openLineList(bundle);
+  const records = lineRecords(bundle, (ion) => models.model(ion)?.sources);
   return {
     version: `${schema}-${inputsHash.slice(0, 8)}`,
     inputsHash,
-    lines: openLineList(bundle),
+    lines,
     modelIons: models.names,
     levelModel: models.model,
     referenceAbundance: bundle.f32('ion.abundance'),
     skyBands: skyBands(bundle),
-    ...lineRecords(bundle, (ion) => models.model(ion)?.sources),
+    caseB: openCaseB(bundle),
+    hydrogenicLine: hydrogenicLines(lines, records),
+    ...records,
   };
 }
 
@@ -45,7 +51,38 @@ function skyBands(bundle: Bundle): SkyBand[] {
   })).sort((p, q) => p.lowVac - q.lowVac);
 }
 
-type LineRecords = Omit<AtomicData, 'version' | 'inputsHash' | 'lines' | 'modelIons' | 'levelModel' | 'referenceAbundance' | 'skyBands'>;
+function openCaseB(bundle: Bundle): CaseBTable {
+  const texts = bundle.text('texts');
+  const ionName = bundle.u16('ion.name');
+  return {
+    ion: Array.from(bundle.u16('caseB.ion'), (ion) => texts[ionName[ion]]),
+    nLower: bundle.u8('caseB.nLower'),
+    nUpper: bundle.u8('caseB.nUpper'),
+    intensity: bundle.f32('caseB.intensity'),
+  };
+}
+
+/** Finds lines of H I and He II by quantum numbers; the index is made at the first question. */
+function hydrogenicLines(lines: LineList, records: LineRecords): AtomicData['hydrogenicLine'] {
+  let index: Map<string, number> | undefined;
+  return (ion, nLower, nUpper) => {
+    if (index === undefined) {
+      index = new Map();
+      for (let i = 0; i < lines.count; i++) {
+        const { name } = lines.ions[lines.ion[i]];
+        if ((name === 'H I' || name === 'He II') && lines.upperId[i] > 0) {
+          index.set(`${name} ${records.lowerLabel(i)} ${records.upperLabel(i)}`, i);
+        }
+      }
+    }
+    return index.get(`${ion} n=${nLower} n=${nUpper}`) ?? -1;
+  };
+}
+
+type LineRecords = Omit<
+  AtomicData,
+  'version' | 'inputsHash' | 'lines' | 'modelIons' | 'levelModel' | 'referenceAbundance' | 'skyBands' | 'caseB' | 'hydrogenicLine'
+>;
 
 /** Texts and energies of single lines, decoded when asked for. */
 function lineRecords(bundle: Bundle, modelSources: (ion: string) => LevelModel['sources'] | undefined): LineRecords {

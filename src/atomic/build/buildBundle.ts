@@ -1,8 +1,8 @@
 import { assembleIons, assembleLevels } from './assembleLevels.ts';
 import { assembleFamily, assembleSky } from './assembleLines.ts';
-import { type LevelEntry, type LineEntry, ritzWavelength } from './assembly.ts';
-import { readBibliography } from './bibliography.ts';
-import { type CsvTable, parseCsvTable } from './csvTable.ts';
+import { type IonEntry, type LevelEntry, type LineEntry, ritzWavelength } from './assembly.ts';
+import { type Bibliography, readBibliography } from './bibliography.ts';
+import { type CsvTable, numberIn, parseCsvTable } from './csvTable.ts';
 import { forbiddenLines } from './forbiddenLines.ts';
 import { levelSections, modelSections } from './levelSections.ts';
 import { lineSections } from './lineSections.ts';
@@ -66,12 +66,24 @@ export function buildBundle({ files, hash }: TableFiles): Uint8Array {
       values: bands.map((row) => texts.number([row['transition'], row['note']].filter((t) => t !== '').join('; '))),
     },
   };
+  Object.assign(sections, caseBSections(table('case-b.csv'), ions, bib));
   sections['texts'] = { type: 'text', values: texts.values };
   return packBundle(
     { lines: sorted.length, ions: ions.length, levels: levels.levels.length, modelIons: new Set(model.rows.map((r) => r['ion'])).size },
     hash,
     sections,
   );
+}
+
+function caseBSections(table: CsvTable, ions: readonly IonEntry[], bib: Bibliography): Record<string, Section> {
+  for (const row of table.rows) bib.citations(row['source'], `${table.name}: ${row['ion']} ${row['n_lower']}-${row['n_upper']}`);
+  const nodes = table.columns.filter((column) => column.startsWith('i_'));
+  return {
+    'caseB.ion': { type: 'u16', values: table.rows.map((row) => ions.findIndex((ion) => ion.name === row['ion'])) },
+    'caseB.nLower': { type: 'u8', values: table.rows.map((row) => numberIn(table, row, 'n_lower')) },
+    'caseB.nUpper': { type: 'u8', values: table.rows.map((row) => numberIn(table, row, 'n_upper')) },
+    'caseB.intensity': { type: 'f32', values: table.rows.flatMap((row) => nodes.map((column) => numberIn(table, row, column))) },
+  };
 }
 
 /** The same transition in two families is one line: the first keeps it. */
