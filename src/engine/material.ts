@@ -34,7 +34,7 @@ export async function readMaterial(
   choices: ReadingChoices,
   control: ReadingControl,
 ): Promise<Material> {
-  if (kind === 'line-list') return readList(source, choices, control);
+  if (kind === 'line-list') return readList(source, choices);
   const reading = await readSpectrum(source, choices, control);
   const { spectrum } = reading;
   return {
@@ -56,8 +56,8 @@ export async function readMaterial(
   };
 }
 
-async function readList(source: ByteSource, choices: ReadingChoices, control: ReadingControl): Promise<Material> {
-  const list = await readLineList(source, choices, control);
+async function readList(source: ByteSource, choices: ReadingChoices): Promise<Material> {
+  const list = await readLineList(source, choices);
   const order = Array.from(list.wavelength.keys()).sort((a, b) => list.wavelength[a] - list.wavelength[b]);
   const medium: Medium = list.medium;
   const features = order.map((row, index): Feature => {

@@ -22,9 +22,16 @@ export function emissivityPerIon(model: LevelModel, upper: number, lower: number
 }
 
 /** Ratio of two lines of one ion in energy units, `over` / `under`, each as [upper, lower]. */
-export function lineRatio(model: LevelModel, over: readonly [number, number], under: readonly [number, number], te: number, ne: number): number {
+export function lineRatio(
+  model: LevelModel,
+  over: readonly [number, number],
+  under: readonly [number, number],
+  te: number,
+  ne: number,
+): number {
   const populations = levelPopulations(model, te, ne);
-  const strength = ([upper, lower]: readonly [number, number]) => populations[upper] * decayRate(model, upper, lower) * photonErg(model, upper, lower);
+  const strength = ([upper, lower]: readonly [number, number]) =>
+    populations[upper] * decayRate(model, upper, lower) * photonErg(model, upper, lower);
   return strength(over) / strength(under);
 }
 
