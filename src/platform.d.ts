@@ -27,3 +27,6 @@ declare const DecompressionStream: {
 declare const crypto: { subtle: { digest(algorithm: string, bytes: Uint8Array): Promise<ArrayBuffer> } };
 declare function setTimeout(run: () => void, ms: number): unknown;
 declare const performance: { now(): number };
+interface Blob {
+  readonly size: number;
+}

@@ -60,11 +60,12 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
           readMaterial(bytes, kind, settings.reading satisfies ReadingChoices, { progress, signal: control.signal }),
         ),
       );
+      const { spectrum } = what;
       const measureSettings: MeasureSettings = { ...DEFAULT_MEASURE_SETTINGS, ...settings.measure };
       const measurement = await measured.of([material.stamp(), measureSettings], () =>
-        what.spectrum
+        spectrum
           ? run('measuring', (progress) =>
-              measure(what.spectrum, measureSettings, { progress: (_, share) => progress(share), signal: control.signal }),
+              measure(spectrum, measureSettings, { progress: (_, share) => progress(share), signal: control.signal }),
             )
           : undefined,
       );

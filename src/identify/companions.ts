@@ -1,0 +1,144 @@
+import { type AtomicData, linesBetween } from '../atomic/index.ts';
+import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
+import type { SystemModel } from './model.ts';
+import type { CompanionFinding, Mark, NamingSettings } from './naming.ts';
+import { isLocal } from './options.ts';
+import { roughDimming } from './roughReddening.ts';
+import type { Survey } from './survey.ts';
+
+/** A companion with what it says of the candidate. */
+export interface WeighedCompanion {
+  readonly finding: CompanionFinding;
+  readonly nats: number;
+  readonly sameUpper: boolean;
+}
+
+/** Relatives of every line: those that share its upper level, and those of its multiplet. */
+export interface Kin {
+  readonly of: (line: number) => readonly number[];
+}
+
+/** Companions looked at for one candidate. */
+const MOST_COMPANIONS = 5;
+/** Scatter of the ratio of two lines from one upper level (A values), and of two lines of one multiplet (level populations), dex. */
+const SAME_UPPER_DEX = 0.07;
+const MULTIPLET_DEX = 0.16;
+/** The ion's scale already holds part of this evidence: it counts by this share. */
+const SHARE = 0.6;
+const MOST_FOR = 2.5;
+const MOST_AGAINST = 5;
+
+export function kinOf(data: AtomicData): Kin {
+  const { lines } = data;
+  const byUpper = new Map<number, number[]>();
+  const byMultiplet = new Map<number, number[]>();
+  const put = (map: Map<number, number[]>, key: number, line: number) => {
+    if (key <= 0) return;
+    const list = map.get(key);
+    if (list) list.push(line);
+    else map.set(key, [line]);
+  };
+  for (let line = 0; line < lines.count; line++) {
+    if (isLocal(data, line)) continue;
+    put(byUpper, lines.upperId[line], line);
+    put(byMultiplet, lines.multiplet[line], line);
+  }
+  return {
+    of(line) {
+      const relatives = new Set([...(byUpper.get(lines.upperId[line]) ?? []), ...(byMultiplet.get(lines.multiplet[line]) ?? [])]);
+      relatives.delete(line);
+      return [...relatives].sort((a, b) => lines.logStrength[b] - lines.logStrength[a]).slice(0, MOST_COMPANIONS);
+    },
+  };
+}
+
+/**
+ * Looks for the companions of a line that is taken for a mark.
+ *
+ * @param share of the mark's flux that the line carries
+ * @param marks ascending wavelength
+ */
+export function findCompanions(
+  mark: Mark,
+  line: number,
+  share: number,
+  marks: readonly Mark[],
+  kin: Kin,
+  data: AtomicData,
+  survey: Survey,
+  model: SystemModel,
+  settings: NamingSettings,
+): WeighedCompanion[] {
+  const { lines } = data;
+  return kin.of(line).flatMap((other): WeighedCompanion[] => {
+    const dimming = model.cHbeta * (roughDimming(lines.wavelengthVac[line]) - roughDimming(lines.wavelengthVac[other]));
+    const logRatio = lines.logStrength[other] - lines.logStrength[line] + dimming;
+    if (!Number.isFinite(logRatio)) return [];
+    const expectedAt = lines.wavelengthVac[other] * (1 + model.z);
+    const logPredicted = Math.log10(mark.flux * share) + logRatio;
+    const sameUpper = lines.upperId[other] === lines.upperId[line] && lines.upperId[line] > 0;
+    const err = sameUpper ? SAME_UPPER_DEX : MULTIPLET_DEX;
+    const base = { line: other, expectedAt, predictedFlux: 10 ** logPredicted };
+    const say = (outcome: CompanionFinding['outcome'], nats: number, feature?: number): WeighedCompanion[] => [
+      { finding: { ...base, outcome, ...(feature === undefined ? {} : { feature }) }, nats: SHARE * nats, sameUpper },
+    ];
+    if (expectedAt < survey.low || expectedAt > survey.high) return say('outside', 0);
+    if (Math.abs(expectedAt - mark.wavelength) < Math.max(mark.fwhm ?? 0, 2 * mark.wavelengthErr)) return [];
+    const found = nearestWithin(marks, expectedAt, (settings.toleranceKms / SPEED_OF_LIGHT_KMS) * expectedAt);
+    const above = logPredicted - survey.logLimitAt(expectedAt);
+    if (found === undefined) {
+      if (above <= 0) return say('too-faint', 0);
+      return say('absent', -Math.min(MOST_AGAINST, 0.5 * (above / Math.hypot(err, 0.1)) ** 2));
+    }
+    const off = Math.log10(marks[found].flux) - logPredicted;
+    const fluxErr = Number.isFinite(marks[found].fluxErr) ? (0.434 * marks[found].fluxErr) / marks[found].flux : 0.05;
+    const s = Math.hypot(err, fluxErr, 0.03);
+    if (Math.abs(off) <= 3 * s)
+      return say('seen', Math.min(MOST_FOR, Math.log((3 * Math.exp(-0.5 * (off / s) ** 2)) / (s * Math.sqrt(2 * Math.PI)))), found);
+    // something stronger stands there: the companion may hide in it
+    if (off > 0) return say('hidden', 0, found);
+    return say('wrong-ratio', -Math.min(MOST_AGAINST, 0.5 * (off / s) ** 2 * 0.3), found);
+  });
+}
+
+function nearestWithin(marks: readonly Mark[], at: number, reach: number): number | undefined {
+  let best: number | undefined;
+  let low = 0;
+  let high = marks.length;
+  while (low < high) {
+    const mid = (low + high) >> 1;
+    if (marks[mid].wavelength < at - reach) low = mid + 1;
+    else high = mid;
+  }
+  for (let j = low; j < marks.length && marks[j].wavelength <= at + reach; j++) {
+    if (marks[j].artefact || marks[j].flux <= 0) continue;
+    if (best === undefined || Math.abs(marks[j].wavelength - at) < Math.abs(marks[best].wavelength - at)) best = j;
+  }
+  return best;
+}
+
+/** Strong lines that the model predicts in the observed range and that no mark stands for; `linesBetween` keeps it to the range. */
+export function missingLines(
+  marks: readonly Mark[],
+  data: AtomicData,
+  survey: Survey,
+  model: SystemModel,
+  scaleOf: (ion: number) => { mean: number; seen: number },
+  logPredicted: (line: number) => number,
+  toleranceKms: number,
+): { line: number; predictedFlux: number; expectedAt: number }[] {
+  const { lines } = data;
+  const [first, end] = linesBetween(lines, survey.low / (1 + model.z), survey.high / (1 + model.z));
+  const missing: { line: number; predictedFlux: number; expectedAt: number }[] = [];
+  for (let line = first; line < end; line++) {
+    if (isLocal(data, line)) continue;
+    const scale = scaleOf(lines.ion[line]);
+    if (!(scale.seen > 0.8)) continue;
+    const expectedAt = lines.wavelengthVac[line] * (1 + model.z);
+    const log = logPredicted(line) + scale.mean;
+    if (log - survey.logLimitAt(expectedAt) < 0.5) continue;
+    if (nearestWithin(marks, expectedAt, (2 * toleranceKms * expectedAt) / SPEED_OF_LIGHT_KMS) === undefined)
+      missing.push({ line, predictedFlux: 10 ** log, expectedAt });
+  }
+  return missing.sort((a, b) => b.predictedFlux - a.predictedFlux).slice(0, 40);
+}

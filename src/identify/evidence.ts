@@ -1,0 +1,67 @@
+import type { AtomicData } from '../atomic/index.ts';
+import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
+import type { WeighedCompanion } from './companions.ts';
+import type { Weighed } from './inference.ts';
+import type { Evidence, Mark } from './naming.ts';
+import { isLocal } from './options.ts';
+
+/** The case of one candidate: every piece of its log odds with a sentence that a referee can read. The pieces sum to the log odds against "none of these". */
+export function evidenceOf(mark: Mark, weighed: Weighed, companions: readonly WeighedCompanion[], data: AtomicData): Evidence[] {
+  const evidence: Evidence[] = [
+    { kind: 'wavelength', nats: weighed.wavelengthNats, sentence: wavelengthSentence(mark, weighed, data) },
+    { kind: 'strength', nats: weighed.strengthNats, sentence: strengthSentence(mark, weighed, data) },
+  ];
+  for (const { finding, nats, sameUpper } of companions) {
+    if (finding.outcome === 'outside' || finding.outcome === 'too-faint') continue;
+    evidence.push({ kind: 'companion', nats, sentence: companionSentence(mark, finding, sameUpper, data) });
+  }
+  evidence.push({ kind: 'prior', nats: weighed.priorNats, sentence: priorSentence(weighed) });
+  return evidence;
+}
+
+const ionName = (data: AtomicData, line: number) => data.lines.ions[data.lines.ion[line]].name;
+
+function wavelengthSentence(mark: Mark, { lines, off, sigma }: Weighed, data: AtomicData): string {
+  const kms = (value: number) => (value / mark.wavelength) * SPEED_OF_LIGHT_KMS;
+  const where = isLocal(data, lines[0]) ? 'its place in the observer’s frame' : 'the object’s velocity';
+  const mean = lines.length > 1 ? 'The flux-weighted mean of the blend lies ' : 'The feature lies ';
+  return `${mean}${signed(kms(off))} ± ${kms(sigma).toFixed(1)} km/s (${signed(off, 3)} Å) from ${where}: ${(Math.abs(off) / sigma).toFixed(1)} sigma.`;
+}
+
+function strengthSentence(mark: Mark, { lines, logPredicted, logPredictedErr, ionSeen }: Weighed, data: AtomicData): string {
+  const ratio = 10 ** (Math.log10(Math.abs(mark.flux)) - logPredicted);
+  const factor = 10 ** logPredictedErr;
+  const basis =
+    ionSeen > 0.7
+      ? `from what ${ionName(data, lines[0])} shows in other features`
+      : `from typical abundances (no other line of ${ionName(data, lines[0])} is recognised)`;
+  return `The flux is ${ratio >= 100 || ratio < 0.01 ? ratio.toExponential(1) : Number(ratio.toPrecision(2))} times the one expected ${basis}, which is known within a factor ${factor.toFixed(factor < 3 ? 1 : 0)}.`;
+}
+
+function companionSentence(
+  mark: Mark,
+  { line, predictedFlux, outcome, expectedAt }: WeighedCompanion['finding'],
+  sameUpper: boolean,
+  data: AtomicData,
+): string {
+  const name = `${ionName(data, line)} ${data.lines.wavelengthVac[line].toFixed(1)} (vacuum)`;
+  const kin = sameUpper ? 'from the same upper level' : 'of the same multiplet';
+  const share = (predictedFlux / mark.flux).toPrecision(2);
+  switch (outcome) {
+    case 'seen':
+      return `${name}, ${kin}, is there at the ratio predicted (${share} of this feature).`;
+    case 'wrong-ratio':
+      return `${name}, ${kin}, should have ${share} of this feature’s flux; what stands there is fainter.`;
+    case 'absent':
+      return `${name}, ${kin}, should have ${share} of this feature’s flux, above the detection limit at ${expectedAt.toFixed(1)} Å, and is not there.`;
+    default:
+      return `${name}, ${kin}, may hide in a stronger feature at its place.`;
+  }
+}
+
+function priorSentence({ lines, priorNats }: Weighed): string {
+  const blend = lines.length > 1 ? ` and a blend of ${lines.length} is less common than one line` : '';
+  return `Few real lines are missing from the list${blend}${priorNats < 0 ? '; another feature claims this line with better right' : ''}.`;
+}
+
+const signed = (value: number, digits = 1) => `${value < 0 ? '−' : '+'}${Math.abs(value).toFixed(digits)}`;

@@ -1,0 +1,27 @@
+import type { AtomicData } from '../atomic/index.ts';
+import { roughDimming } from './roughReddening.ts';
+
+/** What is common to all marks, estimated with the assignments. */
+export interface SystemModel {
+  readonly z: number;
+  readonly zErr: number;
+  /** Extra scatter of centroids, km/s. */
+  readonly dispersionKms: number;
+  /** log10 of the marks' flux unit against H beta = 100. */
+  readonly logZero: number;
+  /** Rough reddening, c(Hbeta). */
+  readonly cHbeta: number;
+}
+
+/** log10 flux predicted for a line at ion scale 0, in the marks' unit. */
+export function predictedLog(data: AtomicData, line: number, model: SystemModel): number {
+  return model.logZero + data.lines.logStrength[line] - model.cHbeta * roughDimming(data.lines.wavelengthVac[line]);
+}
+
+/** Scatter of a line's flux about the prediction beyond the list's own error, dex: other temperature, density, calibration. */
+const MODEL_SCATTER_DEX = 0.12;
+
+export const strengthErr = (data: AtomicData, line: number): number => {
+  const own = data.lines.strengthErrDex[line];
+  return Math.hypot(Number.isFinite(own) ? own : 0.5, MODEL_SCATTER_DEX);
+};

@@ -1,0 +1,58 @@
+import { type AtomicData, linesBetween } from '../atomic/index.ts';
+import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
+import type { Mark, NamingSettings } from './naming.ts';
+
+/** One transition that a mark may be, before it is weighed. */
+export interface Option {
+  readonly line: number;
+  /** Observed minus expected, Angstrom, at the velocity of the model it was made with. */
+  readonly off: number;
+  /** One sigma of `off`, Angstrom: mark, line and dispersion. */
+  readonly sigma: number;
+}
+
+/** Families that stand still in the observer's frame. */
+export const isLocal = (data: AtomicData, line: number): boolean => {
+  const nature = data.lines.nature(line);
+  return nature === 'sky' || nature === 'telluric' || nature === 'interstellar';
+};
+
+/** Families that absorb. */
+const absorbs = (data: AtomicData, line: number) => {
+  const nature = data.lines.nature(line);
+  return nature === 'telluric' || nature === 'interstellar';
+};
+
+/** Interstellar clouds move against the observer by up to this much, km/s, one sigma. */
+const CLOUD_KMS = 25;
+/** A line whose own wavelength is uncertain may lie that many of its errors off. */
+const LINE_SIGMAS = 3;
+
+/**
+ * All lines within the tolerance of a mark: `toleranceKms`, or `toleranceSigma` times the mark's error, or three errors of the line's own wavelength.
+ *
+ * @param z             systemic redshift
+ * @param dispersionKms extra scatter of centroids
+ */
+export function optionsOf(mark: Mark, data: AtomicData, settings: NamingSettings, z: number, dispersionKms: number): Option[] {
+  if (mark.artefact) return [];
+  const { lines } = data;
+  const reach = Math.max((settings.toleranceKms / SPEED_OF_LIGHT_KMS) * mark.wavelength, settings.toleranceSigma * mark.wavelengthErr);
+  const widest = reach + 2;
+  const options: Option[] = [];
+  const consider = (shift: number, local: boolean) => {
+    const [first, end] = linesBetween(lines, (mark.wavelength - widest) / shift, (mark.wavelength + widest) / shift);
+    for (let line = first; line < end; line++) {
+      if (isLocal(data, line) !== local || absorbs(data, line) !== mark.flux < 0) continue;
+      const off = mark.wavelength - lines.wavelengthVac[line] * shift;
+      const lineErr = lines.wavelengthErr[line] * shift;
+      if (Math.abs(off) > Math.max(reach, LINE_SIGMAS * Math.hypot(lineErr, mark.wavelengthErr))) continue;
+      const spreadKms = lines.nature(line) === 'interstellar' ? CLOUD_KMS : dispersionKms;
+      const spread = (spreadKms / SPEED_OF_LIGHT_KMS) * mark.wavelength;
+      options.push({ line, off, sigma: Math.hypot(mark.wavelengthErr, lineErr, spread) });
+    }
+  };
+  consider(1 + z, false);
+  consider(1, true);
+  return options;
+}
