@@ -91,7 +91,7 @@ export function findCompanions(
       return say('absent', -Math.min(MOST_AGAINST, 0.5 * (above / Math.hypot(err, 0.1)) ** 2));
     }
     const off = Math.log10(marks[found].flux) - logPredicted;
-    const fluxErr = Number.isFinite(marks[found].fluxErr) ? (0.434 * marks[found].fluxErr) / marks[found].flux : 0.05;
+    const fluxErr = Number.isFinite(marks[found].fluxErr) ? (Math.LOG10E * marks[found].fluxErr) / marks[found].flux : 0.05;
     const s = Math.hypot(err, fluxErr, 0.03);
     if (Math.abs(off) <= 3 * s)
       return say('seen', Math.min(MOST_FOR, Math.log((3 * Math.exp(-0.5 * (off / s) ** 2)) / (s * Math.sqrt(2 * Math.PI)))), found);

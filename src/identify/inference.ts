@@ -169,7 +169,7 @@ function sightingsOf(
 }
 
 const logFluxErr = (mark: Mark) =>
-  Math.hypot(LEAST_FLUX_ERR_DEX, Number.isFinite(mark.fluxErr) ? Math.min(1, (0.434 * mark.fluxErr) / Math.abs(mark.flux)) : 0);
+  Math.hypot(LEAST_FLUX_ERR_DEX, Number.isFinite(mark.fluxErr) ? Math.min(1, (Math.LOG10E * mark.fluxErr) / Math.abs(mark.flux)) : 0);
 
 /** For every ion its strongest lines in the observed range at whose place no mark stands. */
 function absencesOf(marks: readonly Mark[], data: AtomicData, survey: Survey, model: SystemModel, settings: NamingSettings): Absence[][] {
