@@ -16,6 +16,7 @@ async function tables(args: readonly string[], kind: SourceKind): Promise<number
     options = parseArguments(args);
     if (options.words.length === 0) throw new UsageError('no file was named');
     if (options.words.length > 1 && options.out === undefined) throw new UsageError('several files need --out DIR');
+    refuseOverwriting(options);
   } catch (error) {
     if (!(error instanceof UsageError)) throw error;
     process.stderr.write(`linewright: ${error.message}\n`);
@@ -28,6 +29,19 @@ async function tables(args: readonly string[], kind: SourceKind): Promise<number
   return failures > 0 ? 1 : 0;
 }
 
+/** Two inputs of one name would write one file. @throws UsageError */
+function refuseOverwriting(options: Arguments): void {
+  const seen = new Map<string, string>();
+  for (const path of options.words) {
+    const target = outputName(path, options);
+    const earlier = seen.get(target);
+    if (earlier !== undefined) throw new UsageError(`${earlier} and ${path} would both be written to ${target}: give them different names or run them apart`);
+    seen.set(target, path);
+  }
+}
+
+const outputName = (path: string, options: Arguments) => `${basename(path, extname(path))}.${TABLE_FORMATS[options.format].ending}`;
+
 /** Whether the file could be read. */
 async function oneTable(engine: Engine, path: string, kind: SourceKind, options: Arguments): Promise<boolean> {
   const tell = progressOnTerminal(basename(path));
@@ -39,7 +53,7 @@ async function oneTable(engine: Engine, path: string, kind: SourceKind, options:
       const format = TABLE_FORMATS[options.format];
       const text = format.write(withoutArtefacts(analysis.table));
       if (options.out === undefined) process.stdout.write(text);
-      else writeFileSync(join(options.out, `${basename(path, extname(path))}.${format.ending}`), text);
+      else writeFileSync(join(options.out, outputName(path, options)), text);
       const named = analysis.features.filter((f) => f.name).length;
       process.stderr.write(
         `${basename(path)}: ${analysis.features.length} features, ${named} named, z = ${analysis.z.toFixed(6)} +/- ${analysis.zErr.toFixed(6)}\n`,
