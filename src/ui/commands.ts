@@ -1,0 +1,141 @@
+import { chooseNextOpen, chosenRow, walkFeatures, walkTable } from './desk/chosen.ts';
+import { acceptCandidate, declareRow, redoNext, rejectCandidate, reopenRow, undoLast } from './desk/decisions.ts';
+import { desk, setDesk, type Tab } from './desk/deskStore.ts';
+import { saveTable } from './desk/files.ts';
+import { focusFilter, focusNote } from './desk/focus.ts';
+import { closeIn, nextScale, otherFrame, wholeSpectrum, zoomBy } from './desk/looking.ts';
+import { pickFile } from './desk/pickFile.ts';
+import { words } from './words.ts';
+
+/** One thing the desk can do: menu, keyboard and help read this one list. */
+export interface Command {
+  readonly name: string;
+  readonly label: string;
+  readonly group: keyof typeof words.commandGroups;
+  /** As `keyOf` spells a key stroke; "Mod" is Ctrl or ⌘. The first is shown. */
+  readonly keys: readonly string[];
+  /** Not in the help: a member of a row of alike commands. */
+  readonly hidden?: boolean;
+  readonly canRun: () => boolean;
+  readonly run: () => void;
+}
+
+const { commands: label } = words;
+const always = () => true;
+const atDesk = () => desk().stage === 'desk';
+const withRow = () => atDesk() && chosenRow() !== undefined;
+const candidate = (n: number) => chosenRow()?.candidates[n];
+
+const show = (name: Tab, key: string): Command => ({
+  name: `show-${name}`,
+  label: name === 'history' ? words.tabs.history : label[name],
+  group: 'desk',
+  keys: [key],
+  canRun: name === 'keys' ? always : atDesk,
+  run: () => setDesk({ tab: name }),
+});
+
+const acceptNth = (n: number): Command => ({
+  name: `accept-${n}`,
+  label: label.acceptNth(n),
+  group: 'decide',
+  keys: [String(n)],
+  hidden: n > 1,
+  canRun: () => withRow() && candidate(n - 1) !== undefined,
+  run: () => {
+    const row = chosenRow();
+    if (row) acceptCandidate(row, candidate(n - 1), 'go-on');
+  },
+});
+
+export const COMMANDS: readonly Command[] = [
+  { name: 'next-feature', label: label.nextFeature, group: 'walk', keys: ['ArrowRight'], canRun: atDesk, run: () => walkFeatures(1) },
+  {
+    name: 'previous-feature',
+    label: label.previousFeature,
+    group: 'walk',
+    keys: ['ArrowLeft'],
+    canRun: atDesk,
+    run: () => walkFeatures(-1),
+  },
+  { name: 'next-row', label: label.nextRow, group: 'walk', keys: ['ArrowDown'], canRun: atDesk, run: () => walkTable(1) },
+  { name: 'previous-row', label: label.previousRow, group: 'walk', keys: ['ArrowUp'], canRun: atDesk, run: () => walkTable(-1) },
+  { name: 'next-open', label: label.nextOpen, group: 'walk', keys: ['n'], canRun: atDesk, run: chooseNextOpen },
+  {
+    name: 'accept-top',
+    label: label.acceptTop,
+    group: 'decide',
+    keys: ['Enter'],
+    canRun: () => withRow() && candidate(0) !== undefined,
+    run: () => onRow((row) => acceptCandidate(row, row.candidates[0], 'go-on')),
+  },
+  ...[1, 2, 3, 4, 5, 6, 7, 8, 9].map(acceptNth),
+  {
+    name: 'reject-top',
+    label: label.rejectTop,
+    group: 'decide',
+    keys: ['Backspace'],
+    canRun: () => withRow() && candidate(0) !== undefined,
+    run: () => onRow((row) => rejectCandidate(row, row.candidates[0])),
+  },
+  {
+    name: 'unidentified',
+    label: label.unidentified,
+    group: 'decide',
+    keys: ['u'],
+    canRun: withRow,
+    run: () => onRow((row) => declareRow(row, 'unidentified', 'go-on')),
+  },
+  {
+    name: 'artefact',
+    label: label.artefact,
+    group: 'decide',
+    keys: ['x'],
+    canRun: withRow,
+    run: () => onRow((row) => declareRow(row, 'artefact', 'go-on')),
+  },
+  {
+    name: 'reopen',
+    label: label.reopen,
+    group: 'decide',
+    keys: ['r'],
+    canRun: () => withRow() && chosenRow()?.standing !== 'open',
+    run: () => onRow(reopenRow),
+  },
+  { name: 'note', label: label.note, group: 'decide', keys: ['m'], canRun: withRow, run: focusNote },
+  { name: 'undo', label: label.undo, group: 'decide', keys: ['Mod+z'], canRun: () => desk().history.past.length > 0, run: undoLast },
+  {
+    name: 'redo',
+    label: label.redo,
+    group: 'decide',
+    keys: ['Mod+Shift+z', 'Mod+y'],
+    canRun: () => desk().history.future.length > 0,
+    run: redoNext,
+  },
+  { name: 'zoom-in', label: label.zoomIn, group: 'look', keys: ['+', '='], canRun: atDesk, run: () => zoomBy(1 / 1.5) },
+  { name: 'zoom-out', label: label.zoomOut, group: 'look', keys: ['-'], canRun: atDesk, run: () => zoomBy(1.5) },
+  { name: 'whole', label: label.whole, group: 'look', keys: ['w'], canRun: atDesk, run: wholeSpectrum },
+  { name: 'centre', label: label.centre, group: 'look', keys: ['c'], canRun: withRow, run: closeIn },
+  { name: 'scale', label: label.scale, group: 'look', keys: ['y'], canRun: atDesk, run: nextScale },
+  { name: 'frame', label: label.frame, group: 'look', keys: ['f'], canRun: atDesk, run: otherFrame },
+  { name: 'filter', label: label.filter, group: 'desk', keys: ['/'], canRun: atDesk, run: focusFilter },
+  show('case', 'd'),
+  show('settings', 's'),
+  show('reading', 'i'),
+  show('history', 'h'),
+  show('keys', '?'),
+  { name: 'open', label: label.open, group: 'desk', keys: ['o'], canRun: always, run: pickFile },
+  { name: 'export-csv', label: label.exportCsv, group: 'desk', keys: ['e'], canRun: atDesk, run: () => void saveTable('csv') },
+];
+
+function onRow(act: (row: NonNullable<ReturnType<typeof chosenRow>>) => void): void {
+  const row = chosenRow();
+  if (row) act(row);
+}
+
+/** The command of that name, for buttons. */
+export function commandNamed(name: string): Command {
+  const found = COMMANDS.find((command) => command.name === name);
+  if (!found) throw new RangeError(`no command ${name}`);
+  return found;
+}

@@ -1,0 +1,47 @@
+import { keepDesk, keptDesk, pruneFiles } from '../storage.ts';
+import { words } from '../words.ts';
+import { type DeskFields, desk, raiseAlert, setDesk, useDesk } from './deskStore.ts';
+import { analyse } from './engineRuns.ts';
+import { KEPT_FIELDS, type KeptView } from './fates.ts';
+
+let isWriting = false;
+let dirty = false;
+
+/** Brings back what was kept, then keeps every change of what is to be kept. */
+export async function startKeeping(): Promise<void> {
+  const kept = await keptDesk().catch(() => undefined);
+  if (kept?.history.document.source) {
+    setDesk({ ...kept.view, history: kept.history });
+    await pruneFiles(kept.history).catch(() => undefined);
+    useDesk.subscribe(keepIfChanged);
+    await analyse();
+    if (desk().stage === 'starting') setDesk({ stage: 'awaiting' });
+    if (desk().stage === 'desk') setDesk({ status: words.status.restored });
+  } else {
+    if (kept) setDesk({ theme: kept.view.theme, singleKeys: kept.view.singleKeys });
+    useDesk.subscribe(keepIfChanged);
+    setDesk({ stage: 'empty' });
+  }
+}
+
+function keepIfChanged(after: DeskFields, before: DeskFields): void {
+  if (after.history === before.history && KEPT_FIELDS.every((field) => after[field] === before[field])) return;
+  dirty = true;
+  if (!isWriting) void write();
+}
+
+/** Writes the latest state; what changes meanwhile is written in one more round. */
+async function write(): Promise<void> {
+  isWriting = true;
+  while (dirty) {
+    dirty = false;
+    const state = desk();
+    const view = Object.fromEntries(KEPT_FIELDS.map((field) => [field, state[field]])) as unknown as KeptView;
+    try {
+      await keepDesk({ history: state.history, view });
+    } catch {
+      raiseAlert(words.status.storageFailed);
+    }
+  }
+  isWriting = false;
+}

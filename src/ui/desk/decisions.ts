@@ -1,0 +1,87 @@
+import type { CandidateView } from '../../engine/index.ts';
+import {
+  accept,
+  acceptMany,
+  type Change,
+  changeSettings,
+  declare,
+  type History,
+  make,
+  type PointedFeature,
+  redo,
+  reject,
+  reopen,
+  type Settings,
+  undo,
+  writeNote,
+} from '../../session/index.ts';
+import { words } from '../words.ts';
+import { chooseNextOpen } from './chosen.ts';
+import { type DeskRow, deskRows } from './deskRows.ts';
+import { desk, setDesk } from './deskStore.ts';
+import { analyse } from './engineRuns.ts';
+
+/** What a verdict does besides: a decision by key goes on to the next open feature, one by click stays where it is. */
+export type Then = 'stay' | 'go-on';
+
+const pointed = ({ feature }: DeskRow): PointedFeature => ({ at: feature.at, atErr: feature.atErr, label: `feature ${feature.number}` });
+const present = () => desk().history.document;
+
+export function acceptCandidate(row: DeskRow, candidate: CandidateView | undefined, then: Then): void {
+  if (!candidate) return;
+  commit(accept(present(), pointed(row), candidate));
+  if (then === 'go-on') chooseNextOpen();
+}
+
+export function rejectCandidate(row: DeskRow, candidate: CandidateView | undefined): void {
+  if (candidate) commit(reject(present(), pointed(row), candidate));
+}
+
+export function declareRow(row: DeskRow, decision: 'unidentified' | 'artefact', then: Then): void {
+  commit(declare(present(), pointed(row), decision));
+  if (then === 'go-on') chooseNextOpen();
+}
+
+export const reopenRow = (row: DeskRow) => commit(reopen(present(), pointed(row)));
+export const noteOn = (row: DeskRow, text: string) => commit(writeNote(present(), pointed(row), text));
+
+/** Accepts the name in force of many open features as one change. */
+export function acceptNames(rows: readonly DeskRow[]): void {
+  const pairs = rows.flatMap((row) => (row.name ? [{ feature: pointed(row), name: row.name }] : []));
+  commit(acceptMany(present(), pairs, words.table.acceptedMany(pairs.length)));
+}
+
+/** Changes some settings; `sentence` goes into the history. */
+export function set(change: (settings: Settings) => Settings, sentence: string): void {
+  const document = present();
+  const { reading, measure, naming } = change(document.settings);
+  commit(changeSettings(document, { reading: chosenOnly(reading), measure: chosenOnly(measure), naming: chosenOnly(naming) }, sentence));
+}
+
+/** Without the fields that are left to the program: an undefined one would hide the engine's default. */
+function chosenOnly<T extends object>(choices: T): T {
+  const kept = { ...choices };
+  for (const key of Object.keys(kept) as (keyof T)[]) if (kept[key] === undefined) delete kept[key];
+  return kept;
+}
+
+export const undoLast = () => step(undo, desk().history.past.at(-1), (sentence) => `took back: ${sentence}`);
+export const redoNext = () => step(redo, desk().history.future.at(-1), (sentence) => `did again: ${sentence}`);
+
+function commit(change: Change): void {
+  if (change.steps.length === 0) return;
+  follow(make(desk().history, change), change.sentence);
+}
+
+function step(move: (history: History) => History, change: Change | undefined, say: (sentence: string) => string): void {
+  if (change) follow(move(desk().history), say(change.sentence));
+}
+
+/** Shows the new document at once as far as that needs no computing, then has it analysed. */
+function follow(history: History, status: string): void {
+  const { analysis, history: before } = desk();
+  const sameSource = history.document.source === before.document.source;
+  const rows = analysis && sameSource ? deskRows(analysis, history.document.verdicts) : desk().rows;
+  setDesk({ history, rows, status });
+  void analyse();
+}

@@ -1,0 +1,74 @@
+import { ProblemError, wordProblem } from '../../problems/index.ts';
+import { acceptedRows, TABLE_FORMATS, type TableFormatName } from '../../report/index.ts';
+import { readSession, writeSession } from '../../session/index.ts';
+import { words } from '../words.ts';
+import { desk, raiseAlert, setDesk } from './deskStore.ts';
+import { analyse, openFile, settled } from './engineRuns.ts';
+
+const SESSION_ENDING = 'linewright.json';
+/** The made-up nebula that comes with the program. */
+const SAMPLE = 'lantern-nebula.csv';
+
+export async function openSample(): Promise<void> {
+  const response = await fetch(new URL(`samples/${SAMPLE}`, document.baseURI));
+  if (!response.ok) return raiseAlert(`${SAMPLE}: ${response.status} ${response.statusText}`);
+  await openFile(await response.blob(), SAMPLE);
+}
+
+/** Any file the user hands over: a session by its ending, else a spectrum or a list. */
+export async function openAny(file: File): Promise<void> {
+  if (file.name.endsWith(`.${SESSION_ENDING}`)) await openSession(file);
+  else await openFile(file, file.name);
+}
+
+async function openSession(file: File): Promise<void> {
+  try {
+    const history = readSession(await file.text(), file.name);
+    setDesk({ history, chosenAt: undefined, range: undefined });
+    await analyse();
+  } catch (error) {
+    if (!(error instanceof ProblemError)) throw error;
+    raiseAlert(wordProblem(error.problem));
+  }
+}
+
+export function saveSession(): void {
+  download(`${stem()}.${SESSION_ENDING}`, writeSession(desk().history), 'application/json');
+}
+
+/** Saves the table of the analysis that belongs to the document; waits for a run that is going on. */
+export async function saveTable(name: TableFormatName): Promise<void> {
+  const table = await tableToExport();
+  const format = TABLE_FORMATS[name];
+  if (table) download(`${stem()}-lines.${format.ending}`, format.write(table), format.mediaType);
+}
+
+/** The rows that would be saved, as tab-separated text on the clipboard. */
+export async function copyTable(): Promise<void> {
+  const table = await tableToExport();
+  if (!table) return;
+  const { tsvTable } = await import('../table/tsvTable.ts');
+  await navigator.clipboard.writeText(tsvTable(table));
+  setDesk({ status: words.export.copied });
+}
+
+async function tableToExport() {
+  await settled();
+  const { analysis, exportAll } = desk();
+  if (!analysis) return undefined;
+  const table = exportAll ? analysis.table : acceptedRows(analysis.table);
+  if (table.rows.length > 0) return table;
+  raiseAlert(words.export.noneAccepted);
+  return undefined;
+}
+
+const stem = () => (desk().history.document.source?.name ?? 'lines').replace(/\.[^.]+$/, '');
+
+function download(name: string, text: string, mediaType: string): void {
+  const link = document.createElement('a');
+  link.href = URL.createObjectURL(new Blob([text], { type: mediaType }));
+  link.download = name;
+  link.click();
+  setTimeout(() => URL.revokeObjectURL(link.href), 10_000);
+  setDesk({ status: words.export.saved(name) });
+}

@@ -1,0 +1,62 @@
+import type { CandidateView, TransitionView } from '../../engine/index.ts';
+import type { DeskRow } from '../desk/deskRows.ts';
+import { fixed, powerText, withError } from '../figures.ts';
+import { words } from '../words.ts';
+import { CompanionStrips } from './CompanionStrips.tsx';
+import { Ring } from './Mark.tsx';
+
+const { case: label } = words;
+
+/** The evidence for one candidate: sentences with what each adds, companions, thin-gas facts, the transition. */
+export function CandidateCase({ row, candidate }: { row: DeskRow; candidate: CandidateView }) {
+  return (
+    <div className="case-body">
+      <table className="evidence">
+        <tbody>
+          {candidate.evidence.map((piece) => (
+            <tr key={`${piece.kind} ${piece.sentence}`}>
+              <th scope="row">{label.evidence[piece.kind]}</th>
+              <td>{piece.sentence}</td>
+              <td className="number nats" title={label.natsTitle}>
+                {`${piece.nats > 0 ? '+' : ''}${fixed(piece.nats, 1)}`}
+              </td>
+            </tr>
+          ))}
+        </tbody>
+      </table>
+      {candidate.transitions.map((transition, k) => (
+        <Transition
+          key={transition.key}
+          transition={transition}
+          share={candidate.transitions.length > 1 ? candidate.shares[k] : undefined}
+        />
+      ))}
+      {candidate.companions.length > 0 && <CompanionStrips row={row} candidate={candidate} />}
+    </div>
+  );
+}
+
+function Transition({ transition, share }: { transition: TransitionView; share?: number }) {
+  const { thinGas } = transition;
+  return (
+    <section className="transition" aria-label={label.transition}>
+      <p>
+        <strong>{`${transition.ion} ${withError(transition.wavelengthLab, transition.wavelengthLabErr || undefined, 3)} Å`}</strong>
+        {share !== undefined && <span className="number">{` ${label.shares} ${fixed(share, 2)}`}</span>}
+        <span className="levels">{`${transition.lower} – ${transition.upper}, ${transition.nature}`}</span>
+      </p>
+      {thinGas && (
+        <div className="thin-gas">
+          <p>
+            <Ring title={label.thinGas} /> <strong>{label.thinGas}</strong>
+            <span className="number">
+              {` ${label.lifetime} ${powerText(thinGas.lifetimeS, 3)} s, ${label.nCrit} ${thinGas.nCrit === undefined ? label.noCollisions : `${powerText(thinGas.nCrit, 2)} cm⁻³`}`}
+            </span>
+          </p>
+          <p>{thinGas.sentence}</p>
+        </div>
+      )}
+      {transition.sources.length > 0 && <p className="sources">{`${label.sources}: ${transition.sources.join('; ')}`}</p>}
+    </section>
+  );
+}

@@ -1,0 +1,27 @@
+import { useDesk } from '../desk/deskStore.ts';
+import { words } from '../words.ts';
+import { CommandButton } from './CommandButton.tsx';
+
+/** All that was done, latest first; what was taken back stands above it. */
+export function HistoryPanel() {
+  const { past, future } = useDesk((state) => state.history);
+  const all = [...past, ...[...future].reverse()];
+  const entries = all.map(({ sentence }, k) => ({ number: k + 1, sentence, isUndone: k >= past.length })).reverse();
+  return (
+    <section className="history">
+      <h2>{words.history.title}</h2>
+      <div className="buttons">
+        <CommandButton name="undo" className="small" enabled={past.length > 0} />
+        <CommandButton name="redo" className="small" enabled={future.length > 0} />
+      </div>
+      {past.length + future.length === 0 && <p className="hint">{words.history.empty}</p>}
+      <ol>
+        {entries.map(({ number, sentence, isUndone }) => (
+          <li key={number} className={isUndone ? 'undone' : undefined}>
+            <span className="number">{number}</span> {sentence} {isUndone && <span>({words.history.undone})</span>}
+          </li>
+        ))}
+      </ol>
+    </section>
+  );
+}

@@ -1,0 +1,122 @@
+import { useVirtualizer } from '@tanstack/react-virtual';
+import { useEffect, useMemo, useRef } from 'react';
+import { choose, useChosenRow } from '../desk/chosen.ts';
+import { type DeskRow, thinGasOf } from '../desk/deskRows.ts';
+import { setDesk, useDesk } from '../desk/deskStore.ts';
+import { TABLE_COLUMNS, type TableColumn } from '../table/columns.ts';
+import { sortedBy } from '../table/sortRows.ts';
+import { tableRows } from '../table/tableRows.ts';
+import { words } from '../words.ts';
+import { FilterBar } from './FilterBar.tsx';
+import { Mark, Ring } from './Mark.tsx';
+import { RowVerdict } from './RowVerdict.tsx';
+
+const ROW_PX = 28;
+const GRID = { gridTemplateColumns: [...TABLE_COLUMNS.map((column) => column.width), '64px'].join(' ') };
+
+/** Every feature as a row: sorted, filtered, only what is in sight drawn. */
+export function LineTable() {
+  const rows = useDesk((state) => state.rows);
+  const filter = useDesk((state) => state.filter);
+  const sorting = useDesk((state) => state.sorting);
+  const chosen = useChosenRow()?.index;
+  const shown = useMemo(() => tableRows(rows, filter, sorting), [rows, filter, sorting]);
+  const scroller = useRef<HTMLDivElement>(null);
+  const virtual = useVirtualizer({
+    count: shown.length,
+    getScrollElement: () => scroller.current,
+    estimateSize: () => ROW_PX,
+    overscan: 8,
+    scrollMargin: ROW_PX,
+    scrollPaddingStart: ROW_PX,
+    initialRect: { width: 800, height: 400 },
+  });
+  const place = shown.findIndex((row) => row.index === chosen);
+  useEffect(() => {
+    if (place >= 0) virtual.scrollToIndex(place, { align: 'auto' });
+  }, [place, virtual]);
+  return (
+    <section className="table" aria-label={words.table.label}>
+      <FilterBar shown={shown} all={rows.length} />
+      <div ref={scroller} className="table-scroll">
+        <table className="lines" aria-label={words.table.label} aria-rowcount={shown.length + 1}>
+          <thead>
+            <tr style={GRID} aria-rowindex={1}>
+              {TABLE_COLUMNS.map((column) => (
+                <Head key={column.key} column={column} />
+              ))}
+              <td />
+            </tr>
+          </thead>
+          <tbody style={{ height: virtual.getTotalSize() }}>
+            {virtual.getVirtualItems().map((item) => (
+              <Row
+                key={shown[item.index].index}
+                row={shown[item.index]}
+                place={item.index}
+                start={item.start - ROW_PX}
+                isChosen={item.index === place}
+              />
+            ))}
+          </tbody>
+        </table>
+        {shown.length === 0 && <p className="hint">{rows.length === 0 ? words.table.noFeatures : words.table.nothing}</p>}
+      </div>
+    </section>
+  );
+}
+
+const rowId = (row: DeskRow) => `line-${row.feature.number}`;
+
+function Head({ column }: { column: TableColumn }) {
+  const sorting = useDesk((state) => state.sorting);
+  const isSorted = sorting.column === column.key;
+  return (
+    <th scope="col" className={column.numeric ? 'cell right' : 'cell'} aria-sort={isSorted ? sorting.direction : 'none'}>
+      <button type="button" className="head" onClick={() => setDesk({ sorting: sortedBy(sorting, column.key) })}>
+        {column.head}
+        {column.unit && <span className="unit"> {column.unit}</span>}
+        <span aria-hidden="true" className="arrow">
+          {isSorted ? (sorting.direction === 'ascending' ? '↑' : '↓') : ''}
+        </span>
+      </button>
+    </th>
+  );
+}
+
+interface RowProps {
+  readonly row: DeskRow;
+  /** Among the rows shown. */
+  readonly place: number;
+  /** Pixels below the head. */
+  readonly start: number;
+  readonly isChosen: boolean;
+}
+
+function Row({ row, place, start, isChosen }: RowProps) {
+  return (
+    // the keys of the desk walk the rows: a click is the mouse's way to the same thing
+    <tr
+      id={rowId(row)}
+      className={`body-row standing-${row.standing}`}
+      style={{ ...GRID, height: ROW_PX, transform: `translateY(${start}px)` }}
+      aria-rowindex={place + 2}
+      aria-current={isChosen || undefined}
+      onClick={() => choose(row.index)}
+      onKeyDown={(event) => event.key === ' ' && choose(row.index)}
+    >
+      {TABLE_COLUMNS.map((column) => (
+        <td
+          key={column.key}
+          className={column.numeric ? 'cell right number' : 'cell'}
+          title={column.key === 'note' ? column.text(row) : undefined}
+        >
+          {column.key === 'standing' && <Mark standing={row.standing} />}
+          {column.text(row)}
+          {column.key === 'name' && thinGasOf(row.name) && <Ring title={words.case.thinGas} />}
+        </td>
+      ))}
+      <RowVerdict row={row} />
+    </tr>
+  );
+}

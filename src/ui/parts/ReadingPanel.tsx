@@ -1,0 +1,104 @@
+import { wordPlace } from '../../problems/index.ts';
+import { useDesk } from '../desk/deskStore.ts';
+import { chooseReading } from '../desk/readingChoices.ts';
+import { words } from '../words.ts';
+import { TextSetting } from './TextSetting.tsx';
+
+const UNITS = ['Angstrom', 'nm', 'um'] as const;
+const MEDIA = ['air', 'vacuum'] as const;
+const COLUMNS = ['wavelengthColumn', 'fluxColumn', 'errorColumn'] as const;
+const { reading: label } = words;
+
+/** How the file was read, what was assumed, and what can be read differently. */
+export function ReadingPanel() {
+  const analysis = useDesk((state) => state.analysis);
+  const choices = useDesk((state) => state.history.document.settings.reading);
+  if (!analysis) return null;
+  const { reading, remarks } = analysis;
+  const take = (change: typeof choices, what: string) => chooseReading({ ...choices, ...change }, label.changed(what));
+  return (
+    <section className="reading">
+      <h2>{label.title}</h2>
+      <p className="hint">{label.samples(reading.samples, reading.maskedSamples)}</p>
+      <dl className="facts-list" aria-label={label.facts}>
+        {reading.how.map(({ fact, value, reason }) => (
+          <div key={`${fact} ${value}`}>
+            <dt>{fact}</dt>
+            <dd>
+              <strong>{value}</strong>
+              <span>{reason}</span>
+            </dd>
+          </div>
+        ))}
+      </dl>
+      <h3>{label.remarks}</h3>
+      {remarks.length === 0 && <p className="hint">{label.noRemarks}</p>}
+      <ul className="remarks">
+        {remarks.map((remark) => (
+          <li key={`${remark.code} ${remark.found}`} className={`remark-${remark.weight}`}>
+            {remark.found}
+            {remark.where.excerpt && <code>{remark.where.excerpt}</code>}
+            {wordPlace(remark.where) && <span> ({wordPlace(remark.where)})</span>}
+            {remark.doThis && <span> {remark.doThis}</span>}
+          </li>
+        ))}
+      </ul>
+      {reading.offers.length > 0 && (
+        <>
+          <h3>{label.offers}</h3>
+          <ul className="offers">
+            {reading.offers.map((offer) => (
+              <li key={offer.label}>
+                <span>{offer.label}</span>
+                <button
+                  type="button"
+                  className="small"
+                  onClick={() => chooseReading({ ...choices, ...offer.choices }, label.taken(offer.label))}
+                >
+                  {label.take}
+                </button>
+              </li>
+            ))}
+          </ul>
+        </>
+      )}
+      <h3>{label.changeable}</h3>
+      <label className="field">
+        <span>{label.medium}</span>
+        <select
+          value={choices.medium ?? ''}
+          onChange={(e) => take({ medium: MEDIA.find((m) => m === e.target.value) }, e.target.value || label.asFound)}
+        >
+          <option value="">{`${label.asFound} (${words.medium[reading.medium]})`}</option>
+          {MEDIA.map((medium) => (
+            <option key={medium} value={medium}>
+              {words.medium[medium]}
+            </option>
+          ))}
+        </select>
+      </label>
+      <label className="field">
+        <span>{label.unit}</span>
+        <select
+          value={choices.wavelengthUnit ?? ''}
+          onChange={(e) => take({ wavelengthUnit: UNITS.find((u) => u === e.target.value) }, e.target.value || label.asFound)}
+        >
+          <option value="">{label.asFound}</option>
+          {UNITS.map((unit) => (
+            <option key={unit}>{unit}</option>
+          ))}
+        </select>
+      </label>
+      {COLUMNS.map((column) => (
+        <TextSetting
+          key={`${column} ${choices[column] ?? ''}`}
+          label={label[column]}
+          value={choices[column] ?? ''}
+          placeholder={reading.choices[column] ?? label.asFound}
+          commit={(text) => take({ [column]: text || undefined }, `${label[column].toLowerCase()} ${text || label.asFound}`)}
+        />
+      ))}
+      <p className="hint">{label.columnHint}</p>
+    </section>
+  );
+}

@@ -1,0 +1,51 @@
+import type { KeyboardEvent } from 'react';
+import { setDesk, type Tab, useDesk } from '../desk/deskStore.ts';
+import { words } from '../words.ts';
+import { CaseView } from './CaseView.tsx';
+import { HistoryPanel } from './HistoryPanel.tsx';
+import { KeysPanel } from './KeysPanel.tsx';
+import { ReadingPanel } from './ReadingPanel.tsx';
+import { SettingsPanel } from './SettingsPanel.tsx';
+
+const TABS: readonly Tab[] = ['case', 'settings', 'reading', 'history', 'keys'];
+const PANELS = { case: CaseView, settings: SettingsPanel, reading: ReadingPanel, history: HistoryPanel, keys: KeysPanel };
+
+/** Right of the spectrum: the case of the chosen feature, or what stands beside it. */
+export function SidePanel() {
+  const tab = useDesk((state) => state.tab);
+  const atDesk = useDesk((state) => state.stage === 'desk');
+  const tabs = atDesk ? TABS : (['keys'] as const);
+  const Panel = PANELS[atDesk ? tab : 'keys'];
+  const walk = (event: KeyboardEvent) => {
+    const by = { ArrowRight: 1, ArrowLeft: -1 }[event.key];
+    if (!by) return;
+    event.preventDefault();
+    const next = tabs[(tabs.indexOf(tab) + by + tabs.length) % tabs.length];
+    setDesk({ tab: next });
+    document.getElementById(`tab-${next}`)?.focus();
+  };
+  return (
+    <section className="side" aria-label={words.tabsLabel}>
+      <div role="tablist" aria-label={words.tabsLabel} className="tabs">
+        {tabs.map((each) => (
+          <button
+            key={each}
+            type="button"
+            role="tab"
+            id={`tab-${each}`}
+            aria-selected={each === tab}
+            aria-controls="side-panel"
+            tabIndex={each === tab ? 0 : -1}
+            onKeyDown={walk}
+            onClick={() => setDesk({ tab: each })}
+          >
+            {words.tabs[each]}
+          </button>
+        ))}
+      </div>
+      <div role="tabpanel" id="side-panel" aria-labelledby={`tab-${tab}`} className="panel" tabIndex={-1}>
+        <Panel />
+      </div>
+    </section>
+  );
+}

@@ -1,0 +1,137 @@
+import { type PointerEvent, type RefObject, useEffect, useRef } from 'react';
+import { choose, wholeRange } from '../desk/chosen.ts';
+import { desk, setDesk } from '../desk/deskStore.ts';
+import { look, shownRange, wholeSpectrum } from '../desk/looking.ts';
+import { fixed, round } from '../figures.ts';
+import { UNNAMED_LANE } from '../plot/lanes.ts';
+import type { PanelLayout } from '../plot/layoutOf.ts';
+import { LANE_COUNT } from '../plot/layoutOf.ts';
+import { laneOfRow } from '../plot/marksOf.ts';
+import { nearestFeature } from '../plot/nearestFeature.ts';
+import { sampleAt } from '../plot/sampleAt.ts';
+import { inside, panned, type Range, zoomed } from '../plot/viewRange.ts';
+
+/** A press that moves less than this is a click, pixels. */
+const CLICK_PX = 4;
+/** A click this near to a feature means it, pixels. */
+const REACH_PX = 9;
+const WHEEL_RATE = 0.0016;
+const MOST_GAIN = 1e5;
+
+interface Press {
+  readonly x: number;
+  readonly y: number;
+  readonly range: Range;
+  moved: boolean;
+}
+
+/** Wheel, drag, pinch, click and double click on the spectrum. */
+export function usePointer(area: RefObject<HTMLDivElement | null>, layout: PanelLayout | undefined) {
+  const presses = useRef(new Map<number, { x: number; y: number }>());
+  const press = useRef<Press>(undefined);
+  const pinch = useRef<{ distance: number; at: number; range: Range }>(undefined);
+  const readout = useRef<HTMLDivElement>(null);
+
+  useEffect(() => {
+    const element = area.current;
+    if (!element || !layout) return;
+    const wheel = (event: WheelEvent) => {
+      event.preventDefault();
+      const x = event.clientX - element.getBoundingClientRect().left;
+      if (x < layout.left) {
+        setDesk({ gain: Math.min(Math.max(desk().gain * Math.exp(-event.deltaY * WHEEL_RATE * 2), 1), MOST_GAIN) });
+      } else if (Math.abs(event.deltaX) > Math.abs(event.deltaY) || event.shiftKey) {
+        look(panned(shownRange(), (event.deltaX || event.deltaY) / innerWidthOf(layout), wholeRange()));
+      } else {
+        look(zoomed(shownRange(), wavelengthAt(layout, x), Math.exp(event.deltaY * WHEEL_RATE), wholeRange()));
+      }
+    };
+    element.addEventListener('wheel', wheel, { passive: false });
+    return () => element.removeEventListener('wheel', wheel);
+  }, [area, layout]);
+
+  const local = (event: PointerEvent) => {
+    const box = event.currentTarget.getBoundingClientRect();
+    return { x: event.clientX - box.left, y: event.clientY - box.top };
+  };
+
+  const handlers = {
+    onPointerDown(event: PointerEvent) {
+      if (event.button !== 0) return;
+      const at = local(event);
+      event.currentTarget.setPointerCapture(event.pointerId);
+      presses.current.set(event.pointerId, at);
+      press.current = { ...at, range: shownRange(), moved: presses.current.size > 1 };
+      const [a, b] = [...presses.current.values()];
+      if (a && b && layout)
+        pinch.current = { distance: Math.abs(a.x - b.x) || 1, at: wavelengthAt(layout, (a.x + b.x) / 2), range: shownRange() };
+    },
+    onPointerMove(event: PointerEvent) {
+      if (!layout) return;
+      const at = local(event);
+      if (presses.current.has(event.pointerId)) presses.current.set(event.pointerId, at);
+      const [a, b] = [...presses.current.values()];
+      if (a && b && pinch.current)
+        return look(zoomed(pinch.current.range, pinch.current.at, pinch.current.distance / (Math.abs(a.x - b.x) || 1), wholeRange()));
+      if (press.current) drag(press.current, at.x, layout);
+      if (readout.current) readout.current.textContent = at.x > layout.left ? readoutAt(wavelengthAt(layout, at.x)) : '';
+    },
+    onPointerUp(event: PointerEvent) {
+      presses.current.delete(event.pointerId);
+      if (presses.current.size < 2) pinch.current = undefined;
+      const { current } = press;
+      press.current = undefined;
+      if (current && !current.moved && layout) click(layout, local(event));
+    },
+    onPointerCancel(event: PointerEvent) {
+      presses.current.delete(event.pointerId);
+      press.current = undefined;
+      pinch.current = undefined;
+    },
+    onPointerLeave() {
+      if (readout.current) readout.current.textContent = '';
+    },
+    onDoubleClick: wholeSpectrum,
+  };
+  return { handlers, readout };
+}
+
+const innerWidthOf = (layout: PanelLayout) => layout.width - layout.left - layout.right;
+
+/** Observed wavelength under a pixel. */
+function wavelengthAt(layout: PanelLayout, x: number): number {
+  const [low, high] = shownRange();
+  return low + ((x - layout.left) / innerWidthOf(layout)) * (high - low);
+}
+
+function drag(press: Press, x: number, layout: PanelLayout): void {
+  const by = x - press.x;
+  if (Math.abs(by) >= CLICK_PX) press.moved = true;
+  if (!press.moved) return;
+  const shift = (-by / innerWidthOf(layout)) * (press.range[1] - press.range[0]);
+  look(inside([press.range[0] + shift, press.range[1] + shift], wholeRange()));
+}
+
+/** A click among the lanes means a mark of that lane, one on the spectrum the nearest feature. */
+function click(layout: PanelLayout, at: { x: number; y: number }): void {
+  const { rows } = desk();
+  const [low, high] = shownRange();
+  const reach = (REACH_PX / innerWidthOf(layout)) * (high - low);
+  const inLanes = at.y < layout.top + layout.lanesHeight;
+  const lane = UNNAMED_LANE + LANE_COUNT - 1 - Math.floor(((at.y - layout.top) / layout.lanesHeight) * LANE_COUNT);
+  const targets = inLanes ? rows.filter((row) => laneOfRow(row) === lane) : rows;
+  const hit = nearestFeature(
+    targets.map(({ feature }) => ({ centroid: feature.centroid, fwhm: inLanes ? 0 : feature.measured.fwhm })),
+    wavelengthAt(layout, at.x),
+    reach,
+  );
+  if (hit !== undefined) choose(targets[hit].index);
+}
+
+function readoutAt(wavelength: number): string {
+  const { samples, frame, analysis } = desk();
+  const shown = frame === 'rest' && analysis ? wavelength / (1 + analysis.z) : wavelength;
+  if (!samples) return `${fixed(shown, 2)} Å`;
+  const k = Math.min(sampleAt(samples.wavelength, wavelength), samples.wavelength.length - 1);
+  return `${fixed(shown, 2)} Å   ${round(samples.flux[k], 4)}`;
+}

@@ -1,0 +1,72 @@
+import { type DeskRow, prominence, type Standing, shortName } from '../desk/deskRows.ts';
+import { labelsThatFit } from './labelsThatFit.ts';
+import { LANES, laneOf, UNNAMED_LANE } from './lanes.ts';
+
+/** Plotly's sign of each verdict: told apart by shape and fill, not by colour. */
+export const SIGNS = {
+  open: 'square-open',
+  accepted: 'square',
+  rejected: 'x-thin-open',
+  unidentified: 'diamond-open',
+  artefact: 'triangle-down-open',
+} as const satisfies Record<Standing, string>;
+
+/** All marks in view as one list. */
+export interface Marks {
+  readonly x: number[];
+  readonly y: number[];
+  /** Those that fit, above their marks. */
+  readonly labels: { readonly x: number[]; readonly y: number[]; readonly text: string[] };
+  readonly symbol: (typeof SIGNS)[Standing][];
+  /** The thin-gas ones among them. */
+  readonly rings: { readonly x: number[]; readonly y: number[] };
+}
+
+/** Middle of a label above its mark, in lanes. */
+const LABEL_RISE = 0.5;
+/** Widest text that a label may have, in pixels a letter; measured on the interface font at 11 px. */
+const LETTER_PX = 6.1;
+
+interface MarkView {
+  readonly from: number;
+  readonly to: number;
+  readonly pixelsPerAngstrom: number;
+  readonly chosen: number | undefined;
+  readonly mostLabels: number;
+  readonly factor: number;
+}
+
+/** Lane of a row's mark. */
+export const laneOfRow = (row: DeskRow) => (row.name ? laneOf(row.name.transitions[0].excitationEv) : UNNAMED_LANE);
+
+/** Marks between `from` and `to` (observed Angstrom), with labels where they fit; `factor` takes observed to shown wavelengths. */
+export function marksOf(rows: readonly DeskRow[], view: MarkView): Marks {
+  const seen = rows.filter(({ feature }) => feature.centroid >= view.from && feature.centroid <= view.to);
+  const wishes = seen.flatMap((row, k) => {
+    const text = row.name ? shortName(row.name) : row.index === view.chosen ? row.feature.centroid.toFixed(1) : '';
+    if (text === '') return [];
+    const importance = row.index === view.chosen ? Number.POSITIVE_INFINITY : prominence(row);
+    return [{ k, x: row.feature.centroid * view.pixelsPerAngstrom, lane: laneOfRow(row), text, importance }];
+  });
+  const fitting = labelsThatFit(wishes, (text) => text.length * LETTER_PX, view.mostLabels);
+  const labelled = [...fitting].map((w) => wishes[w]);
+  const ringed = seen.filter((row) => row.name?.transitions.some((t) => t.thinGas));
+  const x = (row: DeskRow) => row.feature.centroid * view.factor;
+  return {
+    x: seen.map(x),
+    y: seen.map(laneOfRow),
+    labels: {
+      x: labelled.map(({ k }) => x(seen[k])),
+      y: labelled.map(({ lane }) => lane + LABEL_RISE),
+      text: labelled.map(({ text }) => text),
+    },
+    symbol: seen.map((row) => SIGNS[row.standing]),
+    rings: { x: ringed.map(x), y: ringed.map(laneOfRow) },
+  };
+}
+
+/** Labels and places of the lanes on their axis. */
+export const laneTicks = (unnamed: string) => ({
+  values: [UNNAMED_LANE, ...LANES.map((_, k) => k)],
+  texts: [unnamed, ...LANES.map((lane) => lane.label)],
+});

@@ -1,0 +1,269 @@
+import type { Data, Layout } from 'plotly.js/lib/core';
+import type { DeskRow } from '../desk/deskRows.ts';
+import type { Frame } from '../desk/deskStore.ts';
+import { words } from '../words.ts';
+import { decimate, type Points } from './decimate.ts';
+import { commonExponent, type FluxScale, fluxTicks, tickText } from './fluxScale.ts';
+import type { Ink } from './inkOf.ts';
+import { UNNAMED_LANE } from './lanes.ts';
+import { domainOf, LANE_COUNT, type PanelLayout } from './layoutOf.ts';
+import { laneTicks, marksOf } from './marksOf.ts';
+import type { PlotSamples } from './plotSamples.ts';
+import { extent } from './svgPath.ts';
+import type { Range } from './viewRange.ts';
+
+/** All that the picture shows. */
+export interface SpectrumScene {
+  readonly samples?: PlotSamples;
+  readonly rows: readonly DeskRow[];
+  readonly chosen?: number;
+  readonly medium: 'air' | 'vacuum';
+  readonly fluxUnit: string;
+  readonly frame: Frame;
+  readonly z: number;
+  readonly scale: FluxScale;
+  readonly gain: number;
+  readonly ink: Ink;
+  readonly layout: PanelLayout;
+}
+
+/** Decimated curves of a window that is wider than the view, so that moving inside it needs no new ones. */
+export interface DrawnWindow {
+  readonly window: Range;
+  /** Width of the view it was made for. */
+  readonly viewWidth: number;
+  readonly data: Data[];
+  /** Flux of data and fit in the window, for the height of the axis; observed Angstrom. */
+  readonly heights: Points;
+}
+
+/** Height of a mark above the foot of its lane, in lanes. */
+const LANE_FOOT = 0.3;
+/** Labels drawn across one width of the view. */
+const LABELS_IN_VIEW = 40;
+/** Fewer points than this a pixel of the window are drawn as steps: one level a sample. */
+const STEPS_BELOW = 1;
+/** Residuals beyond this are cut, sigma. */
+const RESIDUAL_REACH = 6;
+
+/** Observed -> shown wavelength. */
+export const frameFactor = (scene: Pick<SpectrumScene, 'frame' | 'z'>) => (scene.frame === 'rest' ? 1 / (1 + scene.z) : 1);
+
+/** Curves and marks of a window three views wide. */
+export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
+  const viewWidth = view[1] - view[0];
+  const window: Range = [view[0] - viewWidth, view[1] + viewWidth];
+  const inner = scene.layout.width - scene.layout.left - scene.layout.right;
+  const step = viewWidth / Math.max(inner, 100);
+  const { ink, samples } = scene;
+  const cut = (values: Float64Array) => (samples ? decimate(samples.wavelength, values, window[0], window[1], step) : { x: [], y: [] });
+  const flux = samples ? cut(samples.flux) : sticks(scene.rows, window);
+  const model = samples ? cut(samples.model) : { x: [], y: [] };
+  const continuum = samples ? cut(samples.continuum) : { x: [], y: [] };
+  const residual = samples ? cut(samples.residual) : { x: [], y: [] };
+  const isSparse = samples !== undefined && flux.x.length < STEPS_BELOW * inner;
+  const marks = marksOf(scene.rows, {
+    from: window[0],
+    to: window[1],
+    pixelsPerAngstrom: 1 / step,
+    chosen: scene.chosen,
+    mostLabels: LABELS_IN_VIEW * 3,
+    factor: frameFactor(scene),
+  });
+  const line = (points: Points, yaxis: 'y2' | 'y3', color: string, width: number, stroke: 'solid' | 'dot' | 'steps' = 'solid'): Data => ({
+    type: 'scatter',
+    mode: 'lines',
+    x: points.x.map((x) => x * frameFactor(scene)),
+    y: yaxis === 'y2' ? points.y.map(scene.scale.forward) : points.y,
+    xaxis: 'x',
+    yaxis,
+    line: { color, width, dash: stroke === 'dot' ? 'dot' : 'solid', shape: stroke === 'steps' ? 'hvh' : 'linear' },
+    hoverinfo: 'skip',
+  });
+  return {
+    window,
+    viewWidth,
+    heights: { x: [...flux.x, ...model.x], y: [...flux.y, ...model.y] },
+    data: [
+      line(residual, 'y3', ink.muted, 1),
+      line(continuum, 'y2', ink.muted, 1, 'dot'),
+      line(model, 'y2', ink.fit, 2.5),
+      line(flux, 'y2', ink.ink, samples ? 1 : 1.5, isSparse ? 'steps' : 'solid'),
+      {
+        type: 'scatter',
+        mode: 'markers',
+        ...marks.rings,
+        yaxis: 'y',
+        marker: { symbol: 'circle-open', size: 12, color: ink.ink, line: { width: 1 } },
+        hoverinfo: 'skip',
+      },
+      {
+        type: 'scatter',
+        mode: 'markers',
+        x: marks.x,
+        y: marks.y,
+        yaxis: 'y',
+        marker: { symbol: marks.symbol, size: 6, color: ink.ink, line: { width: 1.25, color: ink.ink } },
+        hoverinfo: 'skip',
+      },
+      {
+        type: 'scatter',
+        mode: 'text',
+        ...marks.labels,
+        yaxis: 'y',
+        textposition: 'middle center',
+        textfont: { size: 11, color: ink.ink, family: ink.font },
+        hoverinfo: 'skip',
+      },
+    ],
+  };
+}
+
+/** A list of lines as sticks from zero. */
+function sticks(rows: readonly DeskRow[], window: Range): Points {
+  const points: Points = { x: [], y: [] };
+  for (const { feature } of rows) {
+    if (feature.centroid < window[0] || feature.centroid > window[1]) continue;
+    points.x.push(feature.centroid, feature.centroid, feature.centroid);
+    points.y.push(0, feature.measured.flux, Number.NaN);
+  }
+  return points;
+}
+
+/** Axes as the view needs them. */
+export interface Axes {
+  readonly x: Range;
+  readonly y: Range;
+  readonly ticks: { readonly at: number[]; readonly text: string[] };
+  readonly fluxTitle: string;
+}
+
+/** What depends on the view alone: cheap, done at every move. */
+export function axesOf(scene: SpectrumScene, drawn: DrawnWindow, view: Range): Axes {
+  const factor = frameFactor(scene);
+  const [low, high] = fluxRange(scene, drawn, view);
+  const { scale } = scene;
+  const ticks = fluxTicks(scale, low, high, Math.max(2, Math.floor(scene.layout.spectrumHeight / 44)));
+  const exponent = commonExponent(high);
+  const unit = scene.fluxUnit ? ` (${scene.fluxUnit})` : '';
+  const tens = exponent ? ` × 10<sup>${exponent}</sup>` : '';
+  return {
+    x: [view[0] * factor, view[1] * factor],
+    y: [scale.forward(low), scale.forward(high)],
+    ticks: { at: ticks.map(scale.forward), text: ticks.map((tick) => tickText(tick, exponent)) },
+    fluxTitle: shorten(`${words.spectrum.flux}${tens}${unit}`, scene.layout.spectrumHeight),
+  };
+}
+
+/** The axes as a change of an existing picture. */
+export const axesChange = (axes: Axes): object => ({
+  'xaxis.range': axes.x,
+  'yaxis2.range': axes.y,
+  'yaxis2.tickvals': axes.ticks.at,
+  'yaxis2.ticktext': axes.ticks.text,
+  'yaxis2.title.text': axes.fluxTitle,
+});
+
+/** Drops the unit when the title would be longer than its axis. */
+function shorten(title: string, height: number): string {
+  const letters = title.replace(/<[^>]+>/g, '').length;
+  return letters * 6 > height ? title.replace(/ \(.*\)$/, '') : title;
+}
+
+/** Fluxes at the ends of the axis: all that is in view fits, or is cut at the top when the user asked for a taller axis. */
+function fluxRange(scene: SpectrumScene, { heights }: DrawnWindow, view: Range): [number, number] {
+  const seen = heights.y.filter((_, k) => heights.x[k] >= view[0] && heights.x[k] <= view[1]);
+  const [low, high] = extent(seen) ?? [0, 1];
+  const { scale, gain } = scene;
+  const bottom = scale.forward(scale.kind === 'linear' ? Math.min(low, 0) : low);
+  const top = scale.forward(high);
+  const span = Math.max(top - bottom, 1e-300) / gain;
+  return [scale.back(bottom - span * 0.04), scale.back(bottom + span * 1.06)];
+}
+
+/** The whole layout. */
+export function layoutFor(scene: SpectrumScene, axes: Axes): Partial<Layout> {
+  const { ink, layout } = scene;
+  const lanes = laneTicks(words.spectrum.unnamed);
+  const plain = {
+    fixedrange: true,
+    zeroline: false,
+    showline: true,
+    linecolor: ink.hairline,
+    tickcolor: ink.hairline,
+    gridcolor: ink.hairline,
+    tickfont: { size: 11, color: ink.muted, family: ink.font },
+    title: { font: { size: 11, color: ink.muted, family: ink.font }, standoff: 4 },
+  } as const;
+  const frame = words.spectrum.frames[scene.frame];
+  return {
+    width: layout.width,
+    height: layout.height,
+    autosize: false,
+    margin: { l: layout.left, r: layout.right, t: layout.top, b: layout.bottom, pad: 0 },
+    paper_bgcolor: 'rgba(0,0,0,0)',
+    plot_bgcolor: 'rgba(0,0,0,0)',
+    showlegend: false,
+    hovermode: false,
+    dragmode: false,
+    font: { family: ink.font, size: 11, color: ink.muted },
+    shapes: lanes.values
+      .filter((_, k) => k % 2 === 1)
+      .map((lane) => ({
+        type: 'rect',
+        layer: 'below',
+        xref: 'paper',
+        x0: 0,
+        x1: 1,
+        yref: 'y',
+        y0: lane - LANE_FOOT,
+        y1: lane + 1 - LANE_FOOT,
+        fillcolor: ink.band,
+        line: { width: 0 },
+      })),
+    xaxis: {
+      ...plain,
+      anchor: scene.samples ? 'y3' : 'y2',
+      range: [...axes.x],
+      showgrid: false,
+      ticks: 'outside',
+      ticklen: 4,
+      exponentformat: 'none',
+      separatethousands: false,
+      tickformat: '~f',
+      title: { ...plain.title, text: words.spectrum.wavelength(words.medium[scene.medium], frame) },
+    },
+    yaxis: {
+      ...plain,
+      domain: domainOf(layout, layout.top, layout.lanesHeight),
+      range: [UNNAMED_LANE - LANE_FOOT, UNNAMED_LANE + LANE_COUNT - LANE_FOOT],
+      tickvals: lanes.values,
+      ticktext: lanes.texts,
+      ticks: '',
+      showgrid: false,
+      title: { ...plain.title, text: 'eV' },
+    },
+    yaxis2: {
+      ...plain,
+      domain: domainOf(layout, layout.spectrumTop, layout.spectrumHeight),
+      showgrid: true,
+      ticks: 'outside',
+      ticklen: 4,
+      tickmode: 'array',
+      range: [...axes.y],
+      tickvals: axes.ticks.at,
+      ticktext: axes.ticks.text,
+      title: { ...plain.title, text: axes.fluxTitle },
+    },
+    yaxis3: {
+      ...plain,
+      domain: scene.samples ? domainOf(layout, layout.residualTop, layout.residualHeight) : [0, 0.001],
+      range: [-RESIDUAL_REACH, RESIDUAL_REACH],
+      tickvals: scene.samples ? [-3, 0, 3] : [],
+      ticks: 'outside',
+      ticklen: 4,
+      visible: scene.samples !== undefined,
+      title: { ...plain.title, text: words.spectrum.residual },
+    },
+  };
+}

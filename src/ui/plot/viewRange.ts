@@ -1,0 +1,43 @@
+/** A stretch of the spectrum, Angstrom as observed. */
+export type Range = readonly [low: number, high: number];
+
+/** Nothing closer than this can be looked at, Angstrom. */
+const NARROWEST = 1;
+
+/** `range` moved and, if need be, narrowed so that it lies inside `full`. */
+export function inside(range: Range, full: Range): Range {
+  const width = Math.min(Math.max(range[1] - range[0], NARROWEST), full[1] - full[0]);
+  const centre = (range[0] + range[1]) / 2;
+  const low = Math.min(Math.max(centre - width / 2, full[0]), full[1] - width);
+  return [low, low + width];
+}
+
+/** The range made `factor` times as wide about `at`, which keeps its place on the screen. */
+export function zoomed(range: Range, at: number, factor: number, full: Range): Range {
+  const width = Math.max((range[1] - range[0]) * factor, NARROWEST);
+  const share = (at - range[0]) / (range[1] - range[0]);
+  const low = at - share * width;
+  return inside([low, low + width], full);
+}
+
+/** The range moved by a share of its width. */
+export function panned(range: Range, share: number, full: Range): Range {
+  const by = (range[1] - range[0]) * share;
+  return inside([range[0] + by, range[1] + by], full);
+}
+
+/** The same range if `at` is comfortably inside it, else one of the same width about `at`. */
+export function showing(range: Range, at: number, full: Range): Range {
+  const margin = (range[1] - range[0]) * 0.06;
+  if (at > range[0] + margin && at < range[1] - margin) return range;
+  const half = (range[1] - range[0]) / 2;
+  return inside([at - half, at + half], full);
+}
+
+/** Ends of the spectrum (or of the list of features) with a little air. */
+export function fullRange(wavelengths: ArrayLike<number>): Range {
+  const low = wavelengths[0] ?? 3000;
+  const high = wavelengths[wavelengths.length - 1] ?? 10000;
+  const air = Math.max((high - low) * 0.005, NARROWEST);
+  return [low - air, high + air];
+}

@@ -1,0 +1,30 @@
+import { useEffect } from 'react';
+import { COMMANDS } from './commands.ts';
+import { desk } from './desk/deskStore.ts';
+import { isControl, strokeName, takesText } from './keyStrokes.ts';
+
+const OWN_KEYS = /^(Enter|Arrow)/;
+
+/** Runs the command of a key stroke, unless the stroke belongs to what has the focus. */
+export function useKeys(): void {
+  useEffect(() => {
+    const hear = (event: KeyboardEvent) => {
+      if (event.defaultPrevented) return;
+      const stroke = strokeName(event);
+      const single = !stroke.startsWith('Mod+');
+      if (takesText(event.target)) {
+        if (event.key === 'Escape' && event.target instanceof HTMLElement) event.target.blur();
+        return;
+      }
+      if (single && !desk().singleKeys && event.key.length === 1) return;
+      if (OWN_KEYS.test(event.key) && isControl(event.target) && !(event.target instanceof HTMLElement && event.target.dataset.walks))
+        return;
+      const command = COMMANDS.find(({ keys }) => keys.includes(stroke));
+      if (!command?.canRun()) return;
+      event.preventDefault();
+      command.run();
+    };
+    window.addEventListener('keydown', hear);
+    return () => window.removeEventListener('keydown', hear);
+  }, []);
+}
