@@ -11,7 +11,11 @@ if (!process.env.CI && process.stdout.isTTY) openInBrowser(address);
 
 function openInBrowser(url: string): void {
   const [command, args]: [string, string[]] =
-    process.platform === 'darwin' ? ['open', [url]] : process.platform === 'win32' ? ['cmd', ['/c', 'start', '', url]] : ['xdg-open', [url]];
+    process.platform === 'darwin'
+      ? ['open', [url]]
+      : process.platform === 'win32'
+        ? ['cmd', ['/c', 'start', '', url]]
+        : ['xdg-open', [url]];
   const child = spawn(command, args, { stdio: 'ignore', detached: true });
   // no default browser on this machine: the address has been printed
   child.on('error', () => {});
