@@ -70,7 +70,10 @@ function markLines(flux: Float64Array, noise: Float64Array, continuum: Float64Ar
   for (let i = 0; i < n; i++) {
     // a running mean of three samples finds faint wings that single samples hide
     const residual = (flux[i] - continuum[i]) / noise[i];
-    const mean = i > 0 && i < n - 1 ? (residual + (flux[i - 1] - continuum[i - 1]) / noise[i - 1] + (flux[i + 1] - continuum[i + 1]) / noise[i + 1]) / Math.sqrt(3) : residual;
+    const mean =
+      i > 0 && i < n - 1
+        ? (residual + (flux[i - 1] - continuum[i - 1]) / noise[i - 1] + (flux[i + 1] - continuum[i + 1]) / noise[i + 1]) / Math.sqrt(3)
+        : residual;
     if (Math.abs(residual) > clip || Math.abs(mean) > clip) {
       const reach = Math.ceil(GROW_FWHM * fwhm[i]);
       for (let j = Math.max(until + 1, i - reach, 0); j <= Math.min(n - 1, i + reach); j++) line[j] = 1;

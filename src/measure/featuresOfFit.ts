@@ -48,7 +48,9 @@ export function featuresOfFit(samples: FitSamples, fit: GroupFit, facts: FitFact
         fwhmErr,
         ...intrinsicWidth(centre, fwhm, fwhmErr, facts.spread),
         ew,
-        ewErr: Number.isFinite(ew) ? Math.hypot(fluxErr / continuum, (ew * samples.noise[at]) / continuum / Math.sqrt(Math.max(1, fit.last - fit.first))) : Number.NaN,
+        ewErr: Number.isFinite(ew)
+          ? Math.hypot(fluxErr / continuum, (ew * samples.noise[at]) / continuum / Math.sqrt(Math.max(1, fit.last - fit.first)))
+          : Number.NaN,
         snr,
         continuum,
         group: facts.group,
@@ -100,7 +102,8 @@ function notesOf(samples: FitSamples, fit: GroupFit, k: number, facts: FitFacts)
   const notes: string[] = [];
   const { centre, sigma } = fit.components[k];
   const fwhm = FWHM_PER_SIGMA * sigma;
-  if (fit.components.some((other, j) => j !== k && other.flux !== 0 && Math.abs(other.centre - centre) < BLENDED_FWHM * fwhm)) notes.push('blended');
+  if (fit.components.some((other, j) => j !== k && other.flux !== 0 && Math.abs(other.centre - centre) < BLENDED_FWHM * fwhm))
+    notes.push('blended');
   const from = firstAtLeast(samples.x, centre - fwhm);
   let missing = from === 0 || samples.x[samples.x.length - 1] < centre + fwhm;
   for (let i = from; i < samples.x.length && samples.x[i] <= centre + fwhm; i++) missing ||= facts.masked[i] === 1;

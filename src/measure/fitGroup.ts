@@ -57,7 +57,14 @@ const OFFSET_SIGMA = 2;
  *
  * @param first,last samples of the window, both included
  */
-export function fitGroup(samples: FitSamples, first: number, last: number, starts: readonly Component[], width: WidthPrior, maxSteps = 60): GroupFit {
+export function fitGroup(
+  samples: FitSamples,
+  first: number,
+  last: number,
+  starts: readonly Component[],
+  width: WidthPrior,
+  maxSteps = 60,
+): GroupFit {
   const p = new Float64Array(3 * starts.length + 2);
   starts.forEach((start, k) => {
     p[3 * k] = start.flux;
@@ -174,7 +181,12 @@ function groupEquations(samples: FitSamples, first: number, last: number, starts
 }
 
 /** Adds the fit's profiles (not its continuum) to `into`, one value a sample of the whole spectrum. */
-export function addProfiles(samples: FitSamples, components: readonly Component[], into: Float64Array, continuumOffset?: { fit: GroupFit; into: Float64Array }): void {
+export function addProfiles(
+  samples: FitSamples,
+  components: readonly Component[],
+  into: Float64Array,
+  continuumOffset?: { fit: GroupFit; into: Float64Array },
+): void {
   const { x, sampleWidth } = samples;
   const profile: ProfileValue = { value: 0, byCentre: 0, bySigma: 0 };
   for (const { flux, centre, sigma } of components) {

@@ -36,8 +36,16 @@ export function groupPeaks(peaks: readonly Peak[], fwhm: (sample: number) => num
     const before = cut[k - 1]?.at(-1)?.at ?? Number.NEGATIVE_INFINITY;
     const after = cut[k + 1]?.[0].at ?? Number.POSITIVE_INFINITY;
     const width = fwhm(left);
-    const first = Math.max(0, Math.ceil(left - REACH_FWHM * width), Math.min(Math.ceil(before + AWAY_FWHM * width), Math.ceil((before + left) / 2)));
-    const last = Math.min(n - 1, Math.floor(right + REACH_FWHM * width), Math.max(Math.floor(after - AWAY_FWHM * width), Math.floor((right + after) / 2)));
+    const first = Math.max(
+      0,
+      Math.ceil(left - REACH_FWHM * width),
+      Math.min(Math.ceil(before + AWAY_FWHM * width), Math.ceil((before + left) / 2)),
+    );
+    const last = Math.min(
+      n - 1,
+      Math.floor(right + REACH_FWHM * width),
+      Math.max(Math.floor(after - AWAY_FWHM * width), Math.floor((right + after) / 2)),
+    );
     return { peaks: chain, first, last };
   });
 }

@@ -1,4 +1,4 @@
-import { addProfiles, type Component, fitGroup, type FitSamples, type GroupFit, type WidthPrior } from './fitGroup.ts';
+import { addProfiles, type Component, type FitSamples, fitGroup, type GroupFit, type WidthPrior } from './fitGroup.ts';
 import { matchedFilter } from './matchedFilter.ts';
 
 /** Components that one group may gain beyond its peaks. */
@@ -17,7 +17,15 @@ const MARGIN_SIGMA = 3;
  *
  * @param spikes sample numbers found to be spikes are added here and marked unusable
  */
-export function growGroup(samples: FitSamples, first: number, last: number, starts: readonly Component[], width: WidthPrior, threshold: number, spikes: number[]): GroupFit {
+export function growGroup(
+  samples: FitSamples,
+  first: number,
+  last: number,
+  starts: readonly Component[],
+  width: WidthPrior,
+  threshold: number,
+  spikes: number[],
+): GroupFit {
   let fit = fitGroup(samples, first, last, mergeClose(starts, width), width);
   const used = last - first + 1;
   const price = Math.max(threshold * threshold, 3 * Math.log(used)) + 4;
@@ -45,7 +53,9 @@ const totalChi2 = (fit: GroupFit) => fit.end.chi2;
 function holds(fit: GroupFit, width: WidthPrior): boolean {
   const last = fit.components[fit.components.length - 1];
   if (last.flux === 0) return false;
-  return fit.components.slice(0, -1).every((c) => Math.abs(c.centre - last.centre) > NEAREST_FWHM * FWHM_PER_SIGMA * width.sigmaAt(last.centre));
+  return fit.components
+    .slice(0, -1)
+    .every((c) => Math.abs(c.centre - last.centre) > NEAREST_FWHM * FWHM_PER_SIGMA * width.sigmaAt(last.centre));
 }
 
 function mergeClose(starts: readonly Component[], width: WidthPrior): Component[] {
@@ -88,7 +98,13 @@ function loneSpike(samples: FitSamples, fit: GroupFit, residual: Float64Array): 
   return worst === undefined ? undefined : fit.first + worst;
 }
 
-function bestAddition(samples: FitSamples, fit: GroupFit, residual: Float64Array, width: WidthPrior, threshold: number): Component | undefined {
+function bestAddition(
+  samples: FitSamples,
+  fit: GroupFit,
+  residual: Float64Array,
+  width: WidthPrior,
+  threshold: number,
+): Component | undefined {
   const window = windowOf(samples, fit);
   const sigma = window.x.map((w, i) => width.sigmaAt(w) / window.sampleWidth[i]);
   const snr = matchedFilter(residual, window.noise, window.usable, sigma);

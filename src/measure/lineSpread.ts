@@ -28,7 +28,12 @@ const NARROW_QUANTILE = 0.35;
  * @param x Angstrom
  * @param residual flux above a rough continuum
  */
-export function widthOfTallPeaks(x: Float64Array, residual: Float64Array, noise: Float64Array, usable: Uint8Array): { resolvingPower: number; from: 'lines' | 'sampling' } {
+export function widthOfTallPeaks(
+  x: Float64Array,
+  residual: Float64Array,
+  noise: Float64Array,
+  usable: Uint8Array,
+): { resolvingPower: number; from: 'lines' | 'sampling' } {
   const tall: { at: number; height: number }[] = [];
   for (let i = 3; i < x.length - 3; i++) {
     if (!usable[i] || !(residual[i] > TALL_SIGMA * noise[i])) continue;
@@ -38,7 +43,10 @@ export function widthOfTallPeaks(x: Float64Array, residual: Float64Array, noise:
     tall.push({ at: i, height: residual[i] / noise[i] });
   }
   tall.sort((a, b) => b.height - a.height);
-  const powers = tall.slice(0, MOST_PEAKS).map(({ at }) => x[at] / halfHeightWidth(x, residual, at)).filter((r) => r > 0 && Number.isFinite(r));
+  const powers = tall
+    .slice(0, MOST_PEAKS)
+    .map(({ at }) => x[at] / halfHeightWidth(x, residual, at))
+    .filter((r) => r > 0 && Number.isFinite(r));
   if (powers.length >= FEW_PEAKS) return { resolvingPower: quantile(powers, 1 - NARROW_QUANTILE), from: 'lines' };
   const middle = x.length >> 1;
   return { resolvingPower: x[middle] / (SAMPLES_PER_FWHM * (x[middle + 1] - x[middle])), from: 'sampling' };
@@ -63,11 +71,16 @@ const MOST_SPREAD = 0.4;
  *
  * @param fits resolving power (lambda / FWHM) of each and its relative error
  */
-export function spreadOfLines(fits: readonly { readonly power: number; readonly relativeErr: number }[]): { resolvingPower: number; spread: number } | undefined {
+export function spreadOfLines(
+  fits: readonly { readonly power: number; readonly relativeErr: number }[],
+): { resolvingPower: number; spread: number } | undefined {
   if (fits.length < FEW_PEAKS) return undefined;
   const logs = fits.map(({ power }) => Math.log(power));
   const centre = quantile(logs, 0.5);
-  const measuredErr = quantile(fits.map((f) => f.relativeErr), 0.5);
+  const measuredErr = quantile(
+    fits.map((f) => f.relativeErr),
+    0.5,
+  );
   const scatter = Math.sqrt(Math.max(0, robustSigma(logs) ** 2 - measuredErr ** 2));
   return { resolvingPower: Math.exp(centre), spread: Math.min(MOST_SPREAD, Math.max(LEAST_SPREAD, 1.2 * scatter)) };
 }

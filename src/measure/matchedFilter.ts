@@ -7,7 +7,14 @@
  * @param sigma    n, of the profile, in samples
  * @returns n; positive for emission; 0 where less than half of the profile's weight is usable
  */
-export function matchedFilter(residual: Float64Array, noise: Float64Array, usable: Uint8Array, sigma: Float64Array, from = 0, to = residual.length): Float64Array {
+export function matchedFilter(
+  residual: Float64Array,
+  noise: Float64Array,
+  usable: Uint8Array,
+  sigma: Float64Array,
+  from = 0,
+  to = residual.length,
+): Float64Array {
   const snr = new Float64Array(to - from);
   const kernel: number[] = [];
   let kernelSigma = 0;

@@ -4,7 +4,7 @@ import { countUsable, type Spectrum } from '../spectrum/index.ts';
 import { fitContinuum } from './continuum.ts';
 import type { Feature, Group, Measurement, MeasureSettings } from './feature.ts';
 import { artefactFeature, featuresOfFit } from './featuresOfFit.ts';
-import { addProfiles, type Component, fitGroup, type FitSamples, type WidthPrior } from './fitGroup.ts';
+import { addProfiles, type Component, type FitSamples, fitGroup, type WidthPrior } from './fitGroup.ts';
 import { groupPeaks } from './groups.ts';
 import { growGroup } from './growGroup.ts';
 import { type LineSpread, sigmaAt, spreadOfLines, widthOfTallPeaks } from './lineSpread.ts';
@@ -54,9 +54,18 @@ export function measure(spectrum: Spectrum, settings: MeasureSettings, control: 
   control.progress?.('detecting', 0);
   const width: WidthPrior = { sigmaAt: (w) => sigmaAt(spread.resolvingPower, w), spread: spread.spread };
   const spikes = [...state.spikes];
-  const snr = matchedFilter(state.samples.y, state.samples.noise, state.samples.usable, sigmaInSamples(state.samples, spread.resolvingPower));
+  const snr = matchedFilter(
+    state.samples.y,
+    state.samples.noise,
+    state.samples.usable,
+    sigmaInSamples(state.samples, spread.resolvingPower),
+  );
   const peaks = findPeaks(snr, settings.thresholdSigma, settings.absorption);
-  const windows = groupPeaks(peaks, (i) => (FWHM_PER_SIGMA * sigmaAt(spread.resolvingPower, state.samples.x[i])) / state.samples.sampleWidth[i], state.samples.x.length);
+  const windows = groupPeaks(
+    peaks,
+    (i) => (FWHM_PER_SIGMA * sigmaAt(spread.resolvingPower, state.samples.x[i])) / state.samples.sampleWidth[i],
+    state.samples.x.length,
+  );
 
   const features: Feature[] = [];
   const groups: Group[] = [];
@@ -69,7 +78,15 @@ export function measure(spectrum: Spectrum, settings: MeasureSettings, control: 
     if (isPlateau(state.samples, fit, width)) return;
     groups.push({ first: fit.first, last: fit.last, chi2: fit.chi2, dof: fit.dof });
     addProfiles(state.samples, fit.components, model, { fit, into: model });
-    features.push(...featuresOfFit(state.samples, fit, { continuum: state.continuum, group: groups.length - 1, spread, threshold: settings.thresholdSigma, masked: spectrum.masked }));
+    features.push(
+      ...featuresOfFit(state.samples, fit, {
+        continuum: state.continuum,
+        group: groups.length - 1,
+        spread,
+        threshold: settings.thresholdSigma,
+        masked: spectrum.masked,
+      }),
+    );
   });
   for (const spike of new Set(spikes)) features.push(artefactFeature(state.samples, spike, state.continuum, groups));
   features.sort((a, b) => a.centroid - b.centroid);
@@ -102,14 +119,27 @@ function prepare(spectrum: Spectrum, settings: MeasureSettings, remarks: Remark[
   const { flux } = spectrum;
   const regular = regularAxis(spectrum.wavelength);
   const x = regular ?? spectrum.wavelength;
-  if (regular) remarks.push({ code: 'axis-unrounded', weight: 'note', where: { file: spectrum.name }, found: 'the wavelengths are a regular axis printed with few digits; fits use the regular one' });
+  if (regular)
+    remarks.push({
+      code: 'axis-unrounded',
+      weight: 'note',
+      where: { file: spectrum.name },
+      found: 'the wavelengths are a regular axis printed with few digits; fits use the regular one',
+    });
   const n = x.length;
   const noise = spectrum.fluxErr ? Float64Array.from(spectrum.fluxErr) : scatterNoise(spectrum);
-  const usable = Uint8Array.from(spectrum.masked, (m, i) => (m === 0 && Number.isFinite(flux[i]) && noise[i] > 0 && Number.isFinite(noise[i]) ? 1 : 0));
+  const usable = Uint8Array.from(spectrum.masked, (m, i) =>
+    m === 0 && Number.isFinite(flux[i]) && noise[i] > 0 && Number.isFinite(noise[i]) ? 1 : 0,
+  );
   const sampleWidth = Float64Array.from(x, (_, i) => (x[Math.min(n - 1, i + 1)] - x[Math.max(0, i - 1)]) / (i > 0 && i < n - 1 ? 2 : 1));
   const told = settings.resolvingPower ?? spectrum.resolvingPower;
   const rough = roughContinuum(flux, usable);
-  const first = widthOfTallPeaks(x, flux.map((f, i) => f - rough[i]), noise, usable);
+  const first = widthOfTallPeaks(
+    x,
+    flux.map((f, i) => f - rough[i]),
+    noise,
+    usable,
+  );
   const resolvingPower = told ?? first.resolvingPower;
   const fwhm = Float64Array.from(x, (w, i) => Math.max(1.5, w / resolvingPower / sampleWidth[i]));
   let continuum = fitContinuum(flux, noise, usable, fwhm);
@@ -125,13 +155,25 @@ function prepare(spectrum: Spectrum, settings: MeasureSettings, remarks: Remark[
     });
   }
   if (!spectrum.fluxErr) {
-    remarks.push({ code: 'no-errors', weight: 'note', where: { file: spectrum.name }, found: 'the file has no errors; the noise is estimated from the scatter of neighbouring samples (Stoehr et al. 2008)' });
+    remarks.push({
+      code: 'no-errors',
+      weight: 'note',
+      where: { file: spectrum.name },
+      found: 'the file has no errors; the noise is estimated from the scatter of neighbouring samples (Stoehr et al. 2008)',
+    });
   }
   const y = Float64Array.from(flux, (f, i) => f - continuum[i]);
   const samples: FitSamples = { x, y, noise, usable, sampleWidth };
   const spikes = findSpikes(y, noise, usable, sigmaInSamples(samples, resolvingPower));
   for (const spike of spikes) usable[spike] = 0;
-  return { samples, continuum, noiseFactor, resolvingPower, resolvingPowerFrom: told === undefined ? first.from : settings.resolvingPower ? 'user' : 'file', spikes };
+  return {
+    samples,
+    continuum,
+    noiseFactor,
+    resolvingPower,
+    resolvingPowerFrom: told === undefined ? first.from : settings.resolvingPower ? 'user' : 'file',
+    spikes,
+  };
 }
 
 /** Running median of every hundredth of the spectrum, held between: enough to see tall peaks. */
@@ -159,7 +201,8 @@ function scatterOverNoise(flux: Float64Array, continuum: Float64Array, noise: Fl
   return residuals.length < FEWEST_SAMPLES ? 1 : robustSigma(residuals);
 }
 
-const sigmaInSamples = (samples: FitSamples, resolvingPower: number) => samples.x.map((w, i) => sigmaAt(resolvingPower, w) / samples.sampleWidth[i]);
+const sigmaInSamples = (samples: FitSamples, resolvingPower: number) =>
+  samples.x.map((w, i) => sigmaAt(resolvingPower, w) / samples.sampleWidth[i]);
 
 /** The width of lines and how much it varies, from fits of strong isolated ones. */
 function learnLineSpread(state: Prepared, settings: MeasureSettings, spectrum: Spectrum): LineSpread {
@@ -207,7 +250,7 @@ function startOf(samples: FitSamples, peak: Peak, width: WidthPrior): Component 
 /** Features from noise alone: independent places (two sigma of the profile apart) times the tail beyond the threshold. */
 function expectedFalse(samples: FitSamples, resolvingPower: number, settings: MeasureSettings): number {
   let places = 0;
-  for (let i = 0; i < samples.x.length; i++) if (samples.usable[i]) places += samples.sampleWidth[i] / (2 * sigmaAt(resolvingPower, samples.x[i]));
+  for (let i = 0; i < samples.x.length; i++)
+    if (samples.usable[i]) places += samples.sampleWidth[i] / (2 * sigmaAt(resolvingPower, samples.x[i]));
   return places * normalTail(settings.thresholdSigma) * (settings.absorption ? 2 : 1);
 }
-

@@ -13,7 +13,14 @@ const AGREES = 0.55;
 export function regularAxis(x: Float64Array): Float64Array | undefined {
   const place = lastPlace(x);
   if (place === undefined || x.length < 20) return undefined;
-  return agreeing(x, place, (v) => v, (v) => v) ?? agreeing(x, place, Math.log, Math.exp);
+  return (
+    agreeing(
+      x,
+      place,
+      (v) => v,
+      (v) => v,
+    ) ?? agreeing(x, place, Math.log, Math.exp)
+  );
 }
 
 /** Size of the last printed decimal place that any sample uses; undefined when more than six are used. */
