@@ -35,7 +35,8 @@ function refuseOverwriting(options: Arguments): void {
   for (const path of options.words) {
     const target = outputName(path, options);
     const earlier = seen.get(target);
-    if (earlier !== undefined) throw new UsageError(`${earlier} and ${path} would both be written to ${target}: give them different names or run them apart`);
+    if (earlier !== undefined)
+      throw new UsageError(`${earlier} and ${path} would both be written to ${target}: give them different names or run them apart`);
     seen.set(target, path);
   }
 }

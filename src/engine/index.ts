@@ -14,5 +14,6 @@ export type {
   TransitionView,
 } from './analysis.ts';
 export { createEngine, type Engine, type RunControl } from './engine.ts';
+export { type LimitRow, limitsOf } from './limits.ts';
 export type { SourceKind } from './material.ts';
 export type { WorkerAnswer, WorkerRequest } from './protocol.ts';
