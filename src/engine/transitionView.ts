@@ -41,7 +41,9 @@ export function thinGasOf(context: ViewContext, line: number): ThinGasView | und
   if (nature !== 'forbidden' && nature !== 'intercombination') return undefined;
   const upper = data.lines.upperLevel[line];
   const model = data.levelModel(data.lines.ions[data.lines.ion[line]].name);
-  return model && upper > 0 ? thinGasOfLevel(model, upper, te) : thinGasOfA(data, line, nature);
+  if (model && upper > 0) return thinGasOfLevel(model, upper, te);
+  // the n-level atoms hold every metastable level of their ion: an intercombination line from any other level comes from one that decays fast
+  return model && nature === 'intercombination' ? undefined : thinGasOfA(data, line, nature);
 }
 
 function thinGasOfLevel(model: LevelModel, upper: number, te: number): ThinGasView | undefined {
@@ -54,12 +56,8 @@ function thinGasOfLevel(model: LevelModel, upper: number, te: number): ThinGasVi
   };
 }
 
-/** An intercombination line whose level decays faster than this needs no thin gas, s^-1. Metastable levels of the list are all slower. */
-const FAST_DECAY_S1 = 1e6;
-
 function thinGasOfA(data: AtomicData, line: number, nature: 'forbidden' | 'intercombination'): ThinGasView | undefined {
   const a = data.lines.aValue[line];
-  if (nature === 'intercombination' && !(a < FAST_DECAY_S1)) return undefined;
   const lifetimeS = a > 0 ? 1 / a : Number.NaN;
   const wait = a > 0 ? `at most ${lifetimeS.toPrecision(2)} s (this line's A value alone)` : 'an unknown time, long for an atom';
   return {
