@@ -39,6 +39,7 @@ export interface Inferred {
 const ROUNDS = 7;
 /** Lines of an ion that are looked for and, when absent, held against it. */
 const MOST_ABSENCES = 14;
+const FAINTEST_LOOKED_FOR = -6;
 /** log10 odds that a blend rather than one line is measured, before anything is known. */
 const BLEND_PRIOR = Math.log(0.35);
 /** A part of a blend carries at least this share. */
@@ -70,9 +71,10 @@ export function infer(
   let scales: IonScale[] = [];
   let weighings: Weighing[] = [];
   const rules = rulesOf(marks.length, fixed);
+  const local = localIons(data);
   for (let round = 0; round < ROUNDS; round++) {
     const sightings = sightingsOf(weighings, marks, data, model);
-    const means = priorMeans(data, settings.kind, scales);
+    const means = priorMeans(data, settings.kind, scales, local);
     const absences = absencesOf(marks, data, survey, model, settings);
     scales = means.reduce<IonScale[]>((all, mean, ion) => {
       all.push(fitScale(mean, sightings.get(ion) ?? [], absences[ion]));
@@ -171,6 +173,13 @@ function sightingsOf(
 const logFluxErr = (mark: Mark) =>
   Math.hypot(LEAST_FLUX_ERR_DEX, Number.isFinite(mark.fluxErr) ? Math.min(1, (Math.LOG10E * mark.fluxErr) / Math.abs(mark.flux)) : 0);
 
+/** 1 for the carriers of sky, telluric and interstellar lines, one value an ion of the list. */
+function localIons(data: AtomicData): Uint8Array {
+  const local = new Uint8Array(data.lines.ions.length);
+  for (let line = 0; line < data.lines.count; line++) if (isLocal(data, line)) local[data.lines.ion[line]] = 1;
+  return local;
+}
+
 /** For every ion its strongest lines in the observed range at whose place no mark stands. */
 function absencesOf(marks: readonly Mark[], data: AtomicData, survey: Survey, model: SystemModel, settings: NamingSettings): Absence[][] {
   const { lines } = data;
@@ -179,14 +188,19 @@ function absencesOf(marks: readonly Mark[], data: AtomicData, survey: Survey, mo
     .map((m) => m.wavelength)
     .sort((a, b) => a - b);
   const byIon: Absence[][] = lines.ions.map(() => []);
-  const [first, end] = linesBetween(lines, survey.low / (1 + model.z), survey.high / (1 + model.z));
   const strongest: number[][] = lines.ions.map(() => []);
-  for (let line = first; line < end; line++)
-    if (!isLocal(data, line) && lines.logStrength[line] > -6) strongest[lines.ion[line]].push(line);
+  const collect = (shift: number, local: boolean) => {
+    const [first, end] = linesBetween(lines, survey.low / shift, survey.high / shift);
+    for (let line = first; line < end; line++) {
+      if (isLocal(data, line) === local && lines.logStrength[line] > FAINTEST_LOOKED_FOR) strongest[lines.ion[line]].push(line);
+    }
+  };
+  collect(1 + model.z, false);
+  collect(1, true);
   strongest.forEach((list, ion) => {
     list.sort((a, b) => lines.logStrength[b] - lines.logStrength[a]);
     for (const line of list.slice(0, MOST_ABSENCES)) {
-      const at = lines.wavelengthVac[line] * (1 + model.z);
+      const at = lines.wavelengthVac[line] * (isLocal(data, line) ? 1 : 1 + model.z);
       const reach = Math.max((settings.toleranceKms / SPEED_OF_LIGHT_KMS) * at, 3 * lines.wavelengthErr[line]);
       if (hasWithin(places, at, reach)) continue;
       const room = survey.logLimitAt(at) - predictedLog(data, line, model);

@@ -1,6 +1,6 @@
 import type { AtomicData } from '../atomic/index.ts';
 import { normalTail } from '../numeric/index.ts';
-import { priorLogScale } from './kindPriors.ts';
+import { LOCAL_LOG_SCALE, priorLogScale } from './kindPriors.ts';
 import type { ObjectKind } from './naming.ts';
 
 /** One line of an ion seen at a flux, with the probability that it is this line. */
@@ -38,15 +38,16 @@ const KERNEL_PRIOR_WEIGHT = 1.5;
 const CENSOR_ROUNDS = 12;
 
 /** Prior mean of every ion: the kind of object, and what ions of about the same creation energy show. */
-export function priorMeans(data: AtomicData, kind: ObjectKind, scales: readonly IonScale[]): Float64Array {
+export function priorMeans(data: AtomicData, kind: ObjectKind, scales: readonly IonScale[], local: Uint8Array): Float64Array {
   const { ions } = data.lines;
   const place = ions.map((ion) => Math.log(ion.creationEv + 8));
   return Float64Array.from(ions, (ion, i) => {
+    if (local[i]) return LOCAL_LOG_SCALE;
     const base = priorLogScale(ion, kind);
     let sum = 0;
     let weight = KERNEL_PRIOR_WEIGHT;
     for (let j = 0; j < ions.length; j++) {
-      if (j === i || !(scales[j]?.seen > 0.8)) continue;
+      if (j === i || local[j] || !(scales[j]?.seen > 0.8)) continue;
       const k = Math.exp(-0.5 * ((place[i] - place[j]) / KERNEL_WIDTH) ** 2) * Math.min(2, scales[j].seen);
       sum += k * (scales[j].mean - priorLogScale(ions[j], kind));
       weight += k;

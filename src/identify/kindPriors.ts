@@ -28,3 +28,6 @@ export function priorLogScale(ion: Ion, kind: ObjectKind): number {
       return 0;
   }
 }
+
+/** Reduced spectra have their sky subtracted: what is left of it is expected this far below the list's own scale, log10. */
+export const LOCAL_LOG_SCALE = -2;
