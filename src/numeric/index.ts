@@ -6,4 +6,5 @@ export { interpolateMonotone } from './monotoneInterpolation.ts';
 export { erfc, normalTail } from './normalDistribution.ts';
 export { median, quantile, robustSigma, SIGMA_PER_MAD } from './robust.ts';
 export { type SeededRandom, seededRandom } from './seededRandom.ts';
+export { stationaryShares } from './stationaryShares.ts';
 export { whittaker } from './whittaker.ts';

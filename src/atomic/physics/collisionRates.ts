@@ -14,27 +14,30 @@ export const statisticalWeight = (model: LevelModel, level: number): number => 2
 
 /**
  * Effective collision strength of one tabulated pair: monotone cubic in ln Te; held at the end value outside the source's temperatures and where a source has none.
+ * Nothing is extrapolated; `isInsideRange` tells where a value was held.
  *
  * @param pair index into `model.collisions`
  * @param te   K
  * @returns Upsilon; 0 when the source gives no value at all
  */
 export function upsilonAt(model: LevelModel, pair: number, te: number): number {
-  const { upsilon } = model.collisions;
   const first = pair * UPSILON_TE.length;
-  const x: number[] = [];
-  const y: number[] = [];
-  for (let k = 0; k < UPSILON_TE.length; k++) {
-    const value = upsilon[first + k];
-    if (value > 0) {
-      x.push(LOG_TE[k]);
-      y.push(value);
-    }
-  }
-  return x.length === 0 ? 0 : interpolateMonotone(x, y, Math.log(te));
+  const y = model.collisions.upsilon.subarray(first, first + UPSILON_TE.length);
+  let known = 0;
+  for (let k = 0; k < y.length; k++) if (y[k] > 0) known++;
+  if (known === 0) return 0;
+  if (known === y.length) return interpolateMonotone(LOG_TE, y, Math.log(te));
+  return interpolateMonotone(
+    LOG_TE.filter((_, k) => y[k] > 0),
+    y.filter((value) => value > 0),
+    Math.log(te),
+  );
 }
 
-/** Whether the collision strengths out of `level` are tabulated at `te` (K), or had to be held at the end of their range. */
+/**
+ * Whether the collision strengths out of `level` are tabulated at `te` (K), or had to be held at the end of their range.
+ * Held values keep every result finite at 5000 ... 30000 K; show beside them that the table ended.
+ */
 export function isInsideRange(model: LevelModel, level: number, te: number): boolean {
   const { lower, upper, teLow, teHigh } = model.collisions;
   for (let pair = 0; pair < lower.length; pair++) {
@@ -46,9 +49,12 @@ export function isInsideRange(model: LevelModel, level: number, te: number): boo
 
 /**
  * Collision rate coefficients between all pairs of levels, cm^3 s^-1: `q[from * n + to]`, n = number of levels.
+ * @param te K, > 0
+ * @throws RangeError when `te` is not positive and finite
  * Down: 8.629e-6 Upsilon / (g_upper sqrt(Te)); up by detailed balance.
  */
 export function collisionRates(model: LevelModel, te: number): Float64Array {
+  if (!(te > 0 && te < Number.POSITIVE_INFINITY)) throw new RangeError(`electron temperature ${te}: expected a positive number, K`);
   const n = model.levels.length;
   const q = new Float64Array(n * n);
   const { lower, upper } = model.collisions;

@@ -9,7 +9,7 @@ export function totalDecayRate(model: LevelModel, level: number): number {
   return sum;
 }
 
-/** Mean time a level lives before it radiates, s; Infinity when it does not. */
+/** Mean time a level lives before it radiates, s: 1 / sum of A; Infinity for the ground and for levels without a known decay. */
 export const radiativeLifetime = (model: LevelModel, level: number): number => 1 / totalDecayRate(model, level);
 
 /**
@@ -18,8 +18,9 @@ export const radiativeLifetime = (model: LevelModel, level: number): number => 1
  * @param level index into `model.levels`, 0 = ground
  * @param te    electron temperature, K; collision strengths are held outside their tables (`isInsideRange` tells)
  * @param counted 'all' other levels, up and down (our definition wherever a number is shown), or 'down' to lower levels only, as some textbooks have it
- * @returns cm^-3; Infinity where no collision out of the level is tabulated
+ * @returns cm^-3; Infinity where no collision out of the level is tabulated (nobody knows, not: no limit), NaN where no decay is
  * Definition: sum of A to all lower levels over sum of q to all other levels (Osterbrock & Ferland 2006, chapter 3).
+ * Printed tables mix definitions: up and down, down only, down to other terms only; they differ by up to 10 within fine structure (C III 3P, O II 2D).
  * Checked in tests/reference/criticalDensity.test.ts.
  */
 export function criticalDensity(model: LevelModel, level: number, te: number, counted: 'all' | 'down' = 'all'): number {
@@ -27,5 +28,7 @@ export function criticalDensity(model: LevelModel, level: number, te: number, co
   const q = collisionRates(model, te);
   let out = 0;
   for (let to = 0; to < n; to++) if (to !== level && (counted === 'all' || to < level)) out += q[level * n + to];
-  return out > 0 ? totalDecayRate(model, level) / out : Number.POSITIVE_INFINITY;
+  const decay = totalDecayRate(model, level);
+  if (decay === 0) return Number.NaN;
+  return out > 0 ? decay / out : Number.POSITIVE_INFINITY;
 }

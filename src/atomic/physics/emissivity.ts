@@ -1,7 +1,6 @@
 import { PLANCK_ERG_S, SPEED_OF_LIGHT_KMS } from '../../units/index.ts';
 import type { LevelModel } from '../levelModel.ts';
-import { collisionRates } from './collisionRates.ts';
-import { levelPopulations, populationsFromRates } from './levelPopulations.ts';
+import { levelPopulations } from './levelPopulations.ts';
 
 const CM_PER_KM = 1e5;
 
@@ -16,12 +15,22 @@ export function decayRate(model: LevelModel, upper: number, lower: number): numb
 const photonErg = (model: LevelModel, upper: number, lower: number) =>
   PLANCK_ERG_S * SPEED_OF_LIGHT_KMS * CM_PER_KM * (model.levels[upper].energyCm1 - model.levels[lower].energyCm1);
 
-/** Emission of a line per ion, erg s^-1: population of the upper level times A times the photon's energy. */
+/**
+ * Emission of a line per ion, erg s^-1: population of the upper level times A times the photon's energy. Divided by ne it is the emission per ion and electron.
+ *
+ * @param te K
+ * @param ne cm^-3, > 0
+ */
 export function emissivityPerIon(model: LevelModel, upper: number, lower: number, te: number, ne: number): number {
   return levelPopulations(model, te, ne)[upper] * decayRate(model, upper, lower) * photonErg(model, upper, lower);
 }
 
-/** Ratio of two lines of one ion in energy units, `over` / `under`, each as [upper, lower]. */
+/**
+ * Ratio of two lines of one ion in energy units, `over` / `under`, each as [upper, lower].
+ *
+ * @param te K
+ * @param ne cm^-3, > 0
+ */
 export function lineRatio(
   model: LevelModel,
   over: readonly [number, number],
@@ -35,18 +44,15 @@ export function lineRatio(
   return strength(over) / strength(under);
 }
 
-/** Density (cm^-3) low enough for every level of the list to radiate before it is hit: far below all critical densities but those of the far infrared. */
-const LOW_DENSITY_CM3 = 1e-3;
-
 /**
- * What is left of a level's light at a density: emission per ion and electron relative to its low-density limit. 1 in thin gas; it falls as 1/ne far above the critical density.
+ * Ratio of two lines from one upper level in energy units: A times photon energy over the same, the same in any gas that does not absorb them.
  *
- * @param ne cm^-3, one or many
- * @returns one value a density
+ * @param upper index of the level both come from
+ * @param over, under indices of their lower levels
+ * @returns NaN when an A value is not known
+ * [O III] and [N II] carry the relativistic A values of Storey & Zeippen 2000, MNRAS 312, 813. Checked in tests/reference/branchingRatios.test.ts.
  */
-export function survival(model: LevelModel, upper: number, te: number, ne: readonly number[]): number[] {
-  const q = collisionRates(model, te);
-  const perElectron = (density: number) => populationsFromRates(model, q, density)[upper] / density;
-  const limit = perElectron(LOW_DENSITY_CM3);
-  return ne.map((density) => perElectron(density) / limit);
+export function branchingRatio(model: LevelModel, upper: number, over: number, under: number): number {
+  const part = (lower: number) => decayRate(model, upper, lower) * photonErg(model, upper, lower);
+  return part(over) > 0 && part(under) > 0 ? part(over) / part(under) : Number.NaN;
 }
