@@ -2,19 +2,25 @@ import { wordProblem } from '../../problems/index.ts';
 import { EMPTY_DOCUMENT, make, openSource, type Source, startHistory } from '../../session/index.ts';
 import { keepFile, keptFile, sourceKey } from '../storage.ts';
 import { words } from '../words.ts';
-import { type Analysed, AnsweredProblem, Cancelled, workerClient } from '../workerClient.ts';
+import { type Analysed, AnsweredProblem, Cancelled, type WorkerClient, workerClient } from '../workerClient.ts';
 import { rowAt } from './chosen.ts';
 import { type DeskRow, deskRows, prominence } from './deskRows.ts';
 import { desk, raiseAlert, setDesk } from './deskStore.ts';
 
-const client = workerClient(
-  new URL('atomic.bin', document.baseURI).href,
-  ({ stage, share }) => {
-    const { run } = desk();
-    if (run) setDesk({ run: { ...run, stage, share } });
-  },
-  words.run.failed,
-);
+let made: WorkerClient | undefined;
+
+/** Made when first needed, so that the command table can be read without a page. */
+function client(): WorkerClient {
+  made ??= workerClient(
+    new URL('atomic.bin', document.baseURI).href,
+    ({ stage, share }) => {
+      const { run } = desk();
+      if (run) setDesk({ run: { ...run, stage, share } });
+    },
+    words.run.failed,
+  );
+  return made;
+}
 
 /** Bytes at hand, by `sourceKey`. */
 const files = new Map<string, Blob>();
@@ -50,12 +56,12 @@ async function openNow(file: Blob, name: string): Promise<void> {
   const { history, stage } = desk();
   const awaited = stage === 'awaiting' ? history.document.source : undefined;
   const isAwaited = awaited !== undefined && (awaited.name === name || awaited.size === file.size);
-  const kind = await client.open(file, name, isAwaited ? awaited.kind : 'guess');
+  const kind = await client().open(file, name, isAwaited ? awaited.kind : 'guess');
   const source: Source = isAwaited ? awaited : { kind, name, size: file.size };
   const base = () => (stage === 'awaiting' && !isAwaited ? startHistory(EMPTY_DOCUMENT) : desk().history);
   const after = () => (isAwaited ? base() : make(base(), openSource(base().document, source)));
   const { settings, verdicts } = after().document;
-  const answer = await client.analyse(settings, verdicts);
+  const answer = await client().analyse(settings, verdicts);
   const key = sourceKey(source);
   held = key;
   files.set(key, file);
@@ -104,10 +110,10 @@ async function round(): Promise<void> {
     }
     files.set(key, file);
     held = undefined;
-    await client.open(file, source.name, source.kind);
+    await client().open(file, source.name, source.kind);
     held = key;
   }
-  arrive(await client.analyse(settings, verdicts), false);
+  arrive(await client().analyse(settings, verdicts), false);
 }
 
 /** Puts an answer on the desk. */
@@ -134,7 +140,7 @@ export function stop(): void {
   if (!desk().run) return;
   wanted = false;
   held = undefined;
-  client.cancel();
+  client().cancel();
 }
 
 /** Resolves when the analysis on the desk belongs to the document on the desk. */

@@ -4,8 +4,9 @@ import type { DeskRow } from '../desk/deskRows.ts';
 import { useDesk } from '../desk/deskStore.ts';
 import { round } from '../figures.ts';
 import { decimate } from '../plot/decimate.ts';
-import { profileAt } from '../plot/profileCurve.ts';
-import { sampleAt } from '../plot/sampleAt.ts';
+import { fitCurve } from '../plot/fitCurve.ts';
+import type { Profile } from '../plot/profileCurve.ts';
+import { profileOf } from '../plot/profileOf.ts';
 import { extent, place, svgPath, svgSteps } from '../plot/svgPath.ts';
 import { words } from '../words.ts';
 
@@ -14,8 +15,6 @@ const HEIGHT = 128;
 const FOOT = 14;
 /** Half width of the picture in FWHM. */
 const HALF_FWHM = 7;
-/** Lines outside the picture reach into it with their wings. */
-const NEIGHBOUR_FWHM = 3;
 const CURVE_POINTS = 160;
 
 /** Data, fit and every component about the chosen feature. */
@@ -60,27 +59,19 @@ function closeUpCurves(samples: SamplesView, row: DeskRow, rows: readonly DeskRo
   const margin = (range[1] - range[0]) * 0.06;
   const xAxis = { low: from, high: to, from: 0, to: WIDTH };
   const yAxis = { low: range[0] - margin, high: range[1] + margin, from: HEIGHT - 1, to: 12 };
-  const x = Array.from({ length: CURVE_POINTS + 1 }, (_, k) => from + ((to - from) * k) / CURVE_POINTS);
   const profiles = rows
-    .map(({ feature }) => feature.measured)
-    .filter((m) => Math.abs(m.centroid - centroid) < half + NEIGHBOUR_FWHM * m.fwhm)
-    .map((m) => ({ centre: m.centroid, fwhm: m.fwhm, flux: m.flux }));
-  const base = (at: number) => continuum.y[Math.min(sampleAt(continuum.x, at), continuum.y.length - 1)];
-  const fit = x.map((at) => profiles.reduce((sum, profile) => sum + profileAt(profile, at), base(at)));
-  const components = profiles.map((profile) =>
-    svgPath(
-      x,
-      x.map((at) => base(at) + profileAt(profile, at)),
-      xAxis,
-      yAxis,
-    ),
-  );
+    .map((each) => profileOf(each.feature))
+    .filter((profile) => profile.centre > from - half && profile.centre < to + half);
+  const curve = (some: readonly Profile[]) => {
+    const fit = fitCurve(some, continuum, from, to, CURVE_POINTS);
+    return svgPath(fit.x, fit.y, xAxis, yAxis);
+  };
   return {
     centre: place(xAxis, centroid),
     data: svgSteps(data.x, data.y, xAxis, yAxis),
-    model: svgPath(x, fit, xAxis, yAxis),
+    model: curve(profiles),
     continuum: svgPath(continuum.x, continuum.y, xAxis, yAxis),
-    components: components.length > 1 ? components : [],
+    components: profiles.length > 1 ? profiles.map((profile) => curve([profile])) : [],
     ticks: closeUpTicks(from, to).map((tick) => ({ x: place(xAxis, tick), text: String(tick) })),
     top: round(range[1], 3),
   };

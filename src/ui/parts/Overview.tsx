@@ -10,7 +10,7 @@ import { useSize } from './useSize.ts';
 
 const HEIGHT = 36;
 const LEFT = 64;
-const RIGHT = 12;
+const RIGHT = 16;
 
 interface Props {
   readonly samples: PlotSamples | undefined;

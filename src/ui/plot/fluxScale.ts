@@ -24,6 +24,9 @@ export function fluxScale(kind: ScaleKind, small: number): FluxScale {
   }
 }
 
+/** A stretch of less than a decade is ticked evenly. */
+const FEWEST_TICKS = 3;
+
 /** Round fluxes for the axis between two fluxes, about `count` of them, ascending. */
 export function fluxTicks(scale: FluxScale, low: number, high: number, count: number): number[] {
   if (!(high > low)) return [];
@@ -34,7 +37,7 @@ export function fluxTicks(scale: FluxScale, low: number, high: number, count: nu
     const last = kept.at(-1);
     if (last === undefined || scale.forward(tick) - scale.forward(last) >= (0.6 * spread) / count) kept.push(tick);
   }
-  return kept;
+  return kept.length < FEWEST_TICKS ? evenTicks(low, high, count) : kept;
 }
 
 function evenTicks(low: number, high: number, count: number): number[] {

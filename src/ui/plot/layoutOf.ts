@@ -18,7 +18,7 @@ export interface PanelLayout {
 /** Lanes by energy and one for features without a name. */
 export const LANE_COUNT = LANES.length + 1;
 
-const MARGIN = { left: 64, right: 12, top: 4, bottom: 40 };
+const MARGIN = { left: 64, right: 16, top: 4, bottom: 40 };
 const GAP = 8;
 const LANE = { least: 22, most: 28 };
 const RESIDUAL = { least: 36, most: 72 };

@@ -3,12 +3,14 @@ import type { DeskRow } from '../desk/deskRows.ts';
 import type { Frame } from '../desk/deskStore.ts';
 import { words } from '../words.ts';
 import { decimate, type Points } from './decimate.ts';
+import { fitCurve } from './fitCurve.ts';
 import { commonExponent, type FluxScale, fluxTicks, tickText } from './fluxScale.ts';
 import type { Ink } from './inkOf.ts';
 import { UNNAMED_LANE } from './lanes.ts';
 import { domainOf, LANE_COUNT, type PanelLayout } from './layoutOf.ts';
 import { laneTicks, marksOf } from './marksOf.ts';
 import type { PlotSamples } from './plotSamples.ts';
+import { profileOf } from './profileOf.ts';
 import { extent } from './svgPath.ts';
 import type { Range } from './viewRange.ts';
 
@@ -58,10 +60,10 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
   const { ink, samples } = scene;
   const cut = (values: Float64Array) => (samples ? decimate(samples.wavelength, values, window[0], window[1], step) : { x: [], y: [] });
   const flux = samples ? cut(samples.flux) : sticks(scene.rows, window);
-  const model = samples ? cut(samples.model) : { x: [], y: [] };
   const continuum = samples ? cut(samples.continuum) : { x: [], y: [] };
   const residual = samples ? cut(samples.residual) : { x: [], y: [] };
   const isSparse = samples !== undefined && flux.x.length < STEPS_BELOW * inner;
+  const model = isSparse ? fitBetween(scene.rows, continuum, window, 3 * inner) : samples ? cut(samples.model) : { x: [], y: [] };
   const marks = marksOf(scene.rows, {
     from: window[0],
     to: window[1],
@@ -85,7 +87,7 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
     viewWidth,
     heights: { x: [...flux.x, ...model.x], y: [...flux.y, ...model.y] },
     data: [
-      line(residual, 'y3', ink.muted, 1),
+      line(residual, 'y3', ink.muted, 1, isSparse ? 'steps' : 'solid'),
       line(continuum, 'y2', ink.muted, 1, 'dot'),
       line(model, 'y2', ink.fit, 2.5),
       line(flux, 'y2', ink.ink, samples ? 1 : 1.5, isSparse ? 'steps' : 'solid'),
@@ -117,6 +119,14 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
       },
     ],
   };
+}
+
+/** The fit as a smooth curve, where the samples are wider than a pixel. */
+function fitBetween(rows: readonly DeskRow[], continuum: Points, window: Range, count: number): Points {
+  const from = Math.max(window[0], continuum.x[0] ?? window[0]);
+  const to = Math.min(window[1], continuum.x.at(-1) ?? window[1]);
+  const near = rows.map((row) => profileOf(row.feature)).filter(({ centre, fwhm }) => centre > from - 4 * fwhm && centre < to + 4 * fwhm);
+  return fitCurve(near, continuum, from, to, Math.max(count, 1));
 }
 
 /** A list of lines as sticks from zero. */

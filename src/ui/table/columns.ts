@@ -27,7 +27,7 @@ export const TABLE_COLUMNS: readonly TableColumn[] = [
   ),
   number(
     'wavelength',
-    '148px',
+    '136px',
     'Å',
     (r) => withError(r.feature.centroid, finite(r.feature.centroidErr), 2),
     (r) => r.feature.centroid,
@@ -53,7 +53,7 @@ export const TABLE_COLUMNS: readonly TableColumn[] = [
   ),
   number(
     'flux',
-    '132px',
+    '124px',
     '',
     (r) => fluxText(r.feature.measured.flux, r.feature.measured.fluxErr),
     (r) => r.feature.measured.flux,
@@ -67,7 +67,7 @@ export const TABLE_COLUMNS: readonly TableColumn[] = [
   ),
   number(
     'fwhm',
-    '72px',
+    '100px',
     'km/s',
     (r) => fixed(r.printed.fwhmKms, 1),
     (r) => finite(r.printed.fwhmKms),
