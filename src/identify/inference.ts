@@ -37,6 +37,9 @@ export interface Inferred {
 }
 
 const ROUNDS = 7;
+/** Candidates below this probability are dropped, but for the first few. */
+const HOPELESS = 1e-5;
+const ALWAYS_KEPT = 5;
 /** Lines of an ion that are looked for and, when absent, held against it. */
 const MOST_ABSENCES = 14;
 const FAINTEST_LOOKED_FOR = -6;
@@ -290,7 +293,9 @@ function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
   const none = Math.exp(-top);
   const total = weights.reduce((a, b) => a + b, none);
   return {
-    candidates: scored.map((s, k) => ({ ...s, probability: weights[k] / total })).filter((s) => s.probability > 1e-5),
+    candidates: scored
+      .map((s, k) => ({ ...s, probability: weights[k] / total }))
+      .filter((s, k) => k < ALWAYS_KEPT || s.probability > HOPELESS),
     noneProbability: none / total,
   };
 }

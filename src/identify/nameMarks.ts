@@ -15,8 +15,9 @@ export interface NamingControl {
   readonly signal?: AbortSignal;
 }
 
-/** Candidates shown for a feature, and how unlikely one may be. */
+/** Candidates shown for a feature: at most so many, always the first few (a referee wants to see what was turned down), the rest only when they are not hopeless. */
 const MOST_CANDIDATES = 8;
+const ALWAYS_SHOWN = 4;
 const LEAST_PROBABILITY = 1e-4;
 /** Candidates whose companions are looked for: the others cannot win. */
 const MOST_WEIGHED = 8;
@@ -143,7 +144,10 @@ function caseOf(
       })),
       noneProbability: 0,
     };
-  return { candidates: shown.slice(0, MOST_CANDIDATES).filter((c) => c.probability >= LEAST_PROBABILITY), noneProbability: none / sum };
+  return {
+    candidates: shown.slice(0, MOST_CANDIDATES).filter((c, i) => i < ALWAYS_SHOWN || c.probability >= LEAST_PROBABILITY),
+    noneProbability: none / sum,
+  };
 }
 
 const total = (evidence: readonly Evidence[]) => evidence.reduce((sum, e) => sum + e.nats, 0);

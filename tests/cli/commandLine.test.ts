@@ -39,7 +39,17 @@ test('read prints the samples as stored and says how they were read', () => {
   expect(err).toContain('"medium":"vacuum"');
   expect(code).toBe(0);
   expect(out.split('\n')[0]).toBe('wavelength,flux,flux_err,masked');
-  expect(out.split('\n').slice(1, 4).map((line) => line.split(',').map(Number).map((v) => Math.round(v * 1e6) / 1e6))).toEqual([
+  expect(
+    out
+      .split('\n')
+      .slice(1, 4)
+      .map((line) =>
+        line
+          .split(',')
+          .map(Number)
+          .map((v) => Math.round(v * 1e6) / 1e6),
+      ),
+  ).toEqual([
     [5001, 1.5, 0, 0],
     [5002, 0, 0, 1],
     [5003, 2.25, 0, 0],

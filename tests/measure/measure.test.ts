@@ -22,7 +22,9 @@ describe('measuring', () => {
   });
 
   test('separates two lines 1.2 FWHM apart and says that they are blended', () => {
-    const { real, lines } = found('R 8000; 4930 60; 4950 80; 4970 60; 5000 100; 5000.75 60; 5050 70; 5080 90; noise 1', { resolvingPower: 8000 });
+    const { real, lines } = found('R 8000; 4930 60; 4950 80; 4970 60; 5000 100; 5000.75 60; 5050 70; 5080 90; noise 1', {
+      resolvingPower: 8000,
+    });
     expect(real).toHaveLength(lines.length);
     const pair = real.filter((f) => Math.abs(f.centroid - 5000.4) < 1);
     expect(pair).toHaveLength(2);
@@ -75,7 +77,9 @@ describe('measuring', () => {
   });
 
   test('gives the equivalent width of a line on its continuum', () => {
-    const feature = found('R 8000; 5000 100; 4950 60; 5050 80; noise 0.5; continuum 50').real.find((f) => Math.abs(f.centroid - 5000) < 0.5);
+    const feature = found('R 8000; 5000 100; 4950 60; 5050 80; noise 0.5; continuum 50').real.find(
+      (f) => Math.abs(f.centroid - 5000) < 0.5,
+    );
     expect(feature?.ew).toBeGreaterThan(1.9);
     expect(feature?.ew).toBeLessThan(2.1);
   });
