@@ -77,7 +77,7 @@ describe('the case of a candidate', () => {
 
   test('every sentence ends as one and has no unfinished number', () => {
     for (const { candidates } of naming.features) {
-      for (const { evidence } of candidates) for (const { sentence } of evidence) expect(sentence).toMatch(/^[^]*[^ ]\.$/);
+      for (const { evidence } of candidates) for (const { sentence } of evidence) expect(sentence).toMatch(/\S\.$/);
       for (const { evidence } of candidates) for (const { sentence } of evidence) expect(sentence).not.toMatch(/NaN|Infinity|undefined/);
     }
   });
