@@ -1,6 +1,7 @@
 import type { Problem } from '../problems/index.ts';
 import type { Settings, Verdict } from '../session/index.ts';
 import type { Analysis, Progress, SamplesView } from './analysis.ts';
+import type { LineRecord, LineSearchResult } from './lineSearch.ts';
 
 /** What the screen asks of the worker. One request runs at a time; `id` comes back with the answer. To cancel, end the worker and start another. */
 export type WorkerRequest =
@@ -21,9 +22,15 @@ export type WorkerRequest =
       readonly settings: Settings;
       readonly verdicts: readonly Verdict[];
       readonly samplesKnown?: number;
-    };
+    }
+  /** Looks into the line list; `query` as in `searchLines`. */
+  | { readonly ask: 'lines'; readonly id: number; readonly query: string }
+  /** All the list holds of one line; `te` in K. */
+  | { readonly ask: 'record'; readonly id: number; readonly line: number; readonly te: number };
 
 export type WorkerAnswer =
+  | { readonly say: 'lines'; readonly id: number; readonly result: LineSearchResult }
+  | { readonly say: 'record'; readonly id: number; readonly record: LineRecord }
   | { readonly say: 'started'; readonly id: number; readonly atomicVersion: string; readonly lineCount: number }
   | { readonly say: 'opened'; readonly id: number; readonly kind: 'spectrum' | 'line-list' }
   | { readonly say: 'progress'; readonly id: number; readonly progress: Progress }

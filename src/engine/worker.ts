@@ -4,6 +4,7 @@ import { type Problem, ProblemError } from '../problems/index.ts';
 import type { ByteSource } from '../readers/index.ts';
 import type { SamplesView } from './analysis.ts';
 import { createEngine, type Engine } from './engine.ts';
+import { lineRecord, searchLines } from './lineSearch.ts';
 import type { WorkerAnswer, WorkerRequest } from './protocol.ts';
 
 // The worker's entry: turns messages into calls of the engine and errors into data. One request runs at a time.
@@ -27,7 +28,9 @@ async function answer(request: WorkerRequest): Promise<void> {
     else if (request.ask === 'open') {
       const kind = await engine.open(blobSource(request.file, request.name), request.kind);
       say({ say: 'opened', id: request.id, kind });
-    } else await analyse(engine, request);
+    } else if (request.ask === 'lines') say({ say: 'lines', id: request.id, result: searchLines(engine.data, request.query) });
+    else if (request.ask === 'record') say({ say: 'record', id: request.id, record: lineRecord(engine.data, request.line, request.te) });
+    else await analyse(engine, request);
   } catch (error) {
     say({ say: 'problem', id: request.id, problem: problemOf(error) });
   }
