@@ -1,10 +1,9 @@
+import { FWHM_PER_SIGMA, SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import type { Feature, FitEnd, Group } from './feature.ts';
 import { type FitSamples, firstAtLeast, type GroupFit } from './fitGroup.ts';
 import type { LineSpread } from './lineSpread.ts';
 import { gaussianInto } from './profile.ts';
 
-const FWHM_PER_SIGMA = 2.354_820_045;
-const SPEED_OF_LIGHT_KMS = 299_792.458;
 /** A fitted line narrower than this share of the usual width is no line of the instrument. */
 const TOO_NARROW = 0.5;
 /** A line is called resolved when it is wider than the instrument by this many of its own errors. */

@@ -1,4 +1,5 @@
 import { type LeastSquaresEnd, levenbergMarquardt, type NormalEquations } from '../numeric/index.ts';
+import { FWHM_PER_SIGMA } from '../units/index.ts';
 import { gaussianInto, type ProfileValue } from './profile.ts';
 
 /** The samples of a spectrum as the fits see them; all arrays one value a sample. */
@@ -44,7 +45,6 @@ export interface GroupFit {
 
 /** Lines narrower than this (FWHM in samples) are fitted with the profile averaged over each sample. */
 const UNDERSAMPLED_FWHM = 4;
-const FWHM_PER_SIGMA = 2.354_820_045;
 /** A centre may move this far from its start, in expected sigma. */
 const CENTRE_REACH = 2.5;
 /** ln(sigma) may leave the expected one by this much: a factor 12 for lines far wider than the instrument. */

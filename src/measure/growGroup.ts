@@ -1,3 +1,4 @@
+import { FWHM_PER_SIGMA } from '../units/index.ts';
 import { addProfiles, type Component, type FitSamples, fitGroup, type GroupFit, type WidthPrior } from './fitGroup.ts';
 import { matchedFilter } from './matchedFilter.ts';
 
@@ -7,7 +8,6 @@ const MOST_ADDED = 8;
 const NEAREST_FWHM = 0.45;
 /** A lone sample this many sigma off, whose neighbours are not, is a spike. */
 const SPIKE_SIGMA = 7;
-const FWHM_PER_SIGMA = 2.354_820_045;
 /** Nothing is added this near to the ends of a window, in sigma: there a line and the slope of the continuum are one. */
 const MARGIN_SIGMA = 3;
 

@@ -1,6 +1,5 @@
 import { quantile, robustSigma } from '../numeric/index.ts';
-
-const FWHM_PER_SIGMA = 2.354_820_045;
+import { FWHM_PER_SIGMA } from '../units/index.ts';
 
 /** Line width as the fits expect it: constant resolving power, with the scatter of ln(width) seen on isolated lines. */
 export interface LineSpread {

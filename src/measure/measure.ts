@@ -1,6 +1,7 @@
 import { median, normalTail, robustSigma } from '../numeric/index.ts';
 import { ProblemError, type Remark } from '../problems/index.ts';
 import { countUsable, type Spectrum } from '../spectrum/index.ts';
+import { FWHM_PER_SIGMA } from '../units/index.ts';
 import { fitContinuum } from './continuum.ts';
 import type { Feature, Group, Measurement, MeasureSettings } from './feature.ts';
 import { artefactFeature, featuresOfFit } from './featuresOfFit.ts';
@@ -21,7 +22,6 @@ export interface MeasureControl {
   readonly signal?: AbortSignal;
 }
 
-const FWHM_PER_SIGMA = 2.354_820_045;
 const FEWEST_SAMPLES = 20;
 /** The file's errors are taken as they are when the scatter agrees with them this well. */
 const NOISE_AGREES = 0.1;

@@ -1,11 +1,11 @@
 import { erfc, solveLinear } from '../numeric/index.ts';
+import { FWHM_PER_SIGMA } from '../units/index.ts';
 import type { FitSamples, GroupFit, WidthPrior } from './fitGroup.ts';
 
 /** Components of a plateau differ by no more than this in flux ... */
 const ALIKE = 3;
 /** ... and stand no further apart than this, in FWHM. */
 const TOUCHING_FWHM = 2.2;
-const FWHM_PER_SIGMA = 2.354_820_045;
 const EDGES = 16;
 
 /**

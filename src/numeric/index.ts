@@ -4,7 +4,7 @@ export { type LeastSquaresEnd, levenbergMarquardt, type NormalEquations } from '
 export { solveLinear } from './linearSolve.ts';
 export { interpolateMonotone } from './monotoneInterpolation.ts';
 export { erfc, normalTail } from './normalDistribution.ts';
-export { median, quantile, robustSigma, SIGMA_PER_MAD } from './robust.ts';
+export { median, quantile, robustSigma } from './robust.ts';
 export { type SeededRandom, seededRandom } from './seededRandom.ts';
 export { stationaryShares } from './stationaryShares.ts';
 export { whittaker } from './whittaker.ts';

@@ -1,5 +1,5 @@
 /** Standard deviation of a normal distribution over its median absolute deviation: 1 / Phi^-1(3/4). */
-export const SIGMA_PER_MAD = 1.482_602_218_505_602;
+const SIGMA_PER_MAD = 1.482_602_218_505_602;
 
 /** Median of the finite values; NaN when there are none. Leaves `values` as it is. */
 export function median(values: ArrayLike<number>): number {

@@ -17,4 +17,4 @@ export {
 export { type Decision, EMPTY_DOCUMENT, type LineKey, type SessionDocument, type Settings, type Source, type Verdict } from './document.ts';
 export { readSession, writeSession } from './file.ts';
 export { type History, make, redo, startHistory, undo } from './history.ts';
-export { findVerdict, matchVerdicts, type Place } from './matchVerdicts.ts';
+export { matchVerdicts, type Place } from './matchVerdicts.ts';

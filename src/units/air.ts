@@ -10,7 +10,7 @@ export const AIR_LIMIT = 2000;
  * Ciddor 1996, Applied Optics 35, 1566, equation 1; published for 2300-16900 A, used beyond as handbooks do.
  * Checked in tests/reference/airVacuum.test.ts.
  */
-export function refractiveIndexOfAir(vacuum: number): number {
+function refractiveIndexOfAir(vacuum: number): number {
   const s2 = (1e4 / vacuum) ** 2;
   return 1 + 0.057_921_05 / (238.0185 - s2) + 0.001_679_17 / (57.362 - s2);
 }
