@@ -8,6 +8,8 @@ const MOST_ADDED = 8;
 const NEAREST_FWHM = 0.45;
 /** A lone sample this many sigma off, whose neighbours are not, is a spike. */
 const SPIKE_SIGMA = 7;
+/** Samples to either side that may be the spike instead. */
+const SPIKE_NEIGHBOURS = 2;
 /** Nothing is added this near to the ends of a window, in sigma: there a line and the slope of the continuum are one. */
 const MARGIN_SIGMA = 3;
 
@@ -33,9 +35,7 @@ export function growGroup(
     const residual = residualOf(samples, fit);
     const spike = loneSpike(samples, fit, residual);
     if (spike !== undefined) {
-      samples.usable[spike] = 0;
-      spikes.push(spike);
-      fit = fitGroup(samples, first, last, fit.components, width);
+      fit = withoutSpike(samples, fit, spike, width, spikes);
       continue;
     }
     const added = bestAddition(samples, fit, residual, width, threshold);
@@ -84,6 +84,26 @@ const windowOf = (samples: FitSamples, { first, last }: GroupFit): FitSamples =>
   usable: samples.usable.subarray(first, last + 1),
   sampleWidth: samples.sampleWidth.subarray(first, last + 1),
 });
+
+/**
+ * Takes the spike out and fits again. A spike on the flank of a line can pull the fit onto itself, so that a good sample of the line looks like the spike: each
+ * bright sample nearby is tried, and the one whose absence leaves the best fit goes.
+ */
+function withoutSpike(samples: FitSamples, fit: GroupFit, spike: number, width: WidthPrior, spikes: number[]): GroupFit {
+  let best: { at: number; fit: GroupFit } | undefined;
+  for (let at = spike - SPIKE_NEIGHBOURS; at <= spike + SPIKE_NEIGHBOURS; at++) {
+    if (at <= fit.first || at >= fit.last || !samples.usable[at]) continue;
+    if (at !== spike && Math.abs(samples.y[at]) < SPIKE_SIGMA * samples.noise[at]) continue;
+    samples.usable[at] = 0;
+    const trial = fitGroup(samples, fit.first, fit.last, fit.components, width);
+    samples.usable[at] = 1;
+    if (!best || totalChi2(trial) < totalChi2(best.fit)) best = { at, fit: trial };
+  }
+  if (!best) return fit;
+  samples.usable[best.at] = 0;
+  spikes.push(best.at);
+  return best.fit;
+}
 
 function loneSpike(samples: FitSamples, fit: GroupFit, residual: Float64Array): number | undefined {
   const { noise, usable } = windowOf(samples, fit);
