@@ -11,6 +11,7 @@ export type { Ion, LineList, Mechanism, Nature } from './lineList.ts';
 export { linesBetween } from './linesBetween.ts';
 export { loadAtomicData } from './loadAtomicData.ts';
 export { isInsideRange, upsilonAt } from './physics/collisionRates.ts';
+export { type Companion, type CompanionFinder, companionFinder, type RatioBasis } from './physics/companions.ts';
 export { criticalDensity, radiativeLifetime } from './physics/criticalDensity.ts';
 export { branchingRatio, decayRate, emissivityPerIon, lineRatio } from './physics/emissivity.ts';
 export { isMetastable } from './physics/isMetastable.ts';

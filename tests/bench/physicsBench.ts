@@ -1,5 +1,5 @@
 import { readFileSync } from 'node:fs';
-import { type LevelModel, levelPopulations, loadAtomicData, survival, thinGasFacts } from '../../src/atomic/index.ts';
+import { companionFinder, type LevelModel, levelPopulations, loadAtomicData, survival, thinGasFacts } from '../../src/atomic/index.ts';
 
 /** Microseconds a call: best of 5 rounds. */
 function microseconds(calls: number, run: (k: number) => unknown): number {
@@ -34,5 +34,10 @@ export function physicsBench(): string[] {
   const densities = Array.from({ length: 100 }, (_, k) => 10 ** (k / 10));
   sentences.push(`survival of O III at 100 densities: ${microseconds(50, (k) => survival(oxygen, 3, 9000 + k, densities)).toFixed(0)} us`);
   sentences.push(`facts and sentence of a thin-gas line: ${microseconds(500, (k) => thinGasFacts(oxygen, 3, 9000 + k)).toFixed(0)} us`);
+  const start = performance.now();
+  const companionsOf = companionFinder(data);
+  const prepared = performance.now() - start;
+  const perLine = microseconds(data.lines.count, (line) => companionsOf(line, 10_000, 1000));
+  sentences.push(`companions with ratios: prepared in ${prepared.toFixed(0)} ms, ${perLine.toFixed(1)} us a line on average`);
   return sentences;
 }
