@@ -23,10 +23,16 @@ const MOST_COMPANIONS = 5;
 /** Scatter of the ratio of two lines from one upper level (A values), and of two lines of one multiplet (level populations), dex. */
 const SAME_UPPER_DEX = 0.07;
 const MULTIPLET_DEX = 0.16;
+/** Pumping fills the levels of a multiplet unevenly, dex. */
+const PUMPED_DEX = 0.5;
 /** The ion's scale already holds part of this evidence: it counts by this share. */
 const SHARE = 0.6;
 const MOST_FOR = 2.5;
-const MOST_AGAINST = 5;
+/** An observer's list leaves lines out: an absent companion counts this much at most, and all that speak against together. */
+const MOST_AGAINST = 2.5;
+const MOST_AGAINST_TOGETHER = 3;
+/** Marks without a width: two lines nearer than this many errors of a mark could not be told apart. */
+const UNRESOLVED_SIGMAS = 3;
 
 export function kinOf(data: AtomicData): Kin {
   const { lines } = data;
@@ -70,36 +76,50 @@ export function findCompanions(
   settings: NamingSettings,
 ): WeighedCompanion[] {
   const { lines } = data;
-  return kin.of(line).flatMap((other): WeighedCompanion[] => {
+  const found = kin.of(line).flatMap((other): WeighedCompanion[] => {
     const dimming = model.cHbeta * (roughDimming(lines.wavelengthVac[line]) - roughDimming(lines.wavelengthVac[other]));
     const logRatio = lines.logStrength[other] - lines.logStrength[line] + dimming;
     if (!Number.isFinite(logRatio)) return [];
     const expectedAt = lines.wavelengthVac[other] * (1 + model.z);
     const logPredicted = Math.log10(mark.flux * share) + logRatio;
     const sameUpper = lines.upperId[other] === lines.upperId[line] && lines.upperId[line] > 0;
-    const err = sameUpper ? SAME_UPPER_DEX : MULTIPLET_DEX;
+    const pumped = lines.mechanism(line) === 'fluorescence' || lines.mechanism(other) === 'fluorescence';
+    const err = sameUpper ? SAME_UPPER_DEX : pumped ? PUMPED_DEX : MULTIPLET_DEX;
     const base = { line: other, expectedAt, predictedFlux: 10 ** logPredicted };
     const say = (outcome: CompanionFinding['outcome'], nats: number, feature?: number): WeighedCompanion[] => [
       { finding: { ...base, outcome, ...(feature === undefined ? {} : { feature }) }, nats: SHARE * nats, sameUpper },
     ];
     if (expectedAt < survey.low || expectedAt > survey.high) return say('outside', 0);
-    if (Math.abs(expectedAt - mark.wavelength) < Math.max(mark.fwhm ?? 0, 2 * mark.wavelengthErr)) return [];
-    const found = nearestWithin(marks, expectedAt, (settings.toleranceKms / SPEED_OF_LIGHT_KMS) * expectedAt);
+    if (Math.abs(expectedAt - mark.wavelength) < mergedWithin(mark)) return [];
+    const there = nearestWithin(marks, expectedAt, (settings.toleranceKms / SPEED_OF_LIGHT_KMS) * expectedAt);
     const above = logPredicted - survey.logLimitAt(expectedAt);
-    if (found === undefined) {
+    if (there === undefined) {
       if (above <= 0) return say('too-faint', 0);
+      const near = nearestWithin(marks, expectedAt, mergedWithin(mark));
+      if (near !== undefined && Math.log10(marks[near].flux) > logPredicted - err) return say('hidden', 0, near);
       return say('absent', -Math.min(MOST_AGAINST, 0.5 * (above / Math.hypot(err, 0.1)) ** 2));
     }
-    const off = Math.log10(marks[found].flux) - logPredicted;
-    const fluxErr = Number.isFinite(marks[found].fluxErr) ? (Math.LOG10E * marks[found].fluxErr) / marks[found].flux : 0.05;
+    const off = Math.log10(marks[there].flux) - logPredicted;
+    const fluxErr = Number.isFinite(marks[there].fluxErr) ? (Math.LOG10E * marks[there].fluxErr) / marks[there].flux : 0.05;
     const s = Math.hypot(err, fluxErr, 0.03);
     if (Math.abs(off) <= 3 * s)
-      return say('seen', Math.min(MOST_FOR, Math.log((3 * Math.exp(-0.5 * (off / s) ** 2)) / (s * Math.sqrt(2 * Math.PI)))), found);
+      return say('seen', Math.min(MOST_FOR, Math.log((3 * Math.exp(-0.5 * (off / s) ** 2)) / (s * Math.sqrt(2 * Math.PI)))), there);
     // something stronger stands there: the companion may hide in it
-    if (off > 0) return say('hidden', 0, found);
-    return say('wrong-ratio', -Math.min(MOST_AGAINST, 0.5 * (off / s) ** 2 * 0.3), found);
+    if (off > 0) return say('hidden', 0, there);
+    return say('wrong-ratio', -Math.min(MOST_AGAINST, 0.5 * (off / s) ** 2 * 0.3), there);
   });
+  return together(found);
 }
+
+/** Those that speak against fail for one reason together: their sum is held. */
+function together(found: readonly WeighedCompanion[]): WeighedCompanion[] {
+  const against = -found.reduce((sum, c) => sum + Math.min(0, c.nats), 0);
+  if (against <= MOST_AGAINST_TOGETHER) return [...found];
+  return found.map((c) => (c.nats < 0 ? { ...c, nats: (c.nats * MOST_AGAINST_TOGETHER) / against } : c));
+}
+
+/** Lines nearer to a mark than this are measured with it, Angstrom. */
+const mergedWithin = (mark: Mark) => mark.fwhm ?? UNRESOLVED_SIGMAS * mark.wavelengthErr;
 
 function nearestWithin(marks: readonly Mark[], at: number, reach: number): number | undefined {
   let best: number | undefined;

@@ -15,6 +15,8 @@ export function evidenceOf(mark: Mark, weighed: Weighed, companions: readonly We
     if (finding.outcome === 'outside' || finding.outcome === 'too-faint') continue;
     evidence.push({ kind: 'companion', nats, sentence: companionSentence(mark, finding, sameUpper, data) });
   }
+  if (Math.abs(weighed.owedNats) > 0.05) evidence.push({ kind: 'ion', nats: weighed.owedNats, sentence: owedSentence(weighed, data) });
+  else evidence[1] = { ...evidence[1], nats: evidence[1].nats + weighed.owedNats };
   evidence.push({ kind: 'prior', nats: weighed.priorNats, sentence: priorSentence(weighed) });
   return evidence;
 }
@@ -62,6 +64,11 @@ function companionSentence(
 function priorSentence({ lines, priorNats }: Weighed): string {
   const blend = lines.length > 1 ? ` and a blend of ${lines.length} is less common than one line` : '';
   return `Few real lines are missing from the list${blend}${priorNats < 0 ? '; another feature claims this line with better right' : ''}.`;
+}
+
+function owedSentence({ lines }: Weighed, data: AtomicData): string {
+  const names = [...new Set(lines.map((line) => ionName(data, line)))].join(' and ');
+  return `The other lines of ${names} predict a line here above the detection limit; no other feature can be it.`;
 }
 
 const signed = (value: number, digits = 1) => `${value < 0 ? '−' : '+'}${Math.abs(value).toFixed(digits)}`;

@@ -1,5 +1,5 @@
 import { type AtomicData, linesBetween } from '../atomic/index.ts';
-import { median, quantile } from '../numeric/index.ts';
+import { median, normalTail, quantile } from '../numeric/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import { type Absence, fitScale, type IonScale, priorMeans, type Sighting } from './ionScales.ts';
 import { predictedLog, type SystemModel, strengthErr } from './model.ts';
@@ -20,6 +20,8 @@ export interface Weighed {
   readonly wavelengthNats: number;
   readonly strengthNats: number;
   readonly priorNats: number;
+  /** What the place owes: a line that the rest of the spectrum predicts here, that no other feature can be, is missing if this name is wrong. */
+  readonly owedNats: number;
   /** Weighted number of other lines of the (main) ion that were seen. */
   readonly ionSeen: number;
   readonly probability: number;
@@ -59,6 +61,10 @@ const LOCAL_PRIOR = Math.log(0.2);
 /** Far outliers in strength happen (fluorescence, variability): the normal is given a floor of a wide one. */
 const WIDE_SHARE = 0.05;
 const WIDE_DEX = 1.2;
+/** Centroids have outliers too: unseen blends, underestimated errors. */
+const OUTLIER_SHARE = 0.02;
+const OUTLIER_SIGMAS = 3;
+const MOST_OWED = 5;
 
 /** Expectation-maximisation over names, ion scales, flux zero, reddening, velocity and dispersion. */
 export function infer(
@@ -258,6 +264,8 @@ interface Single extends Option {
   readonly logPredicted: number;
   readonly err: number;
   readonly seen: number;
+  /** Nats against every name of the mark that leaves this line out. */
+  readonly owed: number;
 }
 
 function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
@@ -272,15 +280,9 @@ function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
     cache.set(ion, scale);
     return scale;
   };
-  const singles = optionsOf(mark, data, settings, model.z, model.dispersionKms).map((option): Single => {
-    const scale = scaleWithout(data.lines.ion[option.line]);
-    return {
-      ...option,
-      logPredicted: predictedLog(data, option.line, model) + scale.mean,
-      err: Math.hypot(strengthErr(data, option.line), Math.sqrt(scale.variance)),
-      seen: scale.seen,
-    };
-  });
+  const singles = optionsOf(mark, data, settings, model.z, model.dispersionKms).map((option) =>
+    single(mark, j, option, context, scaleWithout),
+  );
   const names = [...singles.map((s) => [s]), ...blendsOf(mark, singles)].filter((parts) => !rule.not.some((not) => sameLines(not, parts)));
   const forced = rule.lines;
   if (forced) {
@@ -300,7 +302,30 @@ function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
   };
 }
 
-const logOdds = (w: Weighed) => w.wavelengthNats + w.strengthNats + w.priorNats;
+const logOdds = (w: Weighed) => w.wavelengthNats + w.strengthNats + w.priorNats + w.owedNats;
+
+function single(mark: Mark, j: number, option: Option, context: WeighContext, scaleOf: (ion: number) => IonScale): Single {
+  const { data, model } = context;
+  const scale = scaleOf(data.lines.ion[option.line]);
+  const logPredicted = predictedLog(data, option.line, model) + scale.mean;
+  const err = Math.hypot(strengthErr(data, option.line), Math.sqrt(scale.variance));
+  return { ...option, logPredicted, err, seen: scale.seen, owed: owedBy(mark, j, option, logPredicted, err, context) };
+}
+
+/** A line may hide as a part of a feature when it carries less than this share. */
+const HIDDEN_SHARE = 0.15;
+/** Predictions fail for reasons no model holds: a line is absent with at least this probability. */
+const LEAST_ABSENT = 0.01;
+
+/** Minus the logarithm of the chance that the line is too faint to be seen, hides in the mark, or is another mark. */
+function owedBy(mark: Mark, j: number, option: Option, logPredicted: number, err: number, { data, survey, claims }: WeighContext): number {
+  if (mark.flux <= 0 || isLocal(data, option.line)) return 0;
+  const hiding = Math.max(survey.logLimitAt(mark.wavelength), Math.log10(HIDDEN_SHARE * mark.flux));
+  const unseen = Math.max(LEAST_ABSENT, normalTail((logPredicted - hiding) / err));
+  const claim = claims.get(option.line);
+  const elsewhere = claim ? (claim.mark === j ? claim.second : claim.probability) : 0;
+  return -Math.log(elsewhere + (1 - elsewhere) * unseen);
+}
 
 const sameLines = (a: readonly number[], parts: readonly Single[]) => a.length === parts.length && parts.every((p) => a.includes(p.line));
 
@@ -316,6 +341,7 @@ function farSingle(mark: Mark, line: number, context: WeighContext, scaleOf: (io
     logPredicted: predictedLog(data, line, model) + scale.mean,
     err: Math.hypot(strengthErr(data, line), Math.sqrt(scale.variance)),
     seen: scale.seen,
+    owed: 0,
   };
 }
 
@@ -369,7 +395,13 @@ function score(mark: Mark, j: number, parts: readonly Single[], context: WeighCo
   const excess = Math.log10(Math.abs(mark.flux)) - logPredicted;
   const normal = (x: number, s: number) => Math.exp(-0.5 * (x / s) ** 2) / (s * Math.sqrt(2 * Math.PI));
   // rates per Angstrom and dex: the line's against that of strangers
-  const wavelengthNats = Math.log(Math.max(1e-12, normal(off, sigma))) - Math.log(1 / (survey.high - survey.low));
+  const wavelengthNats =
+    Math.log((1 - OUTLIER_SHARE) * normal(off, sigma) + OUTLIER_SHARE * normal(off, OUTLIER_SIGMAS * sigma)) +
+    Math.log(survey.high - survey.low);
+  const owedNats = Math.min(
+    MOST_OWED,
+    sorted.reduce((sum, p) => sum + p.owed, 0),
+  );
   const strengthNats =
     Math.log((1 - WIDE_SHARE) * normal(excess, err) + WIDE_SHARE * normal(excess, Math.hypot(err, WIDE_DEX))) - Math.log(1 / 3);
   // the rates of strangers were put as one a spectrum and three dex: their true number makes the rest
@@ -392,6 +424,7 @@ function score(mark: Mark, j: number, parts: readonly Single[], context: WeighCo
     wavelengthNats,
     strengthNats,
     priorNats,
+    owedNats,
     ionSeen: sorted[0].seen,
     probability: 0,
   };
