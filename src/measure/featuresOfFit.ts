@@ -4,8 +4,11 @@ import { type FitSamples, firstAtLeast, type GroupFit } from './fitGroup.ts';
 import type { LineSpread } from './lineSpread.ts';
 import { gaussianInto } from './profile.ts';
 
-/** A fitted line narrower than this share of the usual width is no line of the instrument. */
+/** A fitted line narrower than this share of the usual width is no line of the instrument ... */
 const TOO_NARROW = 0.5;
+/** ... nor one below this share that is narrower by so many of its own errors (two neighbouring samples hit by one cosmic ray). */
+const RATHER_NARROW = 0.8;
+const NARROW_SIGMA = 6;
 /** A line is called resolved when it is wider than the instrument by this many of its own errors. */
 const RESOLVED_SIGMA = 2;
 
@@ -33,7 +36,7 @@ export function featuresOfFit(samples: FitSamples, fit: GroupFit, facts: FitFact
     const fwhmErr = fwhm * err(3 * k + 2);
     const fluxErr = err(3 * k);
     const ew = continuum > 0 ? flux / continuum : Number.NaN;
-    const narrow = fwhm < (TOO_NARROW * centre) / facts.spread.resolvingPower;
+    const narrow = isTooNarrow(fwhm, fwhmErr, centre, facts.spread);
     return [
       {
         index: 0,
@@ -58,6 +61,11 @@ export function featuresOfFit(samples: FitSamples, fit: GroupFit, facts: FitFact
       },
     ];
   });
+}
+
+function isTooNarrow(fwhm: number, fwhmErr: number, centre: number, spread: LineSpread): boolean {
+  const share = (fwhm * spread.resolvingPower) / centre;
+  return share < TOO_NARROW || (share < RATHER_NARROW && -Math.log(share) > NARROW_SIGMA * Math.hypot(fwhmErr / fwhm, spread.spread));
 }
 
 /** One sigma of the flux at fixed shape: the noise under the profile. */
