@@ -36,6 +36,8 @@ const PRIOR_SPREAD_DEX = 0.9;
 const KERNEL_WIDTH = 0.35;
 const KERNEL_PRIOR_WEIGHT = 1.5;
 const CENSOR_ROUNDS = 12;
+/** Chance that a line above the limit is not among the marks all the same. */
+const LEFT_OUT = 0.05;
 
 /** Prior mean of every ion: the kind of object, and what ions of about the same creation energy show. */
 export function priorMeans(data: AtomicData, kind: ObjectKind, scales: readonly IonScale[], local: Uint8Array): Float64Array {
@@ -81,8 +83,9 @@ export function fitScale(priorMean: number, sightings: readonly Sighting[], abse
     for (const a of absences) {
       const alpha = (a.room - mean) / a.err;
       if (alpha > 3) continue;
-      const below = Math.max(1e-300, normalTail(-alpha));
-      const hazard = alpha < -25 ? -alpha : Math.exp(-0.5 * alpha * alpha) / (Math.sqrt(2 * Math.PI) * below);
+      // an observer's list leaves lines out for other reasons too: that floor keeps one absence from ruling the scale
+      const density = Math.exp(-0.5 * alpha * alpha) / Math.sqrt(2 * Math.PI);
+      const hazard = ((1 - LEFT_OUT) * density) / (LEFT_OUT + (1 - LEFT_OUT) * normalTail(-alpha));
       // expectation of the unseen flux below its limit; its information falls as the limit moves away
       const expected = mean - a.err * hazard;
       const p = Math.min(1, Math.max(0.02, hazard * (hazard + alpha))) / (a.err * a.err);

@@ -29,9 +29,12 @@ export function predictedLog(data: AtomicData, line: number, model: SystemModel)
 
 /** Scatter of a line's flux about the prediction beyond the list's own error, dex: other temperature, density, calibration. */
 const MODEL_SCATTER_DEX = 0.12;
+/** Collisionally excited lines also move with temperature and density. */
+const COLLISIONAL_SCATTER_DEX = 0.2;
 
 export const strengthErr = (data: AtomicData, line: number): number => {
   if (!Number.isFinite(data.lines.logStrength[line])) return UNKNOWN_ERR_DEX;
   const own = data.lines.strengthErrDex[line];
-  return Math.hypot(Number.isFinite(own) ? own : 0.5, MODEL_SCATTER_DEX);
+  const model = data.lines.mechanism(line) === 'collisional' ? COLLISIONAL_SCATTER_DEX : MODEL_SCATTER_DEX;
+  return Math.hypot(Number.isFinite(own) ? own : 0.5, model);
 };

@@ -1,26 +1,17 @@
 import type { AtomicData } from '../atomic/index.ts';
 import type { Remark } from '../problems/index.ts';
-import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
-import { findCompanions, type Kin, kinOf, missingLines } from './companions.ts';
-import { evidenceOf } from './evidence.ts';
-import { type Inferred, infer, type Weighed } from './inference.ts';
-import { predictedLog, type SystemModel } from './model.ts';
-import type { Candidate, Evidence, FeatureNaming, FixedName, Mark, Naming, NamingSettings } from './naming.ts';
-import { isLocal } from './options.ts';
+import { caseOf } from './caseOf.ts';
+import { kinOf, missingLines } from './companions.ts';
+import { infer } from './inference.ts';
+import { predictedLog } from './model.ts';
+import type { FixedName, Mark, Naming, NamingSettings } from './naming.ts';
 import { findRedshift } from './redshift.ts';
-import { type Survey, surveyOf } from './survey.ts';
+import { surveyOf } from './survey.ts';
 
 export interface NamingControl {
   readonly progress?: (share: number) => void;
   readonly signal?: AbortSignal;
 }
-
-/** Candidates shown for a feature: at most so many, always the first few (a referee wants to see what was turned down), the rest only when they are not hopeless. */
-const MOST_CANDIDATES = 8;
-const ALWAYS_SHOWN = 4;
-const LEAST_PROBABILITY = 1e-4;
-/** Candidates whose companions are looked for: the others cannot win. */
-const MOST_WEIGHED = 8;
 
 /**
  * Names every mark jointly: redshift, ion scales, reddening and dispersion are estimated with the assignments.
@@ -96,81 +87,3 @@ const emptyNaming = (settings: NamingSettings, remarks: readonly Remark[]): Nami
   remarks,
   missing: [],
 });
-
-function caseOf(
-  mark: Mark,
-  k: number,
-  marks: readonly Mark[],
-  inferred: Inferred,
-  kin: Kin,
-  data: AtomicData,
-  survey: Survey,
-  settings: NamingSettings,
-  forced: boolean,
-): FeatureNaming {
-  const { candidates, noneProbability } = inferred.weighings[k];
-  if (candidates.length === 0) return { candidates: [], noneProbability };
-  const detailed = candidates.slice(0, MOST_WEIGHED).map((weighed) => {
-    const companions =
-      isLocal(data, weighed.lines[0]) || mark.flux <= 0
-        ? []
-        : findCompanions(mark, weighed.lines[0], weighed.shares[0], marks, kin, data, survey, inferred.model, settings);
-    return { weighed, companions, evidence: evidenceOf(mark, weighed, companions, data) };
-  });
-  const odds = detailed.map(({ evidence }) => total(evidence));
-  const top = Math.max(0, ...odds);
-  const weights = odds.map((o) => Math.exp(o - top));
-  const none = forced ? 0 : Math.exp(-top);
-  const sum = weights.reduce((a, b) => a + b, none);
-  const shown = detailed
-    .map(
-      ({ weighed, companions, evidence }, i): Candidate =>
-        candidateOf(
-          mark,
-          weighed,
-          evidence,
-          companions.map((c) => c.finding),
-          weights[i] / sum,
-          inferred.model,
-          data,
-        ),
-    )
-    .sort((a, b) => b.probability - a.probability);
-  if (forced)
-    return {
-      candidates: shown.map((c) => ({
-        ...c,
-        evidence: [...c.evidence, { kind: 'verdict', nats: 0, sentence: 'You accepted this name.' }],
-      })),
-      noneProbability: 0,
-    };
-  return {
-    candidates: shown.slice(0, MOST_CANDIDATES).filter((c, i) => i < ALWAYS_SHOWN || c.probability >= LEAST_PROBABILITY),
-    noneProbability: none / sum,
-  };
-}
-
-const total = (evidence: readonly Evidence[]) => evidence.reduce((sum, e) => sum + e.nats, 0);
-
-function candidateOf(
-  mark: Mark,
-  weighed: Weighed,
-  evidence: readonly Evidence[],
-  companions: Candidate['companions'],
-  probability: number,
-  model: SystemModel,
-  data: AtomicData,
-): Candidate {
-  const local = isLocal(data, weighed.lines[0]);
-  const systemic = local ? 0 : model.z;
-  const rest = (mark.wavelength - weighed.off) / (1 + systemic);
-  return {
-    lines: weighed.lines,
-    shares: weighed.shares,
-    probability,
-    velocityKms: (mark.wavelength / rest - 1) * SPEED_OF_LIGHT_KMS,
-    velocityErrKms: (Math.hypot(mark.wavelengthErr, data.lines.wavelengthErr[weighed.lines[0]]) / rest) * SPEED_OF_LIGHT_KMS,
-    evidence,
-    companions,
-  };
-}

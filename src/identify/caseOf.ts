@@ -1,0 +1,127 @@
+import type { AtomicData } from '../atomic/index.ts';
+import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
+import { findCompanions, type Kin } from './companions.ts';
+import { evidenceOf } from './evidence.ts';
+import type { Inferred, Weighed } from './inference.ts';
+import type { SystemModel } from './model.ts';
+import type { Candidate, CompanionFinding, Evidence, FeatureNaming, Mark, NamingSettings } from './naming.ts';
+import { isLocal } from './options.ts';
+import type { Survey } from './survey.ts';
+
+/** Candidates shown for a feature: at most so many, always the first few (a referee wants to see what was turned down), the rest only when they are not hopeless. */
+const MOST_CANDIDATES = 8;
+const ALWAYS_SHOWN = 4;
+const LEAST_PROBABILITY = 1e-4;
+/** Names whose companions are looked for: the others cannot win. */
+const MOST_WEIGHED = 14;
+
+/** A weighed name with its evidence. */
+interface Version {
+  readonly weighed: Weighed;
+  readonly companions: readonly CompanionFinding[];
+  readonly evidence: readonly Evidence[];
+  readonly odds: number;
+}
+
+/**
+ * The case of one mark. Names with the same leading line (the line alone, or with fainter neighbours blended in) are versions of one candidate: the best
+ * stands for them with their joint probability, that of the feature being this line in the main.
+ *
+ * @param k      the mark's place in `marks`
+ * @param marks  ascending wavelength
+ * @param forced the user accepted the (only) name
+ */
+export function caseOf(
+  mark: Mark,
+  k: number,
+  marks: readonly Mark[],
+  inferred: Inferred,
+  kin: Kin,
+  data: AtomicData,
+  survey: Survey,
+  settings: NamingSettings,
+  forced: boolean,
+): FeatureNaming {
+  const { candidates, noneProbability } = inferred.weighings[k];
+  if (candidates.length === 0) return { candidates: [], noneProbability };
+  const { model } = inferred;
+  const versions = candidates
+    .slice(0, MOST_WEIGHED)
+    .map((weighed): Version => {
+      const looked = !isLocal(data, weighed.lines[0]) && mark.flux > 0;
+      const companions = looked ? findCompanions(mark, weighed.lines[0], weighed.shares[0], marks, kin, data, survey, model, settings) : [];
+      const evidence = evidenceOf(mark, weighed, companions, data);
+      return { weighed, companions: companions.map((c) => c.finding), evidence, odds: evidence.reduce((sum, e) => sum + e.nats, 0) };
+    })
+    .sort((a, b) => b.odds - a.odds);
+  if (forced) {
+    const [only] = versions;
+    const accepted: Evidence = { kind: 'verdict', nats: 0, sentence: 'You accepted this name.' };
+    return { candidates: [candidateOf(mark, { ...only, evidence: [...only.evidence, accepted] }, 1, model, data)], noneProbability: 0 };
+  }
+  const joined = joinVersions(versions, data);
+  const top = Math.max(0, ...joined.map((v) => v.odds));
+  const none = Math.exp(-top);
+  const weights = joined.map((v) => Math.exp(v.odds - top));
+  const sum = weights.reduce((a, b) => a + b, none);
+  return {
+    candidates: joined
+      .map((version, i) => candidateOf(mark, version, weights[i] / sum, model, data))
+      .sort((a, b) => b.probability - a.probability)
+      .slice(0, MOST_CANDIDATES)
+      .filter((c, i) => i < ALWAYS_SHOWN || c.probability >= LEAST_PROBABILITY),
+    noneProbability: none / sum,
+  };
+}
+
+/** @param versions best first */
+function joinVersions(versions: readonly Version[], data: AtomicData): Version[] {
+  const groups: Version[][] = [];
+  for (const version of versions) {
+    const group = groups.find(([best]) => isOneName(best.weighed, version.weighed, data));
+    if (group) group.push(version);
+    else groups.push([version]);
+  }
+  return groups.map((group) => {
+    const [best, ...others] = group;
+    const gain = Math.log(group.reduce((sum, v) => sum + Math.exp(v.odds - best.odds), 0));
+    if (others.length === 0) return best;
+    const more: Evidence = {
+      kind: 'prior',
+      nats: gain,
+      sentence: `The same line fits in ${others.length} other ${others.length === 1 ? 'way' : 'ways'}, alone or with fainter neighbours; they count together.`,
+    };
+    return { ...best, evidence: [...best.evidence, more], odds: best.odds + gain };
+  });
+}
+
+/** Same leading line, or leading lines of one multiplet that this mark cannot tell apart. */
+function isOneName(a: Weighed, b: Weighed, { lines }: AtomicData): boolean {
+  const [p] = a.lines;
+  const [q] = b.lines;
+  if (p === q) return true;
+  if (lines.ion[p] !== lines.ion[q]) return false;
+  const kin = (lines.multiplet[p] > 0 && lines.multiplet[p] === lines.multiplet[q]) || lines.upperId[p] === lines.upperId[q];
+  return kin && Math.abs(lines.wavelengthVac[p] - lines.wavelengthVac[q]) < Math.min(a.sigma, b.sigma);
+}
+
+function candidateOf(
+  mark: Mark,
+  { weighed, evidence, companions }: Version,
+  probability: number,
+  model: SystemModel,
+  data: AtomicData,
+): Candidate {
+  const local = isLocal(data, weighed.lines[0]);
+  const systemic = local ? 0 : model.z;
+  const rest = (mark.wavelength - weighed.off) / (1 + systemic);
+  return {
+    lines: weighed.lines,
+    shares: weighed.shares,
+    probability,
+    velocityKms: (mark.wavelength / rest - 1) * SPEED_OF_LIGHT_KMS,
+    velocityErrKms: (Math.hypot(mark.wavelengthErr, data.lines.wavelengthErr[weighed.lines[0]]) / rest) * SPEED_OF_LIGHT_KMS,
+    evidence,
+    companions,
+  };
+}
