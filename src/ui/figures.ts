@@ -2,11 +2,14 @@ import { decimals, significant } from '../report/index.ts';
 
 const MINUS = '−';
 const UNKNOWN = '–';
+const MOST_DECIMALS = 7;
+/** A wavelength in Angstrom is never known better than this on screen. */
+const MOST_WAVELENGTH_DECIMALS = 4;
 
 /** Decimals that show two significant digits of an error. */
-export function decimalsOf(err: number | undefined, otherwise: number): number {
+export function decimalsOf(err: number | undefined, otherwise: number, most = MOST_DECIMALS): number {
   if (err === undefined || !(err > 0) || !Number.isFinite(err)) return otherwise;
-  return Math.min(6, Math.max(0, 1 - Math.floor(Math.log10(err))));
+  return Math.min(most, Math.max(0, 1 - Math.floor(Math.log10(err))));
 }
 
 /** "5006.843"; a dash when unknown. */
@@ -16,11 +19,14 @@ export const fixed = (value: number | undefined, digits: number) => (decimals(va
 export const round = (value: number | undefined, digits: number) => (significant(value, digits) || UNKNOWN).replace(/^-/, MINUS);
 
 /** "5006.843 ± 0.012", decimals after the error; only the value when there is no error. */
-export function withError(value: number | undefined, err: number | undefined, otherwise: number): string {
-  const digits = decimalsOf(err, otherwise);
+export function withError(value: number | undefined, err: number | undefined, otherwise: number, most = MOST_DECIMALS): string {
+  const digits = decimalsOf(err, otherwise, most);
   const shown = fixed(value, digits);
   return err !== undefined && Number.isFinite(err) ? `${shown} ± ${fixed(err, digits)}` : shown;
 }
+
+/** A wavelength with its error, Angstrom. */
+export const wavelengthText = (value: number, err: number | undefined) => withError(value, err, 2, MOST_WAVELENGTH_DECIMALS);
 
 /** "+31.2 ± 0.4", with its sign. */
 export function signed(value: number, err: number | undefined, otherwise: number): string {

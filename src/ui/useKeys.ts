@@ -5,6 +5,12 @@ import { isControl, strokeName, takesText } from './keyStrokes.ts';
 
 const OWN_KEYS = /^(Enter|Arrow)/;
 
+/** Leaves a field as it is: a search field would be emptied. */
+function leave(event: KeyboardEvent): void {
+  event.preventDefault();
+  if (event.target instanceof HTMLElement) event.target.blur();
+}
+
 /** Runs the command of a key stroke, unless the stroke belongs to what has the focus. */
 export function useKeys(): void {
   useEffect(() => {
@@ -13,7 +19,7 @@ export function useKeys(): void {
       const stroke = strokeName(event);
       const single = !stroke.startsWith('Mod+');
       if (takesText(event.target)) {
-        if (event.key === 'Escape' && event.target instanceof HTMLElement) event.target.blur();
+        if (event.key === 'Escape') leave(event);
         return;
       }
       if (single && !desk().singleKeys && event.key.length === 1) return;

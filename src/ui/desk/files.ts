@@ -1,6 +1,7 @@
 import { ProblemError, wordProblem } from '../../problems/index.ts';
 import { acceptedRows, TABLE_FORMATS, type TableFormatName } from '../../report/index.ts';
 import { readSession, writeSession } from '../../session/index.ts';
+import { tsvTable } from '../table/tsvTable.ts';
 import { words } from '../words.ts';
 import { desk, raiseAlert, setDesk } from './deskStore.ts';
 import { analyse, openFile, settled } from './engineRuns.ts';
@@ -47,7 +48,6 @@ export async function saveTable(name: TableFormatName): Promise<void> {
 export async function copyTable(): Promise<void> {
   const table = await tableToExport();
   if (!table) return;
-  const { tsvTable } = await import('../table/tsvTable.ts');
   await navigator.clipboard.writeText(tsvTable(table));
   setDesk({ status: words.export.copied });
 }

@@ -1,14 +1,16 @@
+import { flushSync } from 'react-dom';
 import { setDesk } from './deskStore.ts';
 
 /** Elements that a command puts the focus on. */
 export const FILTER_ID = 'table-filter';
 export const NOTE_ID = 'case-note';
 
-const focusSoon = (id: string) => requestAnimationFrame(() => document.getElementById(id)?.focus());
+const focusOn = (id: string) => document.getElementById(id)?.focus();
 
-export const focusFilter = () => focusSoon(FILTER_ID);
+export const focusFilter = () => focusOn(FILTER_ID);
 
+/** At once: the next letters that are typed are the note. */
 export function focusNote(): void {
-  setDesk({ tab: 'case' });
-  focusSoon(NOTE_ID);
+  flushSync(() => setDesk({ tab: 'case' }));
+  focusOn(NOTE_ID);
 }

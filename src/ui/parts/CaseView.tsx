@@ -1,7 +1,7 @@
 import { useChosenRow } from '../desk/chosen.ts';
 import { declareRow, reopenRow } from '../desk/decisions.ts';
 import type { DeskRow } from '../desk/deskRows.ts';
-import { fixed, fluxText, withError } from '../figures.ts';
+import { fixed, fluxText, wavelengthText, withError } from '../figures.ts';
 import { words } from '../words.ts';
 import { Candidates } from './Candidates.tsx';
 import { CloseUp } from './CloseUp.tsx';
@@ -25,7 +25,7 @@ export function CaseView() {
             <Mark standing={row.standing} /> {words.case.feature(row.feature.number)}
             <span className="standing">{words.standing[row.standing]}</span>
           </h2>
-          <p className="number case-place">{`${withError(row.feature.centroid, finite(row.feature.centroidErr), 2)} Å`}</p>
+          <p className="number case-place">{`${wavelengthText(row.feature.centroid, finite(row.feature.centroidErr))} Å`}</p>
         </div>
         <CommandButton name="next-feature">
           <Icon name="right" />

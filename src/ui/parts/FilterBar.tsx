@@ -1,3 +1,4 @@
+import { choose } from '../desk/chosen.ts';
 import { acceptNames } from '../desk/decisions.ts';
 import type { DeskRow } from '../desk/deskRows.ts';
 import { setDesk, useDesk } from '../desk/deskStore.ts';
@@ -24,6 +25,12 @@ export function FilterBar({ shown, all }: { shown: readonly DeskRow[]; all: numb
         placeholder={label.filter}
         value={filter.text ?? ''}
         onChange={(event) => change({ text: event.target.value })}
+        onKeyDown={(event) => {
+          if (event.key !== 'Enter' && event.key !== 'ArrowDown') return;
+          event.preventDefault();
+          event.currentTarget.blur();
+          if (shown[0]) choose(shown[0].index);
+        }}
       />
       <Choice label={label.nature} options={label.natures} value={filter.nature} choose={(nature) => change({ nature })} />
       <Choice

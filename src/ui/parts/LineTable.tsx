@@ -12,7 +12,11 @@ import { Mark, Ring } from './Mark.tsx';
 import { RowVerdict } from './RowVerdict.tsx';
 
 const ROW_PX = 28;
-const GRID = { gridTemplateColumns: [...TABLE_COLUMNS.map((column) => column.width), '64px'].join(' ') };
+const VERDICT_PX = 64;
+const GROWING = ['name', 'note'];
+const trackOf = ({ key, width }: TableColumn) => (GROWING.includes(key) ? `minmax(${width}px, 1fr)` : `${width}px`);
+const GRID = { gridTemplateColumns: [...TABLE_COLUMNS.map(trackOf), `${VERDICT_PX}px`].join(' ') };
+const LEAST_WIDTH = TABLE_COLUMNS.reduce((sum, { width }) => sum + width, VERDICT_PX);
 
 /** Every feature as a row: sorted, filtered, only what is in sight drawn. */
 export function LineTable() {
@@ -39,7 +43,7 @@ export function LineTable() {
     <section className="table" aria-label={words.table.label}>
       <FilterBar shown={shown} all={rows.length} />
       <div ref={scroller} className="table-scroll">
-        <table className="lines" aria-label={words.table.label} aria-rowcount={shown.length + 1}>
+        <table className="lines" style={{ minWidth: LEAST_WIDTH }} aria-label={words.table.label} aria-rowcount={shown.length + 1}>
           <thead>
             <tr style={GRID} aria-rowindex={1}>
               {TABLE_COLUMNS.map((column) => (

@@ -20,7 +20,7 @@ export const LANE_COUNT = LANES.length + 1;
 
 const MARGIN = { left: 64, right: 16, top: 4, bottom: 40 };
 const GAP = 8;
-const LANE = { least: 22, most: 28 };
+const LANE = { least: 23, most: 30 };
 const RESIDUAL = { least: 36, most: 72 };
 
 /** Shares `height` among the panels: the spectrum gets most of it. */

@@ -23,7 +23,7 @@ export interface Marks {
 }
 
 /** Middle of a label above its mark, in lanes. */
-const LABEL_RISE = 0.5;
+const LABEL_RISE = 0.44;
 /** Widest text that a label may have, in pixels a letter; measured on the interface font at 11 px. */
 const LETTER_PX = 6.1;
 

@@ -40,7 +40,7 @@ export interface DrawnWindow {
 }
 
 /** Height of a mark above the foot of its lane, in lanes. */
-const LANE_FOOT = 0.3;
+const LANE_FOOT = 0.28;
 /** Labels drawn across one width of the view. */
 const LABELS_IN_VIEW = 40;
 /** Fewer points than this a pixel of the window are drawn as steps: one level a sample. */
@@ -96,7 +96,7 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
         mode: 'markers',
         ...marks.rings,
         yaxis: 'y',
-        marker: { symbol: 'circle-open', size: 12, color: ink.ink, line: { width: 1 } },
+        marker: { symbol: 'circle-open', size: 10.5, color: ink.ink, line: { width: 1 } },
         hoverinfo: 'skip',
       },
       {
@@ -105,7 +105,7 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
         x: marks.x,
         y: marks.y,
         yaxis: 'y',
-        marker: { symbol: marks.symbol, size: 6, color: ink.ink, line: { width: 1.25, color: ink.ink } },
+        marker: { symbol: marks.symbol, size: 5.5, color: ink.ink, line: { width: 1.25, color: ink.ink } },
         hoverinfo: 'skip',
       },
       {
@@ -114,7 +114,7 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
         ...marks.labels,
         yaxis: 'y',
         textposition: 'middle center',
-        textfont: { size: 11, color: ink.ink, family: ink.font },
+        textfont: { size: 10.5, color: ink.ink, family: ink.font },
         hoverinfo: 'skip',
       },
     ],

@@ -1,5 +1,5 @@
 import { type DeskRow, thinGasOf } from '../desk/deskRows.ts';
-import { fixed, fluxText, powerText, probabilityText, round, signed, withError } from '../figures.ts';
+import { fixed, fluxText, powerText, probabilityText, round, signed, wavelengthText } from '../figures.ts';
 import { words } from '../words.ts';
 
 /** One column of the line table on the desk. */
@@ -7,8 +7,8 @@ export interface TableColumn {
   readonly key: string;
   readonly head: string;
   readonly unit: string;
-  /** CSS grid width. */
-  readonly width: string;
+  /** Pixels, at least: columns of words share what is left. */
+  readonly width: number;
   readonly numeric: boolean;
   readonly text: (row: DeskRow) => string;
   /** What it is sorted by; undefined goes last. */
@@ -20,86 +20,91 @@ const finite = (value: number | undefined) => (value !== undefined && Number.isF
 export const TABLE_COLUMNS: readonly TableColumn[] = [
   number(
     'number',
-    '48px',
+    48,
     '',
     (r) => String(r.feature.number),
     (r) => r.feature.number,
   ),
   number(
     'wavelength',
-    '136px',
+    152,
     'Å',
-    (r) => withError(r.feature.centroid, finite(r.feature.centroidErr), 2),
+    (r) => wavelengthText(r.feature.centroid, finite(r.feature.centroidErr)),
     (r) => r.feature.centroid,
   ),
   word(
     'name',
-    'minmax(148px, 1.4fr)',
+    176,
     (r) => r.name?.label ?? '',
     (r) => r.name?.label,
   ),
   number(
     'probability',
-    '84px',
+    84,
     '',
     (r) => probabilityText(r.name?.probability),
     (r) => r.name?.probability,
   ),
   word(
     'standing',
-    '104px',
+    104,
     (r) => words.standing[r.standing],
     (r) => r.standing,
   ),
   number(
     'flux',
-    '124px',
+    124,
     '',
     (r) => fluxText(r.feature.measured.flux, r.feature.measured.fluxErr),
     (r) => r.feature.measured.flux,
   ),
   number(
     'hBeta',
-    '72px',
+    72,
     '',
     (r) => round(r.printed.fluxHbeta100, 4),
     (r) => finite(r.printed.fluxHbeta100),
   ),
   number(
     'fwhm',
-    '100px',
+    100,
     'km/s',
     (r) => fixed(r.printed.fwhmKms, 1),
     (r) => finite(r.printed.fwhmKms),
   ),
   number(
     'snr',
-    '64px',
+    64,
     '',
     (r) => fixed(r.feature.measured.snr, 1),
     (r) => finite(r.feature.measured.snr),
   ),
   number(
     'velocity',
-    '112px',
+    112,
     'km/s',
     (r) => velocityText(r),
     (r) => finite(r.name?.velocityKms),
   ),
   number(
     'nCrit',
-    '96px',
+    96,
     'cm⁻³',
-    (r) => (r.name ? powerText(thinGasOf(r.name)?.nCrit, 2) : ''),
+    (r) => nCritText(r),
     (r) => finite(thinGasOf(r.name)?.nCrit),
   ),
   word(
     'note',
-    'minmax(96px, 1fr)',
+    112,
     (r) => r.note || r.printed.note,
     (r) => r.note || r.printed.note || undefined,
   ),
 ];
+
+const nCritText = (row: DeskRow) => {
+  const thinGas = thinGasOf(row.name);
+  return thinGas ? powerText(thinGas.nCrit, 2) : '';
+};
 
 function velocityText(row: DeskRow): string {
   return row.name && Number.isFinite(row.name.velocityKms) ? signed(row.name.velocityKms, finite(row.name.velocityErrKms), 1) : '';
@@ -107,7 +112,7 @@ function velocityText(row: DeskRow): string {
 
 function number(
   key: keyof typeof words.columns,
-  width: string,
+  width: number,
   unit: string,
   text: TableColumn['text'],
   order: TableColumn['order'],
@@ -115,6 +120,6 @@ function number(
   return { key, head: words.columns[key], unit, width, numeric: true, text, order };
 }
 
-function word(key: keyof typeof words.columns, width: string, text: TableColumn['text'], order: TableColumn['order']): TableColumn {
+function word(key: keyof typeof words.columns, width: number, text: TableColumn['text'], order: TableColumn['order']): TableColumn {
   return { key, head: words.columns[key], unit: '', width, numeric: false, text, order };
 }
