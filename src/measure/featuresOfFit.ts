@@ -8,7 +8,7 @@ import { gaussianInto } from './profile.ts';
 const TOO_NARROW = 0.5;
 /** ... nor one below this share that is narrower by so many of its own errors (two neighbouring samples hit by one cosmic ray). */
 const RATHER_NARROW = 0.8;
-const NARROW_SIGMA = 6;
+const NARROW_SIGMA = 5;
 /** A line is called resolved when it is wider than the instrument by this many of its own errors. */
 const RESOLVED_SIGMA = 2;
 

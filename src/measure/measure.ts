@@ -30,6 +30,8 @@ const FREE_SPREAD = 0.5;
 /** S/N of an isolated line whose width tells of the instrument. */
 const TELLING_SNR = 25;
 const MOST_TELLING = 60;
+/** Anything above this near it means that a line is not isolated. */
+const ISOLATED_SNR = 5;
 
 /**
  * Measures every emission and absorption feature of a spectrum.
@@ -59,6 +61,7 @@ export function measure(spectrum: Spectrum, settings: MeasureSettings, control: 
     state.samples.noise,
     state.samples.usable,
     sigmaInSamples(state.samples, spread.resolvingPower),
+    settings.thresholdSigma,
   );
   const peaks = findPeaks(snr, settings.thresholdSigma, settings.absorption);
   const windows = groupPeaks(
@@ -224,10 +227,10 @@ function learnLineSpread(state: Prepared, settings: MeasureSettings, spectrum: S
 
 function fitTellingLines(state: Prepared, power: number): { power: number; relativeErr: number }[] {
   const { samples } = state;
-  const snr = matchedFilter(samples.y, samples.noise, samples.usable, sigmaInSamples(samples, power));
+  const snr = matchedFilter(samples.y, samples.noise, samples.usable, sigmaInSamples(samples, power), ISOLATED_SNR);
   const peaks = findPeaks(snr, TELLING_SNR, false);
   const fwhmAt = (i: number) => (FWHM_PER_SIGMA * sigmaAt(power, samples.x[i])) / samples.sampleWidth[i];
-  const isolated = groupPeaks(findPeaks(snr, 5, false), fwhmAt, samples.x.length).filter((w) => w.peaks.length === 1);
+  const isolated = groupPeaks(findPeaks(snr, ISOLATED_SNR, false), fwhmAt, samples.x.length).filter((w) => w.peaks.length === 1);
   const telling = isolated.filter((w) => peaks.some((p) => p.at === w.peaks[0].at)).sort((a, b) => b.peaks[0].snr - a.peaks[0].snr);
   const width: WidthPrior = { sigmaAt: (w) => sigmaAt(power, w), spread: FREE_SPREAD };
   return telling.slice(0, MOST_TELLING).flatMap((w) => {
