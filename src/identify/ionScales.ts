@@ -37,7 +37,9 @@ const KERNEL_WIDTH = 0.35;
 const KERNEL_PRIOR_WEIGHT = 1.5;
 const CENSOR_ROUNDS = 12;
 /** Chance that a line above the limit is not among the marks all the same. */
-const LEFT_OUT = 0.05;
+const LEFT_OUT = 0.08;
+/** ... and that chance falls by ten for every so many dex that the line should stand above the limit. */
+const LEFT_OUT_DEX = 0.7;
 
 /** Prior mean of every ion: the kind of object, and what ions of about the same creation energy show. */
 export function priorMeans(data: AtomicData, kind: ObjectKind, scales: readonly IonScale[], local: Uint8Array): Float64Array {
@@ -85,7 +87,8 @@ export function fitScale(priorMean: number, sightings: readonly Sighting[], abse
       if (alpha > 3) continue;
       // an observer's list leaves lines out for other reasons too: that floor keeps one absence from ruling the scale
       const density = Math.exp(-0.5 * alpha * alpha) / Math.sqrt(2 * Math.PI);
-      const hazard = ((1 - LEFT_OUT) * density) / (LEFT_OUT + (1 - LEFT_OUT) * normalTail(-alpha));
+      const leftOut = round < CENSOR_ROUNDS / 2 ? 1e-9 : LEFT_OUT * 10 ** (Math.min(0, a.room - mean) / LEFT_OUT_DEX);
+      const hazard = ((1 - leftOut) * density) / (leftOut + (1 - leftOut) * normalTail(-alpha));
       // expectation of the unseen flux below its limit; its information falls as the limit moves away
       const expected = mean - a.err * hazard;
       const p = Math.min(1, Math.max(0.02, hazard * (hazard + alpha))) / (a.err * a.err);
@@ -94,7 +97,7 @@ export function fitScale(priorMean: number, sightings: readonly Sighting[], abse
       total += p;
     }
     const next = m / total;
-    if (Math.abs(next - mean) < 1e-4) {
+    if (round > CENSOR_ROUNDS / 2 && Math.abs(next - mean) < 1e-4) {
       mean = next;
       break;
     }
