@@ -10,6 +10,13 @@ export interface ByteSource {
   read(start: number, end: number): Promise<Uint8Array>;
 }
 
+/** A readable fact of how a file was read: `fact` names it, `value` says it, `reason` where it comes from. */
+export interface Fact {
+  readonly fact: string;
+  readonly value: string;
+  readonly reason: string;
+}
+
 /** What the user chose about how a file is to be read; absent = the reader proposes. All of it can be stored and undone. */
 export interface ReadingChoices {
   /** FITS header-data unit, 0 = primary. */
@@ -23,8 +30,23 @@ export interface ReadingChoices {
   readonly fluxColumn?: string;
   /** A column name, or 'none'. */
   readonly errorColumn?: string;
-  readonly wavelengthUnit?: 'Angstrom' | 'nm' | 'um';
+  /** What `errorColumn` holds, where its name does not tell. */
+  readonly errorMeaning?: 'sigma' | 'variance' | 'ivar' | 'relative';
+  /** A column name, or 'none'. */
+  readonly maskColumn?: string;
+  /** Which values of `maskColumn` mark samples that must not be used. */
+  readonly maskMeaning?: 'nonzero-bad' | 'zero-bad';
+  /** Of the stored numbers; the longer names serve frequencies, energies, wavenumbers and logarithms. */
+  readonly wavelengthUnit?: 'Angstrom' | 'nm' | 'um' | 'mm' | 'cm' | 'm' | 'Hz' | 'GHz' | 'THz' | 'eV' | 'keV' | 'cm-1' | 'log10 Angstrom';
   readonly medium?: Medium;
+  /** Band of a stack that also has orders, from 1. */
+  readonly band?: number;
+  /** All rows or orders in one spectrum, cut at the middle of each overlap. */
+  readonly merge?: boolean;
+  /** A flux that stands for "no measurement", e.g. -999. */
+  readonly missingValue?: number;
+  /** Velocity in km/s to correct the wavelengths by: each is multiplied by 1 + v/c. Absent = wavelengths as stored. */
+  readonly velocityCorrectionKms?: number;
 }
 
 /** A choice the file offers besides the one taken: another HDU, row, order or column. */
@@ -40,9 +62,13 @@ export interface Reading {
   /** False when neither file nor user says air or vacuum: `spectrum.medium` is then an assumption (a remark says which and why) and the user is asked. */
   readonly mediumStated: boolean;
   /** Readable facts in order: format, HDU, columns, units, medium, frame; `fact` names it, `value` says it, `reason` where it comes from. */
-  readonly how: readonly { readonly fact: string; readonly value: string; readonly reason: string }[];
+  readonly how: readonly Fact[];
   readonly offers: readonly Offer[];
   readonly remarks: readonly Remark[];
+  /** Columns the user can choose from; absent when the file has none. */
+  readonly columns?: readonly { readonly name: string; readonly unit: string; readonly role: string }[];
+  /** Frame the wavelengths are in, where the file says it: FITS SPECSYS or words like "rest frame". */
+  readonly frame?: string;
   /** The choices that would give this reading again. */
   readonly choices: ReadingChoices;
 }
