@@ -1,4 +1,4 @@
-import type { Progress, SamplesView, WorkerAnswer, WorkerRequest } from '../engine/index.ts';
+import type { LineRecord, LineSearchResult, Progress, SamplesView, WorkerAnswer, WorkerRequest } from '../engine/index.ts';
 import type { Problem } from '../problems/index.ts';
 import type { Settings, Verdict } from '../session/index.ts';
 
@@ -20,6 +20,10 @@ export type Analysed = Omit<Extract<WorkerAnswer, { say: 'analysed' }>, 'say' | 
 export interface WorkerClient {
   open(file: Blob, name: string, kind: 'spectrum' | 'line-list' | 'guess'): Promise<'spectrum' | 'line-list'>;
   analyse(settings: Settings, verdicts: readonly Verdict[]): Promise<Analysed>;
+  /** Looks into the line list: ion, wavelength in air, words of the multiplet, in any order. */
+  searchLines(query: string): Promise<LineSearchResult>;
+  /** All the list holds of one line; critical density at `te`, K. */
+  lineRecord(line: number, te: number): Promise<LineRecord>;
   /** Ends the thread: what is pending rejects with `Cancelled`; whoever calls next has to open the file again. */
   cancel(): void;
 }
@@ -92,6 +96,16 @@ export function workerClient(bundleUrl: string, progress: (p: Progress) => void,
       if (answer.say !== 'analysed') throw new TypeError(`analyse was answered by ${answer.say}`);
       if (answer.samples || answer.samplesStamp !== samples.stamp) samples = { samples: answer.samples, stamp: answer.samplesStamp };
       return { analysis: answer.analysis, samples: samples.samples, samplesStamp: answer.samplesStamp };
+    },
+    async searchLines(query) {
+      const answer = await post(await running(), { ask: 'lines', query });
+      if (answer.say !== 'lines') throw new TypeError(`lines was answered by ${answer.say}`);
+      return answer.result;
+    },
+    async lineRecord(line, te) {
+      const answer = await post(await running(), { ask: 'record', line, te });
+      if (answer.say !== 'record') throw new TypeError(`record was answered by ${answer.say}`);
+      return answer.record;
     },
     cancel: () => end(new Cancelled()),
   };

@@ -7,7 +7,7 @@ import type { RowFilter } from '../table/rowFilter.ts';
 import type { Sorting } from '../table/sortRows.ts';
 import type { DeskRow } from './deskRows.ts';
 
-export type Tab = 'case' | 'settings' | 'reading' | 'history' | 'keys';
+export type Tab = 'case' | 'settings' | 'reading' | 'list' | 'history' | 'keys';
 export type Frame = 'observed' | 'rest';
 export type Theme = 'system' | 'light' | 'dark';
 export type ShownAnalysis = Omit<Analysis, 'samples'>;

@@ -22,6 +22,9 @@ function client(): WorkerClient {
   return made;
 }
 
+/** The thread for questions about the line list. */
+export const listClient = (): Pick<WorkerClient, 'searchLines' | 'lineRecord'> => client();
+
 /** Bytes at hand, by `sourceKey`. */
 const files = new Map<string, Blob>();
 /** Key of the source the worker holds. */
@@ -149,7 +152,8 @@ export async function settled(): Promise<void> {
   if (desk().outOfDate) await analyse();
 }
 
-function tell(error: unknown): void {
+/** Shows what went wrong; a run that the user stopped is no error. */
+export function tell(error: unknown): void {
   if (error instanceof Cancelled) setDesk({ status: words.run.cancelled });
   else if (error instanceof AnsweredProblem) raiseAlert(wordProblem(error.problem));
   else throw error;

@@ -56,7 +56,16 @@ function Transition({ transition, share }: { transition: TransitionView; share?:
           <p>{thinGas.sentence}</p>
         </div>
       )}
-      {transition.sources.length > 0 && <p className="sources">{`${label.sources}: ${transition.sources.join('; ')}`}</p>}
+      {transition.sources.length > 0 && (
+        <details className="sources">
+          <summary>{`${label.sources} (${transition.sources.length})`}</summary>
+          <ul>
+            {transition.sources.map((source) => (
+              <li key={source}>{source}</li>
+            ))}
+          </ul>
+        </details>
+      )}
     </section>
   );
 }

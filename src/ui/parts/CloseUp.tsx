@@ -27,8 +27,8 @@ export function CloseUp({ row }: { row: DeskRow }) {
     <svg className="curves close-up" viewBox={`0 0 ${WIDTH} ${HEIGHT + FOOT}`} role="img" aria-label={words.case.closeUp}>
       <path className="curve-chosen" d={`M${drawn.centre.toFixed(1)} 0V${HEIGHT}`} />
       <path className="curve-continuum" d={drawn.continuum} />
-      {drawn.components.map((d) => (
-        <path key={d} className="curve-component" d={d} />
+      {drawn.components.map(({ at, d }) => (
+        <path key={at} className="curve-component" d={d} />
       ))}
       <path className="curve-data" d={drawn.data} />
       <path className="curve-model" d={drawn.model} />
@@ -59,9 +59,7 @@ function closeUpCurves(samples: SamplesView, row: DeskRow, rows: readonly DeskRo
   const margin = (range[1] - range[0]) * 0.06;
   const xAxis = { low: from, high: to, from: 0, to: WIDTH };
   const yAxis = { low: range[0] - margin, high: range[1] + margin, from: HEIGHT - 1, to: 12 };
-  const profiles = rows
-    .map((each) => profileOf(each.feature))
-    .filter((profile) => profile.centre > from - half && profile.centre < to + half);
+  const profiles = rows.map((each) => profileOf(each.feature)).filter((profile) => reaches(profile, from, to));
   const curve = (some: readonly Profile[]) => {
     const fit = fitCurve(some, continuum, from, to, CURVE_POINTS);
     return svgPath(fit.x, fit.y, xAxis, yAxis);
@@ -71,11 +69,14 @@ function closeUpCurves(samples: SamplesView, row: DeskRow, rows: readonly DeskRo
     data: svgSteps(data.x, data.y, xAxis, yAxis),
     model: curve(profiles),
     continuum: svgPath(continuum.x, continuum.y, xAxis, yAxis),
-    components: profiles.length > 1 ? profiles.map((profile) => curve([profile])) : [],
+    components: profiles.length > 1 ? profiles.map((profile) => ({ at: profile.centre, d: curve([profile]) })) : [],
     ticks: closeUpTicks(from, to).map((tick) => ({ x: place(xAxis, tick), text: String(tick) })),
     top: round(range[1], 3),
   };
 }
+
+/** A line outside the picture whose wing is still in it counts. */
+const reaches = ({ centre, fwhm }: Profile, from: number, to: number) => centre > from - fwhm && centre < to + fwhm;
 
 /** Three or four round wavelengths. */
 function closeUpTicks(from: number, to: number): number[] {

@@ -11,8 +11,8 @@ import { FilterBar } from './FilterBar.tsx';
 import { Mark, Ring } from './Mark.tsx';
 import { RowVerdict } from './RowVerdict.tsx';
 
-const ROW_PX = 28;
-const VERDICT_PX = 64;
+const ROW_PX = 26;
+const VERDICT_PX = 56;
 const GROWING = ['name', 'note'];
 const trackOf = ({ key, width }: TableColumn) => (GROWING.includes(key) ? `minmax(${width}px, 1fr)` : `${width}px`);
 const GRID = { gridTemplateColumns: [...TABLE_COLUMNS.map(trackOf), `${VERDICT_PX}px`].join(' ') };
@@ -80,9 +80,11 @@ function Head({ column }: { column: TableColumn }) {
       <button type="button" className="head" onClick={() => setDesk({ sorting: sortedBy(sorting, column.key) })}>
         {column.head}
         {column.unit && <span className="unit"> {column.unit}</span>}
-        <span aria-hidden="true" className="arrow">
-          {isSorted ? (sorting.direction === 'ascending' ? '↑' : '↓') : ''}
-        </span>
+        {isSorted && (
+          <span aria-hidden="true" className="arrow">
+            {sorting.direction === 'ascending' ? '↑' : '↓'}
+          </span>
+        )}
       </button>
     </th>
   );

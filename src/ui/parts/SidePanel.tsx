@@ -4,11 +4,12 @@ import { words } from '../words.ts';
 import { CaseView } from './CaseView.tsx';
 import { HistoryPanel } from './HistoryPanel.tsx';
 import { KeysPanel } from './KeysPanel.tsx';
+import { ListPanel } from './ListPanel.tsx';
 import { ReadingPanel } from './ReadingPanel.tsx';
 import { SettingsPanel } from './SettingsPanel.tsx';
 
-const TABS: readonly Tab[] = ['case', 'settings', 'reading', 'history', 'keys'];
-const PANELS = { case: CaseView, settings: SettingsPanel, reading: ReadingPanel, history: HistoryPanel, keys: KeysPanel };
+const TABS: readonly Tab[] = ['case', 'settings', 'reading', 'list', 'history', 'keys'];
+const PANELS = { case: CaseView, settings: SettingsPanel, reading: ReadingPanel, list: ListPanel, history: HistoryPanel, keys: KeysPanel };
 
 /** Right of the spectrum: the case of the chosen feature, or what stands beside it. */
 export function SidePanel() {

@@ -1,6 +1,7 @@
 import { type DeskRow, prominence, type Standing, shortName } from '../desk/deskRows.ts';
 import { labelsThatFit } from './labelsThatFit.ts';
 import { LANES, laneOf, UNNAMED_LANE } from './lanes.ts';
+import type { Range } from './viewRange.ts';
 
 /** Plotly's sign of each verdict: told apart by shape and fill, not by colour. */
 export const SIGNS = {
@@ -30,6 +31,8 @@ const LETTER_PX = 6.1;
 interface MarkView {
   readonly from: number;
   readonly to: number;
+  /** The view at rest, observed Angstrom: labels are kept inside it. */
+  readonly view: Range;
   readonly pixelsPerAngstrom: number;
   readonly chosen: number | undefined;
   readonly mostLabels: number;
@@ -46,9 +49,9 @@ export function marksOf(rows: readonly DeskRow[], view: MarkView): Marks {
     const text = row.name ? shortName(row.name) : row.index === view.chosen ? row.feature.centroid.toFixed(1) : '';
     if (text === '') return [];
     const importance = row.index === view.chosen ? Number.POSITIVE_INFINITY : prominence(row);
-    return [{ k, x: row.feature.centroid * view.pixelsPerAngstrom, lane: laneOfRow(row), text, importance }];
+    return [{ k, x: labelPlace(row.feature.centroid, text, view), lane: laneOfRow(row), text, importance }];
   });
-  const fitting = labelsThatFit(wishes, (text) => text.length * LETTER_PX, view.mostLabels);
+  const fitting = labelsThatFit(wishes, widthOf, view.mostLabels);
   const labelled = [...fitting].map((w) => wishes[w]);
   const ringed = seen.filter((row) => row.name?.transitions.some((t) => t.thinGas));
   const x = (row: DeskRow) => row.feature.centroid * view.factor;
@@ -56,13 +59,24 @@ export function marksOf(rows: readonly DeskRow[], view: MarkView): Marks {
     x: seen.map(x),
     y: seen.map(laneOfRow),
     labels: {
-      x: labelled.map(({ k }) => x(seen[k])),
+      x: labelled.map((wish) => (wish.x / view.pixelsPerAngstrom) * view.factor),
       y: labelled.map(({ lane }) => lane + LABEL_RISE),
       text: labelled.map(({ text }) => text),
     },
     symbol: seen.map((row) => SIGNS[row.standing]),
     rings: { x: ringed.map(x), y: ringed.map(laneOfRow) },
   };
+}
+
+const widthOf = (text: string) => text.length * LETTER_PX;
+
+/** Pixels from zero wavelength of a label: over its mark, moved in where it would be cut by an end of the view. */
+function labelPlace(centroid: number, text: string, { view, pixelsPerAngstrom }: MarkView): number {
+  const x = centroid * pixelsPerAngstrom;
+  const [low, high] = [view[0] * pixelsPerAngstrom, view[1] * pixelsPerAngstrom];
+  if (x < low || x > high) return x;
+  const half = widthOf(text) / 2;
+  return Math.min(Math.max(x, low + half), high - half);
 }
 
 /** Labels and places of the lanes on their axis. */

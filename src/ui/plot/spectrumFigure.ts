@@ -67,6 +67,7 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
   const marks = marksOf(scene.rows, {
     from: window[0],
     to: window[1],
+    view,
     pixelsPerAngstrom: 1 / step,
     chosen: scene.chosen,
     mostLabels: LABELS_IN_VIEW * 3,

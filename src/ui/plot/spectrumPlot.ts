@@ -13,7 +13,7 @@ export interface SpectrumPlot {
 
 /** A view that differs from the drawn one by more than this factor gets new curves and labels. */
 const SAME_ZOOM = 1.15;
-/** Milliseconds of rest after which a zoomed view gets labels of its own. */
+/** Milliseconds of rest after which a moved view gets labels of its own. */
 const REST_MS = 140;
 
 /** What is used of the library. Its own type of `relayout` does not know dotted paths (`xaxis.range`). */
@@ -59,7 +59,7 @@ export async function createSpectrumPlot(element: HTMLElement, drawn: (ms: numbe
     else {
       void lib.relayout(element, axesChange(axesOf(scene, window, view)));
       clearTimeout(rest);
-      if (!sameWidth(window, view, 1.001)) rest = setTimeout(refresh, REST_MS);
+      rest = setTimeout(refresh, REST_MS);
     }
     drawn(performance.now() - began);
   };

@@ -2,7 +2,7 @@
 export type Range = readonly [low: number, high: number];
 
 /** Nothing closer than this can be looked at, Angstrom. */
-const NARROWEST = 1;
+const NARROWEST = 2;
 
 /** `range` moved and, if need be, narrowed so that it lies inside `full`. */
 export function inside(range: Range, full: Range): Range {

@@ -1,0 +1,37 @@
+import { useEffect, useState } from 'react';
+import type { LineRecord, LineSearchResult } from '../../engine/index.ts';
+import { Cancelled } from '../workerClient.ts';
+import { listClient, tell } from './engineRuns.ts';
+
+/** What the list answers to a query; the last answer stays until the next one is there. */
+export function useLineSearch(query: string): LineSearchResult | undefined {
+  const [result, setResult] = useState<LineSearchResult>();
+  useEffect(() => ask(() => listClient().searchLines(query), setResult), [query]);
+  return result;
+}
+
+/** All the list holds of a line, `te` in K. */
+export function useLineRecord(line: number | undefined, te: number): LineRecord | undefined {
+  const [record, setRecord] = useState<LineRecord>();
+  useEffect(() => {
+    setRecord(undefined);
+    return line === undefined ? undefined : ask(() => listClient().lineRecord(line, te), setRecord);
+  }, [line, te]);
+  return record;
+}
+
+/** Runs a question; its answer is dropped when the asker has gone on to another one. */
+function ask<T>(question: () => Promise<T>, take: (answer: T) => void): () => void {
+  let current = true;
+  question().then(
+    (answer) => {
+      if (current) take(answer);
+    },
+    (error: unknown) => {
+      if (current && !(error instanceof Cancelled)) tell(error);
+    },
+  );
+  return () => {
+    current = false;
+  };
+}
