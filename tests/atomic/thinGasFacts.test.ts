@@ -1,6 +1,5 @@
 import { expect, it } from 'vitest';
-import { criticalDensity, isMetastable, radiativeLifetime, thinGasFacts } from '../../src/atomic/index.ts';
-import { duration, powerOfTen } from '../../src/atomic/physics/figuresInWords.ts';
+import { criticalDensity, duration, isMetastable, powerOfTen, radiativeLifetime, thinGasFacts } from '../../src/atomic/index.ts';
 import { bundled } from './bundledData.ts';
 import { someAtom } from './someAtom.ts';
 
