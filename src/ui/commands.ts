@@ -122,6 +122,7 @@ export const COMMANDS: readonly Command[] = [
   show('case', 'd'),
   show('settings', 's'),
   show('reading', 'i'),
+  show('list', 'l'),
   show('history', 'h'),
   show('keys', '?'),
   { name: 'open', label: label.open, group: 'desk', keys: ['o'], canRun: always, run: pickFile },

@@ -330,6 +330,7 @@ export const words = {
     keys: 'Show the keys',
     case: 'Show the case',
     settings: 'Show the settings',
+    list: 'Search the line list',
     reading: 'Show how the file was read',
     open: 'Open a file',
     exportCsv: 'Save the lines as CSV',

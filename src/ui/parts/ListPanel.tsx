@@ -72,10 +72,16 @@ function ListRow({ line, choose }: { line: ListedLine; choose: (line: number) =>
 function RecordView({ record, te }: { record: LineRecord; te: number }) {
   const err = record.wavelengthErr >= 0.001 ? fixed(record.wavelengthErr, 3) : powerText(record.wavelengthErr, 1);
   const facts: readonly (readonly [string, string, string?])[] = [
-    [label.wavelength, `${fixed(record.wavelengthAir, 4)} ± ${err} Å ${label.air}; ${fixed(record.wavelengthVac, 4)} Å ${label.vacuum}`, record.wavelengthNote],
+    [
+      label.wavelength,
+      `${fixed(record.wavelengthAir, 4)} ± ${err} Å ${label.air}; ${fixed(record.wavelengthVac, 4)} Å ${label.vacuum}`,
+      record.wavelengthNote,
+    ],
     ...(record.ritzVac === undefined ? [] : ([[label.ritz, `${fixed(record.ritzVac, 4)} Å`]] as const)),
     [label.levels, `${record.lower} – ${record.upper}`],
-    ...(record.upperEnergyCm1 === undefined ? [] : ([[label.energies, `${fixed(record.lowerEnergyCm1, 2)} – ${fixed(record.upperEnergyCm1, 2)} cm⁻¹`]] as const)),
+    ...(record.upperEnergyCm1 === undefined
+      ? []
+      : ([[label.energies, `${fixed(record.lowerEnergyCm1, 2)} – ${fixed(record.upperEnergyCm1, 2)} cm⁻¹`]] as const)),
     [label.multiplet, record.multiplet || '–'],
     [label.nature, record.nature],
     [label.aValue, `${powerText(record.aValue, 3)} s⁻¹`],
@@ -85,7 +91,11 @@ function RecordView({ record, te }: { record: LineRecord; te: number }) {
           [label.nCrit(te), `${powerText(record.thinGas.nCrit, 2)} cm⁻³`, record.thinGas.sentence],
         ] as const)
       : []),
-    [label.strength, powerText(record.strength, 2), `${record.strengthNote} (${label.strengthOf(record.strengthBasis, round(record.strengthErrDex, 2))})`],
+    [
+      label.strength,
+      powerText(record.strength, 2),
+      `${record.strengthNote} (${label.strengthOf(record.strengthBasis, round(record.strengthErrDex, 2))})`,
+    ],
   ];
   return (
     <>
