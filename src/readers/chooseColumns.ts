@@ -163,7 +163,8 @@ function errorFor(flux: RankedColumn, free: readonly RankedColumn[]): RankedColu
   let merit = 0;
   for (const r of free) {
     if (r === flux || !(r.role in RANK_OF_MEANING) || r.column.samples !== flux.column.samples) continue;
-    const kinship = r.stem === '' ? 30 : fluxStems.has(squeeze(r.stem)) ? 50 : 0;
+    // a UCD or utype of an error speaks of the one flux of its table
+    const kinship = r.stem === '' ? 30 : fluxStems.has(squeeze(r.stem)) ? 50 : /^its (UCD|utype)/.test(r.reason) ? 20 : 0;
     if (kinship === 0) continue;
     const m = kinship + r.merit / 100 + RANK_OF_MEANING[meaningOf(r)];
     if (m > merit) {

@@ -4,6 +4,7 @@ import { gunzip } from './gunzip.ts';
 import type { ByteSource, Reading, ReadingChoices, ReadingControl } from './reading.ts';
 import { refuseForeign } from './refuse.ts';
 import { textSpectrum } from './text/textSpectrum.ts';
+import { votableSpectrum } from './votable/votableSpectrum.ts';
 
 const HEAD = 1024;
 
@@ -20,6 +21,8 @@ export async function readSpectrum(source: ByteSource, choices: ReadingChoices, 
   refuseForeign(head, source.name);
   const text = new TextDecoder('latin1').decode(head);
   if (/^SIMPLE\s*=/.test(text)) return fitsSpectrum(opened, choices, control);
+  const plain = text.replaceAll('\0', '');
+  if (/<([a-z]\w*:)?VOTABLE\b/i.test(plain) || /^\W{0,4}<\?xml/.test(plain)) return votableSpectrum(opened, choices, control);
   if (/<!doctype html|<html/i.test(text)) {
     throw new ProblemError({
       code: 'web-page',

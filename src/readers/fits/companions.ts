@@ -41,9 +41,11 @@ export function companions({ hdus }: FitsFile, flux: Hdu): Companions {
 
 const linesOf = (hdu: Hdu) => hdu.axes.slice(1).reduce((a, b) => a * b, 1);
 
-function imageRole(hdu: Hdu) {
+/** The role by the words of the name that name roles: B_IVAR and IVAR are the same. */
+export function imageRole(hdu: Hdu) {
   if (hdu.name === '' && hdu.index === 0) return 'flux';
-  return roleOf({ name: hdu.name, unit: '', kind: 'real' }).role;
+  const known = nameWords(hdu.name).filter((w) => ROLE_WORDS.test(w));
+  return roleOf({ name: known.length ? known.join('_') : hdu.name, unit: '', kind: 'real' }).role;
 }
 
 const isErrorRole = (role: string) => role === 'sigma' || role === 'ivar' || role === 'variance' || role === 'relative';

@@ -51,7 +51,7 @@ async function judgeAll(
       candidates.push({
         ...candidate,
         read: (c, control) => {
-          if (aside !== file) file.notes.remarks.push(...aside.notes.remarks);
+          if (aside !== file) aside.notes.remarks.unshift(...file.notes.remarks);
           return candidate.read(c, control);
         },
       });

@@ -6,16 +6,18 @@ import { columnsToSpectrum, unitOfColumn } from '../columnsToSpectrum.ts';
 import { mergeReadings } from '../mergeReadings.ts';
 import { count, noteFact, warn } from '../notes.ts';
 import type { Reading, ReadingChoices, ReadingControl } from '../reading.ts';
-import { toAngstrom } from '../spectralUnits.ts';
+import { spectralUnit, toAngstrom } from '../spectralUnits.ts';
 import type { FitsFile, Judged } from './candidate.ts';
-import { bandErrors, type Companions, companionErrors, companionMask, companions } from './companions.ts';
+import { bandErrors, type Companions, companionErrors, companionMask, companions, imageRole } from './companions.ts';
 import { type Hdu, nameHdu } from './hdus.ts';
+import { textOf } from './header.ts';
 import { headerFacts } from './headerFacts.ts';
 import { imageLine } from './imageLine.ts';
 import { readOrders } from './orders.ts';
 import { requireChoice } from './requireChoice.ts';
 import { namesOfRows } from './rowNames.ts';
 import { type AxisCards, axisWavelengths, findAxis, isVelocityAxis } from './spectralAxis.ts';
+import { watAttributes } from './wat.ts';
 
 /** Images with more lines than this are two-dimensional frames rather than stacks of spectra. */
 const FRAME_LINES = 64;
@@ -27,7 +29,7 @@ export async function judgeImage(file: FitsFile, hdu: Hdu): Promise<Judged> {
   const { axes } = hdu;
   if (axes.length === 0 || axes.includes(0)) return { whyNot: 'it holds no data' };
   if (hdu.dataBytes === 0) return { whyNot: 'the file ends before its data' };
-  const role = roleOf({ name: hdu.name, unit: '', kind: 'real' }).role;
+  const role = imageRole(hdu);
   const axis = findAxis(hdu.header, axes);
   const isMultispec = axis !== undefined && /^MULTISPE/.test(axis.type);
   if (isMultispec || /system=multispec/i.test(String(hdu.header.cards.get('WAT0_001')?.value ?? ''))) {
@@ -129,10 +131,22 @@ function readRowsAsColumns(
   const flux = choices.fluxColumn ?? (row === undefined ? undefined : names[row - 1]);
   return columnsToSpectrum(
     all,
-    { name: notes.file, place: { hdu: hdu.index }, taken: { hdu: hdu.index }, ...headerFacts(hdu, file.hdus[0], notes) },
+    { name: notes.file, place: { hdu: hdu.index }, taken: { hdu: hdu.index }, ...unitOfWat(hdu), ...headerFacts(hdu, file.hdus[0], notes) },
     { ...choices, ...(flux ? { fluxColumn: flux } : {}) },
     notes,
   );
+}
+
+/** The unit of wavelengths in WAT cards or CUNIT1 holds for a row of wavelengths too. */
+function unitOfWat(hdu: Hdu) {
+  for (const [words, evidence] of [
+    [watAttributes(hdu.header, 1).units ?? '', 'units in WAT1_001'],
+    [textOf(hdu.header, 'CUNIT1'), 'CUNIT1'],
+  ]) {
+    const unit = words === '' ? undefined : spectralUnit(words);
+    if (unit && !unit.log && unit.quantity === 'wavelength') return { spectralUnit: { unit, evidence } };
+  }
+  return {};
 }
 
 /** One line of an image, with wavelengths from the axis or from another unit. */

@@ -46,7 +46,8 @@ function judgeSamples(file: FitsFile, hdu: Hdu, columns: readonly Column[], open
   const headerAxis = axisColumn(hdu, rows);
   if (rows < 2 || numbers + (headerAxis ? 1 : 0) < 2)
     return { whyNot: rows < 2 ? `its table has ${count(rows, 'row')}` : 'its table has no two columns of numbers' };
-  const merit = hasWave && hasFlux ? (rows >= FEW ? 100 : 60) : hasFlux && headerAxis ? 70 : hasWave ? 35 : hasFlux ? 30 : 15;
+  const merit =
+    hasWave && hasFlux ? (rows >= FEW ? 100 : 60) : hasFlux && headerAxis ? 70 : hasWave ? 35 : rows < FEW ? 3 : hasFlux ? 30 : 15;
   return {
     candidate: {
       hdu,

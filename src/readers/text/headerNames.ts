@@ -50,8 +50,20 @@ function fromComments(comments: readonly string[], dialect: Dialect, columns: nu
   const names = rows[nameAt];
   if (!names) return undefined;
   const near = [rows[nameAt + 1], rows[nameAt + 2], rows[nameAt - 1]];
-  const units = near.find((cells) => cells !== undefined && looksLikeUnits(cells));
+  const units =
+    near.find((cells) => cells !== undefined && looksLikeUnits(cells)) ??
+    bracketUnits([comments[nameAt + 1], comments[nameAt + 2], comments[nameAt - 1]]);
   return { columns: names.map((n, k) => named(n, k, units?.[k])), from: 'the comments', linesUsed: 0 };
+}
+
+/** "[A] [erg/s/cm2/A]": units of the first columns. */
+function bracketUnits(lines: readonly (string | undefined)[]): string[] | undefined {
+  for (const line of lines) {
+    if (!line || !/^\s*(?:[[(][^\])]*[\])]\s*)+$/.test(line)) continue;
+    const units = line.match(/[[(][^\])]*[\])]/g) ?? [];
+    if (looksLikeUnits(units)) return units;
+  }
+  return undefined;
 }
 
 /** "# 1: wavelength [A]", "# Column 2 = flux". */

@@ -98,7 +98,7 @@ export function surroundings(layout: Layout, name: string, notes: Notes): Surrou
   const unitLine = layout.comments.find((c) => unitInWords(c) !== undefined);
   const unit = unitLine === undefined ? undefined : unitInWords(unitLine);
   const rest = layout.comments.find((c) => saysRestFrame(c) && /wave|lam|spectr|frame/i.test(c));
-  const flux = fluxUnitOfComments(layout.comments);
+  const flux = layout.format === 'ECSV' ? undefined : fluxUnitOfComments(layout.comments);
   return {
     name,
     place: {},
@@ -135,8 +135,8 @@ function fluxUnitOfComments(comments: readonly string[]): { unit: string; eviden
     const after = text.slice(text.search(FLUX_WORDS));
     const bracket = /[[(]([^\])]*(?:\([^)]*\)[^\])]*)*)[\])]/.exec(after)?.[1];
     const told = /(?:\bin(?: units? of)?|units?\s*[:=]?)\s+(.+)$/i.exec(after)?.[1];
-    const valued = /^bunit\s*=\s*'?([^'/]*)/i.exec(text.trim())?.[1];
-    const unit = [bracket, told, valued]
+    const valued = /^bunit\s*=\s*(?:'([^']*)'|[^'/]*)/i.exec(text.trim())?.[1];
+    const unit = [valued, bracket, told]
       .find((u) => u !== undefined && FLUX_UNIT.test(u))
       ?.trim()
       .replace(/[.;,]+$/, '');
