@@ -2,11 +2,12 @@ import type { AtomicData } from '../atomic/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import { findCompanions, type Kin } from './companions.ts';
 import { evidenceOf } from './evidence.ts';
-import type { Inferred, Weighed } from './inference.ts';
+import type { Inferred } from './inference.ts';
 import type { SystemModel } from './model.ts';
 import type { Candidate, CompanionFinding, Evidence, FeatureNaming, Mark, NamingSettings } from './naming.ts';
 import { isLocal } from './options.ts';
 import type { Survey } from './survey.ts';
+import type { Weighed } from './weighed.ts';
 
 /** Candidates shown for a feature: at most so many, always the first few (a referee wants to see what was turned down), the rest only when they are not hopeless. */
 const MOST_CANDIDATES = 8;

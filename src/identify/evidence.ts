@@ -1,9 +1,10 @@
 import type { AtomicData } from '../atomic/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import type { WeighedCompanion } from './companions.ts';
-import type { Weighed } from './inference.ts';
+
 import type { Evidence, Mark } from './naming.ts';
 import { isLocal } from './options.ts';
+import type { Weighed } from './weighed.ts';
 
 /** The case of one candidate: every piece of its log odds with a sentence that a referee can read. The pieces sum to the log odds against "none of these". */
 export function evidenceOf(mark: Mark, weighed: Weighed, companions: readonly WeighedCompanion[], data: AtomicData): Evidence[] {

@@ -3,6 +3,7 @@ import type { Remark } from '../problems/index.ts';
 import { caseOf } from './caseOf.ts';
 import { kinOf, missingLines } from './companions.ts';
 import { infer } from './inference.ts';
+import { factsOf } from './lineFacts.ts';
 import { predictedLog } from './model.ts';
 import type { FixedName, Mark, Naming, NamingSettings } from './naming.ts';
 import { findRedshift } from './redshift.ts';
@@ -71,7 +72,7 @@ export function nameMarks(
       survey,
       model,
       (ion) => scales[ion],
-      (line) => predictedLog(data, line, model),
+      (line) => predictedLog(factsOf(data), line, model),
       settings.toleranceKms,
     ),
   };

@@ -1,5 +1,6 @@
 import { type AtomicData, linesBetween } from '../atomic/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
+import { factsOf } from './lineFacts.ts';
 import type { Mark, NamingSettings } from './naming.ts';
 
 /** One transition that a mark may be, before it is weighed. */
@@ -12,16 +13,7 @@ export interface Option {
 }
 
 /** Families that stand still in the observer's frame. */
-export const isLocal = (data: AtomicData, line: number): boolean => {
-  const nature = data.lines.nature(line);
-  return nature === 'sky' || nature === 'telluric' || nature === 'interstellar';
-};
-
-/** Families that absorb. */
-const absorbs = (data: AtomicData, line: number) => {
-  const nature = data.lines.nature(line);
-  return nature === 'telluric' || nature === 'interstellar';
-};
+export const isLocal = (data: AtomicData, line: number): boolean => factsOf(data).local[line] === 1;
 
 /** Interstellar clouds move against the observer by up to this much, km/s, one sigma. */
 const CLOUD_KMS = 25;
@@ -37,22 +29,24 @@ const LINE_SIGMAS = 3;
 export function optionsOf(mark: Mark, data: AtomicData, settings: NamingSettings, z: number, dispersionKms: number): Option[] {
   if (mark.artefact) return [];
   const { lines } = data;
+  const { local, absorbs } = factsOf(data);
+  const absorbing = mark.flux < 0 ? 1 : 0;
   const reach = Math.max((settings.toleranceKms / SPEED_OF_LIGHT_KMS) * mark.wavelength, settings.toleranceSigma * mark.wavelengthErr);
   const widest = reach + 2;
   const options: Option[] = [];
-  const consider = (shift: number, local: boolean) => {
+  const consider = (shift: number, inPlace: number) => {
     const [first, end] = linesBetween(lines, (mark.wavelength - widest) / shift, (mark.wavelength + widest) / shift);
     for (let line = first; line < end; line++) {
-      if (isLocal(data, line) !== local || absorbs(data, line) !== mark.flux < 0) continue;
+      if (local[line] !== inPlace || absorbs[line] !== absorbing) continue;
       const off = mark.wavelength - lines.wavelengthVac[line] * shift;
       const lineErr = lines.wavelengthErr[line] * shift;
       if (Math.abs(off) > Math.max(reach, LINE_SIGMAS * Math.hypot(lineErr, mark.wavelengthErr))) continue;
-      const spreadKms = lines.nature(line) === 'interstellar' ? CLOUD_KMS : dispersionKms;
+      const spreadKms = absorbing === 1 && lines.nature(line) === 'interstellar' ? CLOUD_KMS : dispersionKms;
       const spread = (spreadKms / SPEED_OF_LIGHT_KMS) * mark.wavelength;
       options.push({ line, off, sigma: Math.hypot(mark.wavelengthErr, lineErr, spread) });
     }
   };
-  consider(1 + z, false);
-  consider(1, true);
+  if (absorbing === 0) consider(1 + z, 0);
+  consider(1, 1);
   return options;
 }

@@ -1,0 +1,59 @@
+import type { AtomicData } from '../atomic/index.ts';
+import { roughDimming } from './roughReddening.ts';
+
+/** What the inference asks of every line again and again, one value a line in every array. */
+export interface LineFacts {
+  /** 1 = sky, telluric, interstellar: stands still in the observer's frame. */
+  readonly local: Uint8Array;
+  /** 1 = telluric, interstellar. */
+  readonly absorbs: Uint8Array;
+  /** log10 flux for H beta = 100 in the reference nebula; a low one where nobody knows it. */
+  readonly logStrength: Float64Array;
+  /** One sigma of `logStrength` within the ion, model scatter included, dex. */
+  readonly errDex: Float64Array;
+  /** log10 of the dimming relative to H beta for c(Hbeta) = 1, sign as in `roughDimming`. */
+  readonly dimming: Float64Array;
+  /** 1 for ions whose lines are local, one value an ion. */
+  readonly localIon: Uint8Array;
+}
+
+/** A line whose strength nobody knows is expected to be faint, with a wide error. */
+const UNKNOWN_LOG_STRENGTH = -3.5;
+const UNKNOWN_ERR_DEX = 1.3;
+/** Scatter of a line's flux about the prediction beyond the list's own error, dex: other temperature, density, calibration. */
+const MODEL_SCATTER_DEX = 0.12;
+/** Collisionally excited lines move further with temperature and density. */
+const COLLISIONAL_SCATTER_DEX = 0.2;
+
+const known = new WeakMap<AtomicData, LineFacts>();
+
+/** Facts of a bundle's lines, made once a bundle. */
+export function factsOf(data: AtomicData): LineFacts {
+  const before = known.get(data);
+  if (before) return before;
+  const { lines } = data;
+  const facts: LineFacts = {
+    local: new Uint8Array(lines.count),
+    absorbs: new Uint8Array(lines.count),
+    logStrength: new Float64Array(lines.count),
+    errDex: new Float64Array(lines.count),
+    dimming: new Float64Array(lines.count),
+    localIon: new Uint8Array(lines.ions.length),
+  };
+  for (let line = 0; line < lines.count; line++) {
+    const nature = lines.nature(line);
+    const absorbs = nature === 'telluric' || nature === 'interstellar';
+    facts.absorbs[line] = absorbs ? 1 : 0;
+    facts.local[line] = absorbs || nature === 'sky' ? 1 : 0;
+    if (facts.local[line] === 1) facts.localIon[lines.ion[line]] = 1;
+    const strength = lines.logStrength[line];
+    const isKnown = Number.isFinite(strength);
+    facts.logStrength[line] = isKnown ? strength : UNKNOWN_LOG_STRENGTH;
+    const own = Number.isFinite(lines.strengthErrDex[line]) ? lines.strengthErrDex[line] : 0.5;
+    const model = lines.mechanism(line) === 'collisional' ? COLLISIONAL_SCATTER_DEX : MODEL_SCATTER_DEX;
+    facts.errDex[line] = isKnown ? Math.hypot(own, model) : UNKNOWN_ERR_DEX;
+    facts.dimming[line] = roughDimming(lines.wavelengthVac[line]);
+  }
+  known.set(data, facts);
+  return facts;
+}

@@ -1,0 +1,69 @@
+import { type Single, sharesOf } from './blends.ts';
+import { claimedElsewhere } from './claims.ts';
+import type { Mark } from './naming.ts';
+import { isLocal } from './options.ts';
+import { logFluxErr } from './sightings.ts';
+import type { WeighContext } from './weighContext.ts';
+import type { Weighed } from './weighed.ts';
+
+/** log10 odds that a blend rather than one line is measured, before anything is known. */
+const BLEND_PRIOR = Math.log(0.35);
+/** A part of the sky or an interstellar line: the reference strengths are on a scale of their own. */
+const LOCAL_PRIOR = Math.log(0.2);
+/** Far outliers in strength happen (fluorescence, variability): the normal is given a floor of a wide one. */
+const WIDE_SHARE = 0.05;
+const WIDE_DEX = 1.2;
+/** Centroids have outliers too: unseen blends, underestimated errors. */
+const OUTLIER_SHARE = 0.02;
+const OUTLIER_SIGMAS = 3;
+const MOST_OWED = 5;
+
+/** The nats of one name: a line, or a blend of `parts`. */
+export function scoreName(mark: Mark, j: number, parts: readonly Single[], context: WeighContext): Weighed {
+  const { data, survey, claims } = context;
+  const shares = sharesOf(parts);
+  const order = shares.map((_, k) => k).sort((a, b) => shares[b] - shares[a]);
+  const sorted = order.map((k) => parts[k]);
+  const sortedShares = order.map((k) => shares[k]);
+  const off = sorted.reduce((sum, p, k) => sum + sortedShares[k] * p.off, 0);
+  // the shares themselves are uncertain: half the spread between the parts times their uncertainty
+  const mixing = sorted.reduce((sum, p, k) => sum + sortedShares[k] * (p.off - off) ** 2, 0);
+  const sigma = Math.sqrt(sorted.reduce((sum, p, k) => sum + sortedShares[k] * p.sigma ** 2, 0) + 0.3 * mixing);
+  const logPredicted = Math.log10(sorted.reduce((sum, p) => sum + 10 ** p.logPredicted, 0));
+  const err = Math.hypot(Math.sqrt(sorted.reduce((sum, p, k) => sum + sortedShares[k] * p.err ** 2, 0)), logFluxErr(mark));
+  const excess = Math.log10(Math.abs(mark.flux)) - logPredicted;
+  const normal = (x: number, s: number) => Math.exp(-0.5 * (x / s) ** 2) / (s * Math.sqrt(2 * Math.PI));
+  // rates per Angstrom and dex: the line's against that of strangers
+  const wavelengthNats =
+    Math.log((1 - OUTLIER_SHARE) * normal(off, sigma) + OUTLIER_SHARE * normal(off, OUTLIER_SIGMAS * sigma)) +
+    Math.log(survey.high - survey.low);
+  const owedNats = Math.min(
+    MOST_OWED,
+    sorted.reduce((sum, p) => sum + p.owed, 0),
+  );
+  const strengthNats =
+    Math.log((1 - WIDE_SHARE) * normal(excess, err) + WIDE_SHARE * normal(excess, Math.hypot(err, WIDE_DEX))) - Math.log(1 / 3);
+  // the rates of strangers were put as one a spectrum and three dex: their true number makes the rest
+  let priorNats = -Math.log(survey.strangerRate * (survey.high - survey.low) * 3);
+  if (parts.length > 1) priorNats += BLEND_PRIOR * (parts.length - 1);
+  for (const part of sorted) {
+    if (isLocal(data, part.line)) priorNats += LOCAL_PRIOR;
+    const elsewhere = claimedElsewhere(claims, part.line, j);
+    const share = parts.length > 1 ? sortedShares[sorted.indexOf(part)] : 1;
+    priorNats += share * Math.log(Math.max(0.02, 1 - 0.95 * elsewhere));
+  }
+  return {
+    lines: sorted.map((p) => p.line),
+    shares: sortedShares,
+    off,
+    sigma,
+    logPredicted,
+    logPredictedErr: err,
+    wavelengthNats,
+    strengthNats,
+    priorNats,
+    owedNats,
+    ionSeen: sorted[0].seen,
+    probability: 0,
+  };
+}

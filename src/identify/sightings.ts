@@ -1,0 +1,51 @@
+import type { AtomicData } from '../atomic/index.ts';
+import type { Sighting } from './ionScales.ts';
+import { factsOf } from './lineFacts.ts';
+import { predictedLog, type SystemModel } from './model.ts';
+import type { Mark } from './naming.ts';
+import type { Weighing } from './weighed.ts';
+
+/** Calibration and real scatter of fluxes, dex. */
+const LEAST_FLUX_ERR_DEX = 0.04;
+/** Names less probable than this tell nothing of their ion. */
+const LEAST_TELLING = 0.02;
+
+/** What the names so far say of each ion's scale: by ion, in the order of the marks. */
+export function sightingsOf(
+  weighings: readonly Weighing[],
+  marks: readonly Mark[],
+  data: AtomicData,
+  model: SystemModel,
+): Map<number, Sighting[]> {
+  const facts = factsOf(data);
+  const byIon = new Map<number, Sighting[]>();
+  weighings.forEach(({ candidates }, mark) => {
+    for (const candidate of candidates) {
+      if (candidate.probability < LEAST_TELLING) continue;
+      candidate.lines.forEach((line, k) => {
+        const ion = data.lines.ion[line];
+        const logFlux = Math.log10(Math.abs(marks[mark].flux) * candidate.shares[k]);
+        // a minor part of a blend says little of its own ion
+        const err = Math.hypot(
+          facts.errDex[line],
+          logFluxErr(marks[mark]),
+          candidate.lines.length > 1 ? 0.3 / Math.max(0.1, candidate.shares[k]) - 0.3 : 0,
+        );
+        const list = byIon.get(ion) ?? [];
+        list.push({
+          mark,
+          line,
+          weight: candidate.probability * Math.sqrt(candidate.shares[k]),
+          excess: logFlux - predictedLog(facts, line, model),
+          err,
+        });
+        byIon.set(ion, list);
+      });
+    }
+  });
+  return byIon;
+}
+
+/** One sigma of log10 flux. */
+export const logFluxErr = (mark: Mark) =>
+  Math.hypot(LEAST_FLUX_ERR_DEX, Number.isFinite(mark.fluxErr) ? Math.min(1, (Math.LOG10E * mark.fluxErr) / Math.abs(mark.flux)) : 0);

@@ -1,0 +1,76 @@
+import type { AtomicData } from '../atomic/index.ts';
+import { median } from '../numeric/index.ts';
+import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
+import type { SystemModel } from './model.ts';
+import type { Mark } from './naming.ts';
+import { isLocal } from './options.ts';
+import { roughDimming } from './roughReddening.ts';
+import { logFluxErr } from './sightings.ts';
+import type { Weighed, Weighing } from './weighed.ts';
+
+/** Systemic velocity, dispersion, flux zero and rough reddening from the names that are likely. */
+export function updateModel(
+  model: SystemModel,
+  marks: readonly Mark[],
+  weighings: readonly Weighing[],
+  data: AtomicData,
+  zFixed: boolean,
+): SystemModel {
+  const sure = weighings.flatMap(({ candidates }, j) =>
+    candidates.length > 0 && candidates[0].probability > 0.6 && !isLocal(data, candidates[0].lines[0])
+      ? [{ mark: marks[j], best: candidates[0] }]
+      : [],
+  );
+  if (sure.length < 3) return model;
+  const kms = sure.map(({ mark, best }) => ({
+    v: (best.off / mark.wavelength) * SPEED_OF_LIGHT_KMS,
+    err: (Math.hypot(mark.wavelengthErr, data.lines.wavelengthErr[best.lines[0]]) / mark.wavelength) * SPEED_OF_LIGHT_KMS,
+  }));
+  const weights = kms.map(({ err }) => 1 / (err * err + model.dispersionKms ** 2 + 1));
+  const shift = weightedMedian(
+    kms.map((k) => k.v),
+    weights,
+  );
+  const pulls = kms.map(({ v, err }) => Math.max(0, (v - shift) ** 2 - err * err));
+  const scatter = 1.4826 * median(kms.map(({ v }) => Math.abs(v - shift)));
+  const typicalErr = median(kms.map((k) => k.err));
+  const dispersionKms = Math.min(60, Math.max(1.5, Math.sqrt(Math.max(0, scatter ** 2 - typicalErr ** 2)), 0.3 * Math.sqrt(median(pulls))));
+  const z = zFixed ? model.z : (1 + model.z) * (1 + shift / SPEED_OF_LIGHT_KMS) - 1;
+  const zErr = zFixed ? 0 : (Math.hypot(scatter, 0.3) / SPEED_OF_LIGHT_KMS / Math.sqrt(sure.length)) * 1.25;
+  return { ...model, z, zErr, dispersionKms, ...fluxFrame(model, sure, data) };
+}
+
+function weightedMedian(values: readonly number[], weights: readonly number[]): number {
+  const order = values.map((_, i) => i).sort((a, b) => values[a] - values[b]);
+  const half = weights.reduce((a, b) => a + b, 0) / 2;
+  let sum = 0;
+  for (const i of order) {
+    sum += weights[i];
+    if (sum >= half) return values[i];
+  }
+  return values[order[order.length - 1]];
+}
+
+/** Flux zero and rough reddening from the hydrogen lines; without three of them the zero alone, from all. */
+function fluxFrame(
+  model: SystemModel,
+  sure: readonly { mark: Mark; best: Weighed }[],
+  data: AtomicData,
+): Pick<SystemModel, 'logZero' | 'cHbeta'> {
+  const hydrogen = sure.filter(({ best }) => best.lines.length === 1 && data.lines.ions[data.lines.ion[best.lines[0]]].name === 'H I');
+  const points = hydrogen.map(({ mark, best }) => ({
+    x: -roughDimming(data.lines.wavelengthVac[best.lines[0]]),
+    y: Math.log10(mark.flux) - data.lines.logStrength[best.lines[0]],
+    w: 1 / logFluxErr(mark) ** 2 + 1,
+  }));
+  if (points.length === 0) return { logZero: model.logZero, cHbeta: model.cHbeta };
+  // slope with a prior about moderate reddening, so that two lines next to each other do not decide
+  const prior = { mean: 0.3, weight: 1 / 0.5 ** 2 };
+  const sw = points.reduce((s, p) => s + p.w, 0);
+  const mx = points.reduce((s, p) => s + p.w * p.x, 0) / sw;
+  const my = points.reduce((s, p) => s + p.w * p.y, 0) / sw;
+  const sxx = points.reduce((s, p) => s + p.w * (p.x - mx) ** 2, 0);
+  const sxy = points.reduce((s, p) => s + p.w * (p.x - mx) * (p.y - my), 0);
+  const cHbeta = Math.min(4, Math.max(0, (sxy + prior.mean * prior.weight) / (sxx + prior.weight)));
+  return { cHbeta, logZero: my - cHbeta * mx };
+}

@@ -1,0 +1,23 @@
+/** One name weighed for one mark: a line, or a blend of up to three. */
+export interface Weighed {
+  readonly lines: readonly number[];
+  readonly shares: readonly number[];
+  readonly off: number;
+  readonly sigma: number;
+  /** log10 flux predicted from what the rest of the spectrum says of the ion, and its one sigma. */
+  readonly logPredicted: number;
+  readonly logPredictedErr: number;
+  readonly wavelengthNats: number;
+  readonly strengthNats: number;
+  readonly priorNats: number;
+  /** What the place owes: a line that the rest of the spectrum predicts here, that no other feature can be, is missing if this name is wrong. */
+  readonly owedNats: number;
+  /** Weighted number of other lines of the (main) ion that were seen. */
+  readonly ionSeen: number;
+  readonly probability: number;
+}
+
+export interface Weighing {
+  readonly candidates: readonly Weighed[];
+  readonly noneProbability: number;
+}
