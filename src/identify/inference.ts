@@ -49,7 +49,7 @@ export function infer(
     const sightings = sightingsOf(weighings, marks, data, model);
     const means = priorMeans(data, settings.kind, scales, facts.localIon);
     const absences = absencesOf(marks, data, strongest, survey, model, settings);
-    scales = Array.from(means, (mean, ion) => fitScale(mean, sightings.get(ion) ?? [], absences[ion]));
+    scales = Array.from(means, (mean, ion) => fitScale(mean, sightings.byIon.get(ion) ?? [], absences[ion]));
     const shared = { data, facts, settings, survey, model, sightings, absences, means, scales, claims: claimsOf(weighings) };
     const next = marks.map((mark, j) => weigh(mark, j, { ...shared, rule: rules[j] }));
     const moved = round + 1 < LEAST_ROUNDS ? 1 : largestMove(weighings, next);

@@ -10,20 +10,23 @@ const LEAST_FLUX_ERR_DEX = 0.04;
 /** Names less probable than this tell nothing of their ion. */
 const LEAST_TELLING = 0.02;
 
-/** What the names so far say of each ion's scale: by ion, in the order of the marks. */
-export function sightingsOf(
-  weighings: readonly Weighing[],
-  marks: readonly Mark[],
-  data: AtomicData,
-  model: SystemModel,
-): Map<number, Sighting[]> {
+export interface Sightings {
+  readonly byIon: ReadonlyMap<number, readonly Sighting[]>;
+  /** Ions that each mark may have shown, in the order of the marks. */
+  readonly ionsOfMark: readonly ReadonlySet<number>[];
+}
+
+/** What the names so far say of each ion's scale. */
+export function sightingsOf(weighings: readonly Weighing[], marks: readonly Mark[], data: AtomicData, model: SystemModel): Sightings {
   const facts = factsOf(data);
   const byIon = new Map<number, Sighting[]>();
+  const ionsOfMark = marks.map(() => new Set<number>());
   weighings.forEach(({ candidates }, mark) => {
     for (const candidate of candidates) {
       if (candidate.probability < LEAST_TELLING) continue;
       candidate.lines.forEach((line, k) => {
         const ion = data.lines.ion[line];
+        ionsOfMark[mark].add(ion);
         const logFlux = Math.log10(Math.abs(marks[mark].flux) * candidate.shares[k]);
         // a minor part of a blend says little of its own ion
         const err = Math.hypot(
@@ -43,7 +46,7 @@ export function sightingsOf(
       });
     }
   });
-  return byIon;
+  return { byIon, ionsOfMark };
 }
 
 /** One sigma of log10 flux. */

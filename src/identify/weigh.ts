@@ -22,14 +22,17 @@ export function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
   const scaleWithout = (ion: number): IonScale => {
     const known = cache.get(ion);
     if (known) return known;
-    const involved = context.sightings.get(ion)?.some((s) => s.mark === j);
-    const scale = involved ? fitScale(context.means[ion], context.sightings.get(ion) ?? [], context.absences[ion], j) : context.scales[ion];
+    const { byIon, ionsOfMark } = context.sightings;
+    const scale = ionsOfMark[j].has(ion)
+      ? fitScale(context.means[ion], byIon.get(ion) ?? [], context.absences[ion], j)
+      : context.scales[ion];
     cache.set(ion, scale);
     return scale;
   };
-  const singles = optionsOf(mark, data, settings, model.z, model.dispersionKms).map((option) =>
-    single(mark, j, option, context, scaleWithout),
-  );
+  const singles = likelyOnes(mark, optionsOf(mark, data, settings, model.z, model.dispersionKms), context, scaleWithout).map((single) => ({
+    ...single,
+    owed: owedBy(mark, j, single, context),
+  }));
   const names = [...singles.map((s) => [s]), ...blendsOf(mark, singles)].filter((parts) => !rule.not.some((not) => sameLines(not, parts)));
   const forced = rule.lines;
   if (forced) {
@@ -51,12 +54,31 @@ export function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
 
 const logOdds = (w: Weighed) => w.wavelengthNats + w.strengthNats + w.priorNats + w.owedNats;
 
-function single(mark: Mark, j: number, option: Option, context: WeighContext, scaleOf: (ion: number) => IonScale): Single {
+/** Options this many nats below the best are not weighed further. */
+const OUT_OF_REACH = 16;
+/** Even a wrong prediction of the strength costs no more than a line that is wide by this much, nats and dex. */
+const WIDE_NATS = 3;
+const WIDE_DEX = 1.3;
+
+/** The options with their predicted flux, but for those that cannot win. */
+function likelyOnes(mark: Mark, options: readonly Option[], context: WeighContext, scaleOf: (ion: number) => IonScale): Single[] {
   const { data, facts, model } = context;
-  const scale = scaleOf(data.lines.ion[option.line]);
-  const logPredicted = predictedLog(facts, option.line, model) + scale.mean;
-  const err = Math.hypot(facts.errDex[option.line], Math.sqrt(scale.variance));
-  return { ...option, logPredicted, err, seen: scale.seen, owed: owedBy(mark, j, option, logPredicted, err, context) };
+  const { ion } = data.lines;
+  const logFlux = Math.log10(Math.abs(mark.flux));
+  const rough = new Float64Array(options.length);
+  const singles = options.map((option, k): Single => {
+    const scale = scaleOf(ion[option.line]);
+    const logPredicted = predictedLog(facts, option.line, model) + scale.mean;
+    const errDex = facts.errDex[option.line];
+    const variance = errDex * errDex + scale.variance;
+    const excess = (logFlux - logPredicted) ** 2;
+    const pull = option.off / option.sigma;
+    rough[k] = -0.5 * pull * pull - Math.min((0.5 * excess) / variance, WIDE_NATS + (0.5 * excess) / (variance + WIDE_DEX * WIDE_DEX));
+    return { ...option, logPredicted, err: Math.sqrt(variance), seen: scale.seen, owed: 0 };
+  });
+  const best = rough.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY);
+  const wanted = context.rule.lines;
+  return singles.filter((s, k) => rough[k] > best - OUT_OF_REACH || wanted?.includes(s.line));
 }
 
 /** A line may hide as a part of a feature when it carries less than this share. */
@@ -65,11 +87,11 @@ const HIDDEN_SHARE = 0.15;
 const LEAST_ABSENT = 0.01;
 
 /** Minus the logarithm of the chance that the line is too faint to be seen, hides in the mark, or is another mark. */
-function owedBy(mark: Mark, j: number, option: Option, logPredicted: number, err: number, { data, survey, claims }: WeighContext): number {
-  if (mark.flux <= 0 || isLocal(data, option.line)) return 0;
+function owedBy(mark: Mark, j: number, { line, logPredicted, err }: Single, { facts, survey, claims }: WeighContext): number {
+  if (mark.flux <= 0 || facts.local[line] === 1) return 0;
   const hiding = Math.max(survey.logLimitAt(mark.wavelength), Math.log10(HIDDEN_SHARE * mark.flux));
   const unseen = Math.max(LEAST_ABSENT, normalTail((logPredicted - hiding) / err));
-  const elsewhere = claimedElsewhere(claims, option.line, j);
+  const elsewhere = claimedElsewhere(claims, line, j);
   return -Math.log(elsewhere + (1 - elsewhere) * unseen);
 }
 

@@ -1,10 +1,11 @@
 import type { AtomicData } from '../atomic/index.ts';
 import type { Claim } from './claims.ts';
-import type { Absence, IonScale, Sighting } from './ionScales.ts';
+import type { Absence, IonScale } from './ionScales.ts';
 import type { LineFacts } from './lineFacts.ts';
 import type { SystemModel } from './model.ts';
 import type { NamingSettings } from './naming.ts';
 import type { Rule } from './rules.ts';
+import type { Sightings } from './sightings.ts';
 import type { Survey } from './survey.ts';
 
 /** What the rest of the spectrum says. */
@@ -14,7 +15,7 @@ export interface WeighContext {
   readonly settings: NamingSettings;
   readonly survey: Survey;
   readonly model: SystemModel;
-  readonly sightings: ReadonlyMap<number, readonly Sighting[]>;
+  readonly sightings: Sightings;
   readonly absences: readonly (readonly Absence[])[];
   readonly means: Float64Array;
   readonly scales: readonly IonScale[];
