@@ -24,6 +24,7 @@ const OPTIONS = {
   hdu: { type: 'string' },
   row: { type: 'string' },
   order: { type: 'string' },
+  lines: { type: 'string' },
   timings: { type: 'boolean' },
 } as const;
 
@@ -32,6 +33,8 @@ export interface Arguments {
   readonly words: readonly string[];
   readonly out?: string;
   readonly format: TableFormatName;
+  /** CSV file with the user's own lines. */
+  readonly lines?: string;
   readonly timings: boolean;
   readonly settings: Settings;
   readonly te?: number;
@@ -55,6 +58,7 @@ export function parseArguments(args: readonly string[]): Arguments {
     words: positionals,
     out: values.out,
     format,
+    lines: values.lines,
     timings: values.timings === true,
     te,
     ne,

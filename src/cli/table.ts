@@ -1,8 +1,9 @@
-import { mkdirSync, writeFileSync } from 'node:fs';
+import { mkdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { basename, extname, join } from 'node:path';
 import { createEngine, type Engine, type SourceKind } from '../engine/index.ts';
 import { ProblemError, wordProblem } from '../problems/index.ts';
 import { TABLE_FORMATS, withoutArtefacts } from '../report/index.ts';
+import type { Settings } from '../session/index.ts';
 import { type Arguments, parseArguments, UsageError } from './arguments.ts';
 import { openAtomicData, withFile } from './files.ts';
 
@@ -24,9 +25,22 @@ async function tables(args: readonly string[], kind: SourceKind): Promise<number
   }
   const engine = createEngine(openAtomicData(), () => performance.now() / 1000);
   if (options.out !== undefined) mkdirSync(options.out, { recursive: true });
+  const settings = withOwnLines(options);
+  if (!settings) return 1;
   let failures = 0;
-  for (const path of options.words) failures += (await oneTable(engine, path, kind, options)) ? 0 : 1;
+  for (const path of options.words) failures += (await oneTable(engine, path, kind, { ...options, settings })) ? 0 : 1;
   return failures > 0 ? 1 : 0;
+}
+
+/** The settings with the user's own lines; undefined when their file cannot be read, which is told on stderr. */
+function withOwnLines({ settings, lines }: Arguments): Settings | undefined {
+  if (lines === undefined) return settings;
+  try {
+    return { ...settings, ownLines: { name: basename(lines), text: readFileSync(lines, 'utf8') } };
+  } catch (error) {
+    process.stderr.write(`linewright: ${lines}: ${error instanceof Error ? error.message : String(error)}\n`);
+    return undefined;
+  }
 }
 
 /** Two inputs of one name would write one file. @throws UsageError */

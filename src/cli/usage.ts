@@ -16,6 +16,7 @@ export const USAGE = `linewright: names the emission lines of thin, glowing gas
   --threshold SIGMA      a feature is kept from this signal to noise on (default 5)
   --te K, --ne CM3       electron temperature and density at which critical densities and companions are stated
   --hdu N, --row K, --order K   which spectrum of the file
+  --lines OWN.csv        your own lines beside the bundled ones (columns ion, wavelength_air or wavelength_vac ...)
   --timings              seconds of each stage on stderr
 
 Names are proposals: atomic data have errors, and the astronomer decides.

@@ -1,8 +1,9 @@
-import type { AtomicData } from '../atomic/index.ts';
+import { type AtomicData, readUserLines, withUserLines } from '../atomic/index.ts';
 import { DEFAULT_NAMING_SETTINGS, type Naming, type NamingSettings, nameMarks } from '../identify/index.ts';
 import { DEFAULT_MEASURE_SETTINGS, type Measurement, type MeasureSettings, measure } from '../measure/index.ts';
+import { ProblemError } from '../problems/index.ts';
 import type { ByteSource, ReadingChoices } from '../readers/index.ts';
-import { matchVerdicts, type Settings, type Verdict } from '../session/index.ts';
+import { matchVerdicts, type OwnLines, type Settings, type Verdict } from '../session/index.ts';
 import type { Analysis, Progress } from './analysis.ts';
 import { assemble } from './assemble.ts';
 import { fixedNames } from './fixedNames.ts';
@@ -17,7 +18,8 @@ export interface RunControl {
 
 /** One open source and the stages that follow from it; a stage whose inputs did not change is not run again. */
 export interface Engine {
-  readonly data: AtomicData;
+  /** The line list, with the user's own lines among the bundled ones when given. @throws ProblemError when they cannot be read: the first of their problems */
+  dataWith(own: OwnLines | undefined): AtomicData;
   /** Takes `source` for all following analyses; `guess` looks into the file whether it holds samples or measured lines. */
   open(source: ByteSource, kind: SourceKind | 'guess'): Promise<SourceKind>;
   /** @throws ProblemError when the source cannot be read as chosen; RangeError when nothing is open */
@@ -30,12 +32,13 @@ export interface Engine {
  */
 export function createEngine(data: AtomicData, now: () => number): Engine {
   let source: { readonly bytes: ByteSource; readonly kind: SourceKind } | undefined;
+  const lists = listsOf(data);
   const material = stage<Material>();
   const measured = stage<Measurement | undefined>();
   const named = stage<Naming>();
 
   return {
-    data,
+    dataWith: lists,
     async open(bytes, kind) {
       const found = kind === 'guess' ? await guessKind(bytes) : kind;
       source = { bytes, kind: found };
@@ -45,6 +48,7 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
     async analyse(settings, verdicts, control = {}) {
       if (!source) throw new RangeError('analyse was called before open');
       const { bytes, kind } = source;
+      const list = lists(settings.ownLines);
       const timings: { stage: string; seconds: number }[] = [];
       const run = async <T>(name: string, work: (progress: (share: number) => void) => T | Promise<T>): Promise<T> => {
         control.signal?.throwIfAborted();
@@ -76,12 +80,12 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
         marks.map((mark, k) => ({ at: mark.wavelength, atErr: features[k].centroidErr })),
       );
       const namingSettings: NamingSettings = { ...DEFAULT_NAMING_SETTINGS, ...settings.naming };
-      const fixed = fixedNames(byFeature, data);
-      const naming = await named.of([material.stamp(), measured.stamp(), namingSettings, fixed], () =>
-        run('naming', () => nameMarks(marks, data, namingSettings, fixed)),
+      const fixed = fixedNames(byFeature, list);
+      const naming = await named.of([material.stamp(), measured.stamp(), namingSettings, fixed, settings.ownLines], () =>
+        run('naming', () => nameMarks(marks, list, namingSettings, fixed)),
       );
       return assemble({
-        data,
+        data: list,
         material: what,
         measurement,
         features,
@@ -94,6 +98,20 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
         timings,
       });
     },
+  };
+}
+
+/** The bundled list, or the last one that was joined with the user's lines. */
+function listsOf(data: AtomicData): (own: OwnLines | undefined) => AtomicData {
+  let kept: { readonly text: string; readonly data: AtomicData } | undefined;
+  return (own) => {
+    if (!own) return data;
+    if (kept?.text !== own.text) {
+      const reading = readUserLines(own.text, own.name, data.lines);
+      if (reading.ended === 'refused') throw new ProblemError(reading.problems[0]);
+      kept = { text: own.text, data: withUserLines(data, reading.lines) };
+    }
+    return kept.data;
   };
 }
 

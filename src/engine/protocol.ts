@@ -1,5 +1,5 @@
-import type { Problem } from '../problems/index.ts';
-import type { Settings, Verdict } from '../session/index.ts';
+import type { Problem, Remark } from '../problems/index.ts';
+import type { OwnLines, Settings, Verdict } from '../session/index.ts';
 import type { Analysis, Progress, SamplesView } from './analysis.ts';
 import type { LineRecord, LineSearchResult } from './lineSearch.ts';
 
@@ -24,13 +24,22 @@ export type WorkerRequest =
       readonly samplesKnown?: number;
     }
   /** Looks into the line list; `query` as in `searchLines`. */
-  | { readonly ask: 'lines'; readonly id: number; readonly query: string }
+  | { readonly ask: 'lines'; readonly id: number; readonly query: string; readonly own?: OwnLines }
   /** All the list holds of one line; `te` in K. */
-  | { readonly ask: 'record'; readonly id: number; readonly line: number; readonly te: number };
+  | { readonly ask: 'record'; readonly id: number; readonly line: number; readonly te: number; readonly own?: OwnLines }
+  /** Reads the user's own lines without taking them: a problem for every bad row. */
+  | { readonly ask: 'check-lines'; readonly id: number; readonly own: OwnLines };
 
 export type WorkerAnswer =
   | { readonly say: 'lines'; readonly id: number; readonly result: LineSearchResult }
   | { readonly say: 'record'; readonly id: number; readonly record: LineRecord }
+  | {
+      readonly say: 'checked';
+      readonly id: number;
+      readonly count: number;
+      readonly problems: readonly Problem[];
+      readonly remarks: readonly Remark[];
+    }
   | { readonly say: 'started'; readonly id: number; readonly atomicVersion: string; readonly lineCount: number }
   | { readonly say: 'opened'; readonly id: number; readonly kind: 'spectrum' | 'line-list' }
   | { readonly say: 'progress'; readonly id: number; readonly progress: Progress }

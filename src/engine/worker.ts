@@ -3,6 +3,7 @@ import { loadAtomicData } from '../atomic/index.ts';
 import { type Problem, ProblemError } from '../problems/index.ts';
 import type { ByteSource } from '../readers/index.ts';
 import type { SamplesView } from './analysis.ts';
+import { checkOwnLines } from './checkOwnLines.ts';
 import { createEngine, type Engine } from './engine.ts';
 import { lineRecord, searchLines } from './lineSearch.ts';
 import type { WorkerAnswer, WorkerRequest } from './protocol.ts';
@@ -28,8 +29,12 @@ async function answer(request: WorkerRequest): Promise<void> {
     else if (request.ask === 'open') {
       const kind = await engine.open(blobSource(request.file, request.name), request.kind);
       say({ say: 'opened', id: request.id, kind });
-    } else if (request.ask === 'lines') say({ say: 'lines', id: request.id, result: searchLines(engine.data, request.query) });
-    else if (request.ask === 'record') say({ say: 'record', id: request.id, record: lineRecord(engine.data, request.line, request.te) });
+    } else if (request.ask === 'lines')
+      say({ say: 'lines', id: request.id, result: searchLines(engine.dataWith(request.own), request.query) });
+    else if (request.ask === 'check-lines')
+      say({ say: 'checked', id: request.id, ...checkOwnLines(engine.dataWith(undefined), request.own) });
+    else if (request.ask === 'record')
+      say({ say: 'record', id: request.id, record: lineRecord(engine.dataWith(request.own), request.line, request.te) });
     else await analyse(engine, request);
   } catch (error) {
     say({ say: 'problem', id: request.id, problem: problemOf(error) });

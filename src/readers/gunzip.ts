@@ -22,7 +22,7 @@ export async function gunzip(source: ByteSource, control: ReadingControl, limit 
     for (let start = 0; start < source.size; start += SLICE) {
       const bytes = await source.read(start, Math.min(source.size, start + SLICE));
       if (bytes.length === 0) break;
-      await writer.write(bytes);
+      await writer.write(new Uint8Array(bytes));
       control.progress?.((0.5 * start) / source.size);
     }
     await writer.close();

@@ -7,6 +7,14 @@ export interface Settings {
   readonly reading: ReadingChoices;
   readonly measure: Partial<MeasureSettings>;
   readonly naming: Partial<NamingSettings>;
+  /** Lines the user adds to the bundled list: the CSV as it was read, so that it can be read again by another release. */
+  readonly ownLines?: OwnLines;
+}
+
+export interface OwnLines {
+  /** File name, for the table's sources. */
+  readonly name: string;
+  readonly text: string;
 }
 
 /** The file the document is about: its bytes are not part of the document. */

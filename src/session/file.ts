@@ -19,6 +19,7 @@ const settingsShape = v.object({
   reading: v.record(v.string(), v.unknown()),
   measure: v.record(v.string(), v.unknown()),
   naming: v.record(v.string(), v.unknown()),
+  ownLines: v.optional(v.object({ name: v.string(), text: v.string() })),
 });
 const sourceShape = v.object({ kind: v.picklist(['spectrum', 'line-list']), name: v.string(), size: v.number() });
 const documentShape = v.object({ source: v.optional(sourceShape), settings: settingsShape, verdicts: v.array(verdictShape) });

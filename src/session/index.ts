@@ -14,7 +14,16 @@ export {
   sameKeys,
   writeNote,
 } from './decide.ts';
-export { type Decision, EMPTY_DOCUMENT, type LineKey, type SessionDocument, type Settings, type Source, type Verdict } from './document.ts';
+export {
+  type Decision,
+  EMPTY_DOCUMENT,
+  type LineKey,
+  type OwnLines,
+  type SessionDocument,
+  type Settings,
+  type Source,
+  type Verdict,
+} from './document.ts';
 export { readSession, writeSession } from './file.ts';
 export { type History, make, redo, startHistory, undo } from './history.ts';
 export { matchVerdicts, type Place } from './matchVerdicts.ts';

@@ -59,6 +59,15 @@ export const words = {
     ritz: 'From the levels alone, vacuum',
     wavelength: 'Wavelength',
     sources: 'Sources',
+    own: 'Your own lines',
+    ownHint:
+      'A CSV with the columns ion and wavelength_air or wavelength_vac (Å); if known also uncertainty, nature, strength (Hβ = 100), lower, upper. They join the list for this session.',
+    ownAdd: 'Add lines from a CSV',
+    ownRemove: 'Take them out',
+    ownAdded: (n: number, name: string) => `added ${n} own ${n === 1 ? 'line' : 'lines'} from ${name}`,
+    ownRemoved: 'took the own lines out of the list',
+    ownIn: (name: string) => `Lines of ${name} are in the list.`,
+    ownRefused: (name: string, n: number) => `${name}: nothing was added; ${n} ${n === 1 ? 'row has' : 'rows have'} to be mended`,
     strengthOf: (basis: string, dex: string) => `${basis}, known to ${dex} dex within the ion`,
   },
   reading: {

@@ -1,6 +1,6 @@
 import type { LineRecord, LineSearchResult, Progress, SamplesView, WorkerAnswer, WorkerRequest } from '../engine/index.ts';
 import type { Problem } from '../problems/index.ts';
-import type { Settings, Verdict } from '../session/index.ts';
+import type { OwnLines, Settings, Verdict } from '../session/index.ts';
 
 /** The run was stopped by the user: nothing went wrong. */
 export class Cancelled extends Error {}
@@ -21,9 +21,11 @@ export interface WorkerClient {
   open(file: Blob, name: string, kind: 'spectrum' | 'line-list' | 'guess'): Promise<'spectrum' | 'line-list'>;
   analyse(settings: Settings, verdicts: readonly Verdict[]): Promise<Analysed>;
   /** Looks into the line list: ion, wavelength in air, words of the multiplet, in any order. */
-  searchLines(query: string): Promise<LineSearchResult>;
+  searchLines(query: string, own: OwnLines | undefined): Promise<LineSearchResult>;
   /** All the list holds of one line; critical density at `te`, K. */
-  lineRecord(line: number, te: number): Promise<LineRecord>;
+  lineRecord(line: number, te: number, own: OwnLines | undefined): Promise<LineRecord>;
+  /** Reads the user's own lines without taking them: a problem for every bad row. */
+  checkLines(own: OwnLines): Promise<Extract<WorkerAnswer, { say: 'checked' }>>;
   /** Ends the thread: what is pending rejects with `Cancelled`; whoever calls next has to open the file again. */
   cancel(): void;
 }
@@ -97,15 +99,20 @@ export function workerClient(bundleUrl: string, progress: (p: Progress) => void,
       if (answer.samples || answer.samplesStamp !== samples.stamp) samples = { samples: answer.samples, stamp: answer.samplesStamp };
       return { analysis: answer.analysis, samples: samples.samples, samplesStamp: answer.samplesStamp };
     },
-    async searchLines(query) {
-      const answer = await post(await running(), { ask: 'lines', query });
+    async searchLines(query, own) {
+      const answer = await post(await running(), { ask: 'lines', query, own });
       if (answer.say !== 'lines') throw new TypeError(`lines was answered by ${answer.say}`);
       return answer.result;
     },
-    async lineRecord(line, te) {
-      const answer = await post(await running(), { ask: 'record', line, te });
+    async lineRecord(line, te, own) {
+      const answer = await post(await running(), { ask: 'record', line, te, own });
       if (answer.say !== 'record') throw new TypeError(`record was answered by ${answer.say}`);
       return answer.record;
+    },
+    async checkLines(own) {
+      const answer = await post(await running(), { ask: 'check-lines', own });
+      if (answer.say !== 'checked') throw new TypeError(`check-lines was answered by ${answer.say}`);
+      return answer;
     },
     cancel: () => end(new Cancelled()),
   };

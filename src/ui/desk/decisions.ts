@@ -54,8 +54,9 @@ export function acceptNames(rows: readonly DeskRow[]): void {
 /** Changes some settings; `sentence` goes into the history. */
 export function set(change: (settings: Settings) => Settings, sentence: string): void {
   const document = present();
-  const { reading, measure, naming } = change(document.settings);
-  commit(changeSettings(document, { reading: chosenOnly(reading), measure: chosenOnly(measure), naming: chosenOnly(naming) }, sentence));
+  const { reading, measure, naming, ...rest } = change(document.settings);
+  const settings = { reading: chosenOnly(reading), measure: chosenOnly(measure), naming: chosenOnly(naming), ...chosenOnly(rest) };
+  commit(changeSettings(document, settings, sentence));
 }
 
 /** Without the fields that are left to the program: an undefined one would hide the engine's default. */

@@ -23,7 +23,7 @@ function client(): WorkerClient {
 }
 
 /** The thread for questions about the line list. */
-export const listClient = (): Pick<WorkerClient, 'searchLines' | 'lineRecord'> => client();
+export const listClient = (): Pick<WorkerClient, 'searchLines' | 'lineRecord' | 'checkLines'> => client();
 
 /** Bytes at hand, by `sourceKey`. */
 const files = new Map<string, Blob>();

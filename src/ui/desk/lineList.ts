@@ -1,22 +1,25 @@
 import { useEffect, useState } from 'react';
 import type { LineRecord, LineSearchResult } from '../../engine/index.ts';
 import { Cancelled } from '../workerClient.ts';
+import { useDesk } from './deskStore.ts';
 import { listClient, tell } from './engineRuns.ts';
 
 /** What the list answers to a query; the last answer stays until the next one is there. */
 export function useLineSearch(query: string): LineSearchResult | undefined {
   const [result, setResult] = useState<LineSearchResult>();
-  useEffect(() => ask(() => listClient().searchLines(query), setResult), [query]);
+  const own = useDesk((state) => state.history.document.settings.ownLines);
+  useEffect(() => ask(() => listClient().searchLines(query, own), setResult), [query, own]);
   return result;
 }
 
 /** All the list holds of a line, `te` in K. */
 export function useLineRecord(line: number | undefined, te: number): LineRecord | undefined {
   const [record, setRecord] = useState<LineRecord>();
+  const own = useDesk((state) => state.history.document.settings.ownLines);
   useEffect(() => {
     setRecord(undefined);
-    return line === undefined ? undefined : ask(() => listClient().lineRecord(line, te), setRecord);
-  }, [line, te]);
+    return line === undefined ? undefined : ask(() => listClient().lineRecord(line, te, own), setRecord);
+  }, [line, te, own]);
   return record;
 }
 

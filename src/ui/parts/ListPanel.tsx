@@ -4,6 +4,7 @@ import { useDesk } from '../desk/deskStore.ts';
 import { useLineRecord, useLineSearch } from '../desk/lineList.ts';
 import { fixed, powerText, round } from '../figures.ts';
 import { words } from '../words.ts';
+import { OwnLinesBox } from './OwnLinesBox.tsx';
 import '../list.css';
 
 const { list: label } = words;
@@ -19,7 +20,10 @@ export function ListPanel() {
     <section className="list">
       <h2>{label.title}</h2>
       {line === undefined ? (
-        <Search query={query} setQuery={setQuery} choose={setLine} />
+        <>
+          <Search query={query} setQuery={setQuery} choose={setLine} />
+          <OwnLinesBox />
+        </>
       ) : (
         <>
           <button type="button" className="small" onClick={() => setLine(undefined)}>
