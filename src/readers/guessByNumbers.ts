@@ -22,13 +22,13 @@ export async function guessByNumbers(
   const numeric = free
     .filter((r) => r.column.kind !== 'text' && r.column.kind !== 'logical' && r.column.samples >= 2 && isOpen(r))
     .slice(0, MOST_COLUMNS);
-  const values = new Map<RankedColumn, Float64Array>();
-  for (const r of numeric) values.set(r, await r.column.read());
+  const values = new Map<number, Float64Array>();
+  for (const r of numeric) values.set(r.index, await r.column.read());
   const by = (reason: string, r: RankedColumn): RankedColumn => ({ ...r, reason });
 
   let wavelength: RankedColumn | undefined;
   if (!knownWave) {
-    const found = numeric.find((r) => isAxis(values.get(r) ?? new Float64Array()));
+    const found = numeric.find((r) => isAxis(values.get(r.index) ?? new Float64Array()));
     wavelength =
       found &&
       by(
@@ -44,15 +44,15 @@ export async function guessByNumbers(
   let flux: RankedColumn | undefined;
   if (!knownFlux) {
     const found =
-      rest.find((r) => r.index > wave.index && varies(values.get(r))) ??
-      rest.find((r) => varies(values.get(r))) ??
+      rest.find((r) => r.index > wave.index && varies(values.get(r.index))) ??
+      rest.find((r) => varies(values.get(r.index))) ??
       rest.find((r) => r.index > wave.index);
     flux = found && by(found.index === wave.index + 1 ? 'it follows the wavelength' : 'the first column of varying numbers', found);
   }
   const fluxAt = (flux ?? knownFlux)?.index ?? -1;
-  const fluxValues = flux && values.get(flux);
+  const fluxValues = flux && values.get(flux.index);
   const third = fluxValues && rest.find((r) => r.index === fluxAt + 1);
-  const thirdValues = third && values.get(third);
+  const thirdValues = third && values.get(third.index);
   const error =
     third && thirdValues && looksLikeErrors(thirdValues, fluxValues)
       ? by('it follows the flux and is positive throughout', third)

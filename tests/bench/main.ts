@@ -1,6 +1,7 @@
 import { atomicBench } from './atomicBench.ts';
 import { namingBench } from './namingBench.ts';
 import { physicsBench } from './physicsBench.ts';
+import { readersBench } from './readersBench.ts';
 import { seededBench } from './seededBench.ts';
 
 // `npm run bench`: speed and quality of each part, beside a rival's in the same run where there is one. Never a test: figures depend on the machine.
@@ -8,9 +9,10 @@ import { seededBench } from './seededBench.ts';
 for (const [title, bench] of [
   ['line list', atomicBench],
   ['level populations', physicsBench],
+  ['reading', readersBench],
   ['naming', namingBench],
   ['measuring, beside a script of numpy and scipy', seededBench],
 ] as const) {
   process.stdout.write(`\n${title}\n`);
-  for (const line of bench()) process.stdout.write(`  ${line}\n`);
+  for (const line of await bench()) process.stdout.write(`  ${line}\n`);
 }

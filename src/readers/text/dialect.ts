@@ -23,9 +23,8 @@ const CANDIDATES: readonly Dialect[] = [
 /** Columns beyond this are no table of a spectrum. */
 export const MOST_COLUMNS = 256;
 
-/** Whether a line is a row of numbers in a dialect: at least two cells with a number, or one and the rest missing. */
-export function isRow(cells: readonly string[], decimalComma: boolean): boolean {
-  if (cells.length < 2) return false;
+/** Numbers and missing values among the cells of a line. */
+function tallyCells(cells: readonly string[], decimalComma: boolean): { numbers: number; missing: number } {
   let numbers = 0;
   let missing = 0;
   for (const cell of cells) {
@@ -34,21 +33,38 @@ export function isRow(cells: readonly string[], decimalComma: boolean): boolean 
     if (Number.isNaN(value)) missing++;
     else numbers++;
   }
+  return { numbers, missing };
+}
+
+/** Whether a line is a row of numbers in a dialect: at least two cells with a number, or one and the rest missing. */
+export function isRow(cells: readonly string[], decimalComma: boolean): boolean {
+  if (cells.length < 2) return false;
+  const { numbers, missing } = tallyCells(cells, decimalComma);
   return numbers >= 2 || (numbers === 1 && missing >= 1);
 }
 
-/** The dialect in which most of the lines are rows of the same number of columns; undefined when none makes two columns of numbers. */
+/**
+ * The dialect in which most of the lines are rows of the same number of columns, each line counting by the share of its cells that are
+ * numbers; undefined when none makes two columns of numbers.
+ */
 export function findDialect(lines: readonly string[]): DialectFit | undefined {
   let best: DialectFit | undefined;
+  let bestWeight = 0;
   for (const dialect of CANDIDATES) {
-    const tally = new Map<number, number>();
+    const tally = new Map<number, { lines: number; weight: number }>();
     for (const line of lines) {
       const cells = splitLine(line, dialect.delimiter);
       if (cells.length > MOST_COLUMNS || !isRow(cells, dialect.decimalComma)) continue;
       if (dialect.decimalComma && !cells.some((c) => /^[+-]?\d+,\d/.test(c))) continue;
-      tally.set(cells.length, (tally.get(cells.length) ?? 0) + 1);
+      const { numbers, missing } = tallyCells(cells, dialect.decimalComma);
+      const so = tally.get(cells.length) ?? { lines: 0, weight: 0 };
+      tally.set(cells.length, { lines: so.lines + 1, weight: so.weight + (numbers + missing) / cells.length });
     }
-    for (const [columns, agreeing] of tally) if (!best || agreeing > best.lines) best = { dialect, columns, lines: agreeing };
+    for (const [columns, { lines: agreeing, weight }] of tally) {
+      if (weight <= bestWeight + 1e-9) continue;
+      bestWeight = weight;
+      best = { dialect, columns, lines: agreeing };
+    }
   }
   return best;
 }

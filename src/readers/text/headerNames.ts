@@ -20,8 +20,8 @@ interface Names {
 export function namesOfColumns(headers: readonly string[], comments: readonly string[], dialect: Dialect, columns: number): Names {
   return (
     fromHeaderLines(headers, dialect, columns) ??
-    fromComments(comments, dialect, columns) ??
-    fromNumberedComments(comments, columns) ?? {
+    fromNumberedComments(comments, columns) ??
+    fromComments(comments, dialect, columns) ?? {
       columns: Array.from({ length: columns }, (_, k) => ({ name: String(k + 1), unit: '' })),
       from: 'no names in the file: numbers',
       linesUsed: 0,
@@ -88,8 +88,11 @@ function fromNumberedComments(comments: readonly string[], columns: number): Nam
 function cellsOfHeader(line: string, dialect: Dialect, columns: number): string[] | undefined {
   const ways = [
     () => splitLine(line, dialect.delimiter),
-    () => (dialect.delimiter === ' ' ? (line.match(/"[^"]*"|[^\s[({"]*[[({][^\])}]*[\])}]\S*|[^\s"]+/g) ?? []) : []),
-    () => (dialect.delimiter === ' ' ? joinBrackets(line.match(/[[({][^\])}]*[\])}]|[^\s[({]+/g) ?? []) : []),
+    () =>
+      dialect.delimiter === ' '
+        ? (line.match(/"[^"]*"|[^\s[({"]*(?:\[[^\]]*\]|\((?:[^()]|\([^)]*\))*\)|\{[^}]*\})\S*|[^\s"]+/g) ?? [])
+        : [],
+    () => (dialect.delimiter === ' ' ? joinBrackets(line.match(/\[[^\]]*\]|\((?:[^()]|\([^)]*\))*\)|\{[^}]*\}|[^\s[({]+/g) ?? []) : []),
     () => (dialect.delimiter === ' ' ? line.trim().split(/\s{2,}|\t+/) : []),
     () => (dialect.delimiter === ' ' ? splitLine(line, ',') : []),
     () => (dialect.delimiter === ' ' ? splitLine(line, '\t') : []),
