@@ -78,7 +78,10 @@ function likelyOnes(mark: Mark, options: readonly Option[], context: WeighContex
   });
   const best = rough.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY);
   const wanted = context.rule.lines;
-  return singles.filter((s, k) => rough[k] > best - OUT_OF_REACH || wanted?.includes(s.line));
+  // a referee wants to see what was turned down: the first few stay even when they cannot win
+  const few = rough.slice().sort((a, b) => b - a)[ALWAYS_KEPT - 1] ?? Number.NEGATIVE_INFINITY;
+  const least = Math.min(best - OUT_OF_REACH, few);
+  return singles.filter((s, k) => rough[k] >= least || wanted?.includes(s.line));
 }
 
 /** A line may hide as a part of a feature when it carries less than this share. */
