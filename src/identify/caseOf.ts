@@ -3,7 +3,6 @@ import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import { findCompanions, type Kin } from './companions.ts';
 import { evidenceOf } from './evidence.ts';
 import type { Inferred } from './inference.ts';
-import type { SystemModel } from './model.ts';
 import type { Candidate, CompanionFinding, Evidence, FeatureNaming, Mark, NamingSettings } from './naming.ts';
 import { isLocal } from './options.ts';
 import type { Survey } from './survey.ts';
@@ -28,6 +27,8 @@ interface Version {
  * The case of one mark. Names with the same leading line (the line alone, or with fainter neighbours blended in) are versions of one candidate: the best
  * stands for them with their joint probability, that of the feature being this line in the main.
  *
+ * @param mark   with the drift of the calibration taken off
+ * @param measured its wavelength as measured, vacuum Angstrom
  * @param k      the mark's place in `marks`
  * @param marks  ascending wavelength
  * @param forced the user accepted the (only) name
@@ -42,6 +43,7 @@ export function caseOf(
   survey: Survey,
   settings: NamingSettings,
   forced: boolean,
+  measured: number,
 ): FeatureNaming {
   const { candidates, noneProbability } = inferred.weighings[k];
   if (candidates.length === 0) return { candidates: [], noneProbability };
@@ -58,7 +60,7 @@ export function caseOf(
   if (forced) {
     const [only] = versions;
     const accepted: Evidence = { kind: 'verdict', nats: 0, sentence: 'You accepted this name.' };
-    return { candidates: [candidateOf(mark, { ...only, evidence: [...only.evidence, accepted] }, 1, model, data)], noneProbability: 0 };
+    return { candidates: [candidateOf(mark, { ...only, evidence: [...only.evidence, accepted] }, 1, measured, data)], noneProbability: 0 };
   }
   const joined = joinVersions(versions, data);
   const top = Math.max(0, ...joined.map((v) => v.odds));
@@ -67,7 +69,7 @@ export function caseOf(
   const sum = weights.reduce((a, b) => a + b, none);
   return {
     candidates: joined
-      .map((version, i) => candidateOf(mark, version, weights[i] / sum, model, data))
+      .map((version, i) => candidateOf(mark, version, weights[i] / sum, measured, data))
       .sort((a, b) => b.probability - a.probability)
       .slice(0, MOST_CANDIDATES)
       .filter((c, i) => i < ALWAYS_SHOWN || c.probability >= LEAST_PROBABILITY),
@@ -110,17 +112,15 @@ function candidateOf(
   mark: Mark,
   { weighed, evidence, companions }: Version,
   probability: number,
-  model: SystemModel,
+  measured: number,
   data: AtomicData,
 ): Candidate {
-  const local = isLocal(data, weighed.lines[0]);
-  const systemic = local ? 0 : model.z;
-  const rest = (mark.wavelength - weighed.off) / (1 + systemic);
+  const rest = weighed.lines.reduce((sum, line, i) => sum + weighed.shares[i] * data.lines.wavelengthVac[line], 0);
   return {
     lines: weighed.lines,
     shares: weighed.shares,
     probability,
-    velocityKms: (mark.wavelength / rest - 1) * SPEED_OF_LIGHT_KMS,
+    velocityKms: (measured / rest - 1) * SPEED_OF_LIGHT_KMS,
     velocityErrKms: (Math.hypot(mark.wavelengthErr, data.lines.wavelengthErr[weighed.lines[0]]) / rest) * SPEED_OF_LIGHT_KMS,
     evidence,
     companions,

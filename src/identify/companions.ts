@@ -34,7 +34,12 @@ const MOST_AGAINST_TOGETHER = 3;
 /** Marks without a width: two lines nearer than this many errors of a mark could not be told apart. */
 const UNRESOLVED_SIGMAS = 3;
 
+const made = new WeakMap<AtomicData, Kin>();
+
+/** Made once a bundle. */
 export function kinOf(data: AtomicData): Kin {
+  const before = made.get(data);
+  if (before) return before;
   const { lines } = data;
   const byUpper = new Map<number, number[]>();
   const byMultiplet = new Map<number, number[]>();
@@ -49,13 +54,15 @@ export function kinOf(data: AtomicData): Kin {
     put(byUpper, lines.upperId[line], line);
     put(byMultiplet, lines.multiplet[line], line);
   }
-  return {
+  const kin: Kin = {
     of(line) {
       const relatives = new Set([...(byUpper.get(lines.upperId[line]) ?? []), ...(byMultiplet.get(lines.multiplet[line]) ?? [])]);
       relatives.delete(line);
       return [...relatives].sort((a, b) => lines.logStrength[b] - lines.logStrength[a]).slice(0, MOST_COMPANIONS);
     },
   };
+  made.set(data, kin);
+  return kin;
 }
 
 /**

@@ -1,6 +1,8 @@
 import type { AtomicData } from '../atomic/index.ts';
+import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import { absencesOf, strongestLines } from './absences.ts';
 import { claimsOf } from './claims.ts';
+import { type Drift, type DriftPoint, fitDrift, startPoints, withoutDrift } from './drift.ts';
 import { fitScale, type IonScale, priorMeans } from './ionScales.ts';
 import { factsOf } from './lineFacts.ts';
 import type { SystemModel } from './model.ts';
@@ -9,7 +11,7 @@ import { rulesOf } from './rules.ts';
 import { sightingsOf } from './sightings.ts';
 import { startModel } from './startModel.ts';
 import type { Survey } from './survey.ts';
-import { updateModel } from './updateModel.ts';
+import { sureNames, updateModel } from './updateModel.ts';
 import { weigh } from './weigh.ts';
 import type { Weighing } from './weighed.ts';
 
@@ -17,12 +19,17 @@ export interface Inferred {
   readonly model: SystemModel;
   readonly weighings: readonly Weighing[];
   readonly scales: readonly IonScale[];
+  /** The marks with the drift of the wavelength calibration taken off. */
+  readonly placed: readonly Mark[];
+  readonly drift: Drift;
 }
 
 const MOST_ROUNDS = 7;
 const LEAST_ROUNDS = 4;
 /** Settled when no probability of a leading name moved more than this. */
 const SETTLED = 0.02;
+/** No single line tells of the drift more closely than this. */
+const LEAST_ERR_KMS = 2;
 
 /**
  * Expectation-maximisation over names, ion scales, flux zero, reddening, velocity and dispersion (Dempster, Laird & Rubin 1977, J. R. Stat. Soc. B 39, 1).
@@ -41,22 +48,38 @@ export function infer(
   const facts = factsOf(data);
   const rules = rulesOf(marks.length, fixed);
   const strongest = strongestLines(data, survey, z0);
-  let model = startModel(marks, data, z0, zErr0);
+  let drift = fitDrift(startPoints(marks, data, z0), survey.low, survey.high);
+  let placed = withoutDrift(marks, drift);
+  let model = startModel(placed, data, z0, zErr0);
   let scales: IonScale[] = [];
   let weighings: Weighing[] = [];
   for (let round = 0; round < MOST_ROUNDS; round++) {
-    if (round > 0) model = updateModel(model, marks, weighings, data, settings.z !== undefined);
-    const sightings = sightingsOf(weighings, marks, data, model);
+    if (round > 0) {
+      model = updateModel(model, placed, weighings, data, settings.z !== undefined);
+      drift = fitDrift(driftPoints(marks, weighings, data, model), survey.low, survey.high);
+      placed = withoutDrift(marks, drift);
+    }
+    const sightings = sightingsOf(weighings, placed, data, model);
     const means = priorMeans(data, settings.kind, scales, facts.localIon);
-    const absences = absencesOf(marks, data, strongest, survey, model, settings);
+    const absences = absencesOf(placed, data, strongest, survey, model, settings);
     scales = Array.from(means, (mean, ion) => fitScale(mean, sightings.byIon.get(ion) ?? [], absences[ion]));
     const shared = { data, facts, settings, survey, model, sightings, absences, means, scales, claims: claimsOf(weighings) };
-    const next = marks.map((mark, j) => weigh(mark, j, { ...shared, rule: rules[j] }));
+    const next = placed.map((mark, j) => weigh(mark, j, { ...shared, rule: rules[j] }));
     const moved = round + 1 < LEAST_ROUNDS ? 1 : largestMove(weighings, next);
     weighings = next;
     if (moved < SETTLED) break;
   }
-  return { model, weighings, scales };
+  return { model, weighings, scales, placed, drift };
+}
+
+/** Raw velocities of the likely names against the systemic one. */
+function driftPoints(marks: readonly Mark[], weighings: readonly Weighing[], data: AtomicData, model: SystemModel): DriftPoint[] {
+  const { lines } = data;
+  return sureNames(marks, weighings, data).map(({ mark, best }) => {
+    const rest = best.lines.reduce((sum, line, k) => sum + best.shares[k] * lines.wavelengthVac[line], 0);
+    const kms = (mark.wavelength / (rest * (1 + model.z)) - 1) * SPEED_OF_LIGHT_KMS;
+    return { wavelength: mark.wavelength, kms, errKms: Math.hypot((best.sigma / mark.wavelength) * SPEED_OF_LIGHT_KMS, LEAST_ERR_KMS) };
+  });
 }
 
 function largestMove(before: readonly Weighing[], after: readonly Weighing[]): number {

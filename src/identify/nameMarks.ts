@@ -2,6 +2,7 @@ import type { AtomicData } from '../atomic/index.ts';
 import type { Remark } from '../problems/index.ts';
 import { caseOf } from './caseOf.ts';
 import { kinOf, missingLines } from './companions.ts';
+import { shownDrift } from './drift.ts';
 import { infer } from './inference.ts';
 import { factsOf } from './lineFacts.ts';
 import { predictedLog } from './model.ts';
@@ -55,8 +56,12 @@ export function nameMarks(
   control.progress?.(0.8);
   const kin = kinOf(data);
   const forced = new Set(fixedSorted.filter((f) => 'lines' in f).map((f) => f.mark));
-  const named = sorted.map((mark, k) => caseOf(mark, k, sorted, inferred, kin, data, survey, settings, forced.has(k)));
+  const named = sorted.map((_mark, k) =>
+    caseOf(inferred.placed[k], k, inferred.placed, inferred, kin, data, survey, settings, forced.has(k), sorted[k].wavelength),
+  );
   const { model, scales } = inferred;
+  const drift = shownDrift(inferred.drift, LEAST_DRIFT_KMS);
+  if (drift) remarks.push(driftRemark(drift));
   const refined = redshifts.map((h, k) => (k === 0 ? { ...h, z: model.z, zErr: model.zErr } : h));
   return {
     features: marks.map((_, j) => named[place.get(j) ?? j]),
@@ -65,9 +70,10 @@ export function nameMarks(
     zErr: model.zErr,
     dispersionKms: model.dispersionKms,
     kind: settings.kind,
+    ...(drift ? { drift } : {}),
     remarks,
     missing: missingLines(
-      sorted,
+      inferred.placed,
       data,
       survey,
       model,
@@ -75,6 +81,24 @@ export function nameMarks(
       (line) => predictedLog(factsOf(data), line, model),
       settings.toleranceKms,
     ),
+  };
+}
+
+/** A smaller drift is not worth a word, km/s. */
+const LEAST_DRIFT_KMS = 5;
+
+function driftRemark(drift: readonly { wavelength: number; kms: number }[]): Remark {
+  const least = drift.reduce((a, b) => (b.kms < a.kms ? b : a));
+  const most = drift.reduce((a, b) => (b.kms > a.kms ? b : a));
+  const say = ({ wavelength, kms }: { wavelength: number; kms: number }) => `${kms.toFixed(0)} km/s near ${wavelength.toFixed(0)} A`;
+  return {
+    code: 'calibration-drift',
+    weight: 'warning',
+    where: {},
+    found: `the recognised lines do not share one velocity: they stand off by ${say(least)} and by ${say(most)}`,
+    expected: 'one velocity along the whole spectrum',
+    doThis:
+      'Check the wavelength calibration there. The names allow for the drift; the wavelengths and velocities in the table are as measured.',
   };
 }
 

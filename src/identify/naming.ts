@@ -97,6 +97,11 @@ export interface Naming {
   /** Extra scatter of centroids about the model, km/s. */
   readonly dispersionKms: number;
   readonly kind: ObjectKind;
+  /**
+   * Smooth drift of the wavelength calibration found on the way, at some wavelengths (observed, vacuum Angstrom); the names allow for it, the velocities
+   * of the candidates do not. Absent = none is significant.
+   */
+  readonly drift?: readonly { readonly wavelength: number; readonly kms: number }[];
   readonly remarks: readonly import('../problems/index.ts').Remark[];
   /** Strong predicted lines without a feature: index into the line list, predicted flux, expected vacuum wavelength. */
   readonly missing: readonly { readonly line: number; readonly predictedFlux: number; readonly expectedAt: number }[];

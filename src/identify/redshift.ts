@@ -19,6 +19,8 @@ const AGREE_KMS = 120;
 /** Scatter of ln flux about the reference nebula: one sigma of a factor six. */
 const LOG_FLUX_SCATTER = 0.8;
 const MOST_HYPOTHESES = 6;
+const FEW_MARKS = 3;
+const FEW_MARKS_TRUST = 0.4;
 
 interface Anchor {
   readonly line: number;
@@ -52,7 +54,9 @@ export function findRedshift(marks: readonly Mark[], data: AtomicData, survey: S
     if (distinct.length >= MOST_HYPOTHESES) break;
   }
   const best = distinct[0].score;
-  const weights = distinct.map((d) => Math.exp(d.score - best));
+  // one or two features never settle a redshift, however well a pair of lines fits
+  const trust = bright.length < FEW_MARKS ? FEW_MARKS_TRUST : 1;
+  const weights = distinct.map((d) => Math.exp(trust * (d.score - best)));
   const total = weights.reduce((a, b) => a + b, 0);
   return distinct.map((d, k) => ({
     z: d.z,

@@ -7,6 +7,9 @@ import { isLocal } from './options.ts';
 import { roughDimming } from './roughReddening.ts';
 import { logFluxErr } from './sightings.ts';
 import type { Weighed, Weighing } from './weighed.ts';
+import { weightedMedian } from './weightedMedian.ts';
+
+const SURE = 0.6;
 
 /** Systemic velocity, dispersion, flux zero and rough reddening from the names that are likely. */
 export function updateModel(
@@ -16,11 +19,7 @@ export function updateModel(
   data: AtomicData,
   zFixed: boolean,
 ): SystemModel {
-  const sure = weighings.flatMap(({ candidates }, j) =>
-    candidates.length > 0 && candidates[0].probability > 0.6 && !isLocal(data, candidates[0].lines[0])
-      ? [{ mark: marks[j], best: candidates[0] }]
-      : [],
-  );
+  const sure = sureNames(marks, weighings, data);
   if (sure.length < 3) return model;
   const kms = sure.map(({ mark, best }) => ({
     v: (best.off / mark.wavelength) * SPEED_OF_LIGHT_KMS,
@@ -40,16 +39,17 @@ export function updateModel(
   return { ...model, z, zErr, dispersionKms, ...fluxFrame(model, sure, data) };
 }
 
-function weightedMedian(values: readonly number[], weights: readonly number[]): number {
-  const order = values.map((_, i) => i).sort((a, b) => values[a] - values[b]);
-  const half = weights.reduce((a, b) => a + b, 0) / 2;
-  let sum = 0;
-  for (const i of order) {
-    sum += weights[i];
-    if (sum >= half) return values[i];
-  }
-  return values[order[order.length - 1]];
-}
+/** The names that the model learns from: likely, and of the object. */
+export const sureNames = (
+  marks: readonly Mark[],
+  weighings: readonly Weighing[],
+  data: AtomicData,
+): { mark: Mark; best: Weighed; j: number }[] =>
+  weighings.flatMap(({ candidates }, j) =>
+    candidates.length > 0 && candidates[0].probability > SURE && !isLocal(data, candidates[0].lines[0])
+      ? [{ mark: marks[j], best: candidates[0], j }]
+      : [],
+  );
 
 /** Flux zero and rough reddening from the hydrogen lines; without three of them the zero alone, from all. */
 function fluxFrame(
