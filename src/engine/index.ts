@@ -15,6 +15,6 @@ export type {
 } from './analysis.ts';
 export { createEngine, type Engine, type RunControl } from './engine.ts';
 export { type LimitRow, limitsOf } from './limits.ts';
-export { type LineRecord, type LineSearchResult, type ListedLine, lineRecord, searchLines } from './lineSearch.ts';
+export { type LineRecord, type LineSearchResult, type ListedCompanion, type ListedLine, lineRecord, searchLines } from './lineSearch.ts';
 export type { SourceKind } from './material.ts';
 export type { WorkerAnswer, WorkerRequest } from './protocol.ts';

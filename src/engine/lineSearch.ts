@@ -1,4 +1,4 @@
-import { type AtomicData, linesBetween } from '../atomic/index.ts';
+import { type AtomicData, type CompanionFinder, linesBetween } from '../atomic/index.ts';
 import { airFromVacuum, vacuumFromAir } from '../units/index.ts';
 import type { ThinGasView } from './analysis.ts';
 import { ionLabel, lineKey } from './lineNames.ts';
@@ -38,6 +38,21 @@ export interface LineRecord extends ListedLine {
   readonly strengthNote: string;
   readonly thinGas?: ThinGasView;
   readonly sources: readonly string[];
+  /** Other lines that must be there too, nearest kin first. */
+  readonly companions: readonly ListedCompanion[];
+}
+
+export interface ListedCompanion {
+  readonly index: number;
+  /** With brackets. */
+  readonly ion: string;
+  readonly wavelengthAir: number;
+  readonly relation: 'same-upper-level' | 'same-multiplet' | 'same-ion';
+  /** Flux over that of the line, without reddening; absent = not known. */
+  readonly ratio?: number;
+  /** One sigma of it, dex. */
+  readonly errDex?: number;
+  readonly basis?: string;
 }
 
 export interface LineSearchResult {
@@ -140,11 +155,13 @@ function listed(data: AtomicData, line: number): ListedLine {
 /**
  * Everything the list holds of one line.
  *
- * @param line index into the list
- * @param te   K, for the critical density
+ * @param line   index into the list
+ * @param te     K, for the critical density and the companions
+ * @param ne     cm^-3, for the companions
+ * @param finder of the same list
  * @throws RangeError when the list has no such line
  */
-export function lineRecord(data: AtomicData, line: number, te: number): LineRecord {
+export function lineRecord(data: AtomicData, line: number, te: number, ne: number, finder: CompanionFinder): LineRecord {
   if (!(line >= 0 && line < data.lines.count)) throw new RangeError(`no line ${line} in a list of ${data.lines.count}`);
   const thinGas = thinGasOf({ data, medium: 'air', te }, line);
   const ritzVac = data.ritzVac(line);
@@ -165,5 +182,14 @@ export function lineRecord(data: AtomicData, line: number, te: number): LineReco
     strengthNote: data.strengthNote(line),
     ...(thinGas ? { thinGas } : {}),
     sources: data.lineSources(line),
+    companions: finder(line, te, ne).map(
+      (other): ListedCompanion => ({
+        index: other.line,
+        ion: ionLabel(data, other.line),
+        wavelengthAir: airFromVacuum(data.lines.wavelengthVac[other.line]),
+        relation: other.relation,
+        ...(other.predicted ? { ratio: other.predicted.ratio, errDex: other.predicted.errDex, basis: other.predicted.basis } : {}),
+      }),
+    ),
   };
 }

@@ -25,8 +25,15 @@ export type WorkerRequest =
     }
   /** Looks into the line list; `query` as in `searchLines`. */
   | { readonly ask: 'lines'; readonly id: number; readonly query: string; readonly own?: OwnLines }
-  /** All the list holds of one line; `te` in K. */
-  | { readonly ask: 'record'; readonly id: number; readonly line: number; readonly te: number; readonly own?: OwnLines }
+  /** All the list holds of one line; `te` in K, `ne` in cm^-3. */
+  | {
+      readonly ask: 'record';
+      readonly id: number;
+      readonly line: number;
+      readonly te: number;
+      readonly ne: number;
+      readonly own?: OwnLines;
+    }
   /** Reads the user's own lines without taking them: a problem for every bad row. */
   | { readonly ask: 'check-lines'; readonly id: number; readonly own: OwnLines };
 

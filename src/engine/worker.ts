@@ -1,11 +1,11 @@
 /// <reference lib="webworker" />
-import { loadAtomicData } from '../atomic/index.ts';
+import { type AtomicData, type CompanionFinder, companionFinder, loadAtomicData } from '../atomic/index.ts';
 import { type Problem, ProblemError } from '../problems/index.ts';
 import type { ByteSource } from '../readers/index.ts';
 import type { SamplesView } from './analysis.ts';
 import { checkOwnLines } from './checkOwnLines.ts';
 import { createEngine, type Engine } from './engine.ts';
-import { lineRecord, searchLines } from './lineSearch.ts';
+import { type LineRecord, lineRecord, searchLines } from './lineSearch.ts';
 import type { WorkerAnswer, WorkerRequest } from './protocol.ts';
 
 // The worker's entry: turns messages into calls of the engine and errors into data. One request runs at a time.
@@ -33,12 +33,18 @@ async function answer(request: WorkerRequest): Promise<void> {
       say({ say: 'lines', id: request.id, result: searchLines(engine.dataWith(request.own), request.query) });
     else if (request.ask === 'check-lines')
       say({ say: 'checked', id: request.id, ...checkOwnLines(engine.dataWith(undefined), request.own) });
-    else if (request.ask === 'record')
-      say({ say: 'record', id: request.id, record: lineRecord(engine.dataWith(request.own), request.line, request.te) });
+    else if (request.ask === 'record') say({ say: 'record', id: request.id, record: recordOf(engine.dataWith(request.own), request) });
     else await analyse(engine, request);
   } catch (error) {
     say({ say: 'problem', id: request.id, problem: problemOf(error) });
   }
+}
+
+let lastFinder: { readonly data: AtomicData; readonly find: CompanionFinder } | undefined;
+
+function recordOf(data: AtomicData, { line, te, ne }: Extract<WorkerRequest, { ask: 'record' }>): LineRecord {
+  if (lastFinder?.data !== data) lastFinder = { data, find: companionFinder(data) };
+  return lineRecord(data, line, te, ne, lastFinder.find);
 }
 
 async function start(id: number, bundleUrl: string): Promise<void> {

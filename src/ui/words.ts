@@ -59,6 +59,9 @@ export const words = {
     ritz: 'From the levels alone, vacuum',
     wavelength: 'Wavelength',
     sources: 'Sources',
+    companions: 'Companions: flux over this line’s',
+    relations: { 'same-upper-level': 'same upper level', 'same-multiplet': 'same multiplet', 'same-ion': 'same ion' },
+    ratio: (value: string, dex: string) => `${value} ± ${dex} dex`,
     own: 'Your own lines',
     ownHint:
       'A CSV with the columns ion and wavelength_air or wavelength_vac (Å); if known also uncertainty, nature, strength (Hβ = 100), lower, upper. They join the list for this session.',

@@ -22,8 +22,8 @@ export interface WorkerClient {
   analyse(settings: Settings, verdicts: readonly Verdict[]): Promise<Analysed>;
   /** Looks into the line list: ion, wavelength in air, words of the multiplet, in any order. */
   searchLines(query: string, own: OwnLines | undefined): Promise<LineSearchResult>;
-  /** All the list holds of one line; critical density at `te`, K. */
-  lineRecord(line: number, te: number, own: OwnLines | undefined): Promise<LineRecord>;
+  /** All the list holds of one line; critical density and companions at `te` (K) and `ne` (cm^-3). */
+  lineRecord(line: number, te: number, ne: number, own: OwnLines | undefined): Promise<LineRecord>;
   /** Reads the user's own lines without taking them: a problem for every bad row. */
   checkLines(own: OwnLines): Promise<Extract<WorkerAnswer, { say: 'checked' }>>;
   /** Ends the thread: what is pending rejects with `Cancelled`; whoever calls next has to open the file again. */
@@ -104,8 +104,8 @@ export function workerClient(bundleUrl: string, progress: (p: Progress) => void,
       if (answer.say !== 'lines') throw new TypeError(`lines was answered by ${answer.say}`);
       return answer.result;
     },
-    async lineRecord(line, te, own) {
-      const answer = await post(await running(), { ask: 'record', line, te, own });
+    async lineRecord(line, te, ne, own) {
+      const answer = await post(await running(), { ask: 'record', line, te, ne, own });
       if (answer.say !== 'record') throw new TypeError(`record was answered by ${answer.say}`);
       return answer.record;
     },

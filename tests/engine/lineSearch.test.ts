@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest';
+import { companionFinder } from '../../src/atomic/index.ts';
 import { lineRecord, searchLines } from '../../src/engine/index.ts';
 import { bundled, lineAtAir } from '../atomic/bundledData.ts';
 
@@ -39,12 +40,16 @@ describe('the line list, searched', () => {
 });
 
 test('a record holds levels, A value, lifetime, critical density, strength and sources', () => {
-  const record = lineRecord(bundled, lineAtAir('O III', 5006.843), 10_000);
+  const record = lineRecord(bundled, lineAtAir('O III', 5006.843), 10_000, 1_000, companionFinder(bundled));
   expect(record).toMatchObject({ ion: '[O III]', nature: 'forbidden', lower: '2p2 3P 2', upper: '2p2 1D 2' });
   // A = 0.0202 s^-1: Storey & Zeippen 2000, MNRAS 312, 813 (from memory)
   expect(record.aValue).toBeCloseTo(0.0202, 3);
   expect(record.thinGas?.nCrit).toBeGreaterThan(5e5);
   expect(record.sources.length).toBeGreaterThan(0);
   expect(record.strengthNote).not.toBe('');
-  expect(() => lineRecord(bundled, -1, 10_000)).toThrow(RangeError);
+  // 5007 / 4959 = 2.98: Storey & Zeippen 2000, MNRAS 312, 813
+  const doublet = record.companions.find((c) => Math.abs(c.wavelengthAir - 4958.91) < 0.1);
+  expect(doublet?.relation).toBe('same-upper-level');
+  expect(1 / (doublet?.ratio ?? 0)).toBeCloseTo(2.98, 1);
+  expect(() => lineRecord(bundled, -1, 10_000, 1_000, companionFinder(bundled))).toThrow(RangeError);
 });

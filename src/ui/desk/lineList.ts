@@ -12,14 +12,14 @@ export function useLineSearch(query: string): LineSearchResult | undefined {
   return result;
 }
 
-/** All the list holds of a line, `te` in K. */
-export function useLineRecord(line: number | undefined, te: number): LineRecord | undefined {
+/** All the list holds of a line, `te` in K, `ne` in cm^-3. */
+export function useLineRecord(line: number | undefined, te: number, ne: number): LineRecord | undefined {
   const [record, setRecord] = useState<LineRecord>();
   const own = useDesk((state) => state.history.document.settings.ownLines);
   useEffect(() => {
     setRecord(undefined);
-    return line === undefined ? undefined : ask(() => listClient().lineRecord(line, te, own), setRecord);
-  }, [line, te, own]);
+    return line === undefined ? undefined : ask(() => listClient().lineRecord(line, te, ne, own), setRecord);
+  }, [line, te, ne, own]);
   return record;
 }
 

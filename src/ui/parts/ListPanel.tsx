@@ -8,14 +8,15 @@ import { OwnLinesBox } from './OwnLinesBox.tsx';
 import '../list.css';
 
 const { list: label } = words;
-const DEFAULT_TE = 10_000;
+/** The gas of critical densities and companions while no spectrum is open: K and cm^-3. */
+const DEFAULT_GAS = { te: 10_000, ne: 1_000 };
 
 /** The bundled line list: search it, and see all it holds of a line. */
 export function ListPanel() {
   const [query, setQuery] = useState('');
   const [line, setLine] = useState<number>();
-  const te = useDesk((state) => state.analysis?.settings.naming.te) ?? DEFAULT_TE;
-  const record = useLineRecord(line, te);
+  const { te, ne } = useDesk((state) => state.analysis?.settings.naming) ?? DEFAULT_GAS;
+  const record = useLineRecord(line, te, ne);
   return (
     <section className="list">
       <h2>{label.title}</h2>
@@ -29,7 +30,7 @@ export function ListPanel() {
           <button type="button" className="small" onClick={() => setLine(undefined)}>
             {label.back}
           </button>
-          {record && <RecordView record={record} te={te} />}
+          {record && <RecordView record={record} te={te} choose={setLine} />}
         </>
       )}
     </section>
@@ -73,7 +74,7 @@ function ListRow({ line, choose }: { line: ListedLine; choose: (line: number) =>
   );
 }
 
-function RecordView({ record, te }: { record: LineRecord; te: number }) {
+function RecordView({ record, te, choose }: { record: LineRecord; te: number; choose: (line: number) => void }) {
   const err = record.wavelengthErr >= 0.001 ? fixed(record.wavelengthErr, 3) : powerText(record.wavelengthErr, 1);
   const facts: readonly (readonly [string, string, string?])[] = [
     [
@@ -117,6 +118,25 @@ function RecordView({ record, te }: { record: LineRecord; te: number }) {
           </div>
         ))}
       </dl>
+      {record.companions.length > 0 && (
+        <>
+          <h3>{label.companions}</h3>
+          <ul className="list-lines" aria-label={label.companions}>
+            {record.companions.map((other) => (
+              <li key={other.index}>
+                <button type="button" className="list-row" onClick={() => choose(other.index)}>
+                  <strong>{other.ion}</strong>
+                  <span className="figure">{fixed(other.wavelengthAir, 3)}</span>
+                  <span className="list-levels">{label.relations[other.relation]}</span>
+                  <span className="figure">
+                    {other.ratio === undefined ? '–' : label.ratio(powerText(other.ratio, 3), round(other.errDex, 1))}
+                  </span>
+                </button>
+              </li>
+            ))}
+          </ul>
+        </>
+      )}
       <h3>{label.sources}</h3>
       <ul className="list-sources">
         {record.sources.map((source) => (
