@@ -36,6 +36,22 @@ describe('decimation', () => {
     expect(decimate(x, y, 2.5, 4.5, 0.01)).toEqual({ x: [2, 3, 4, 5], y: [1, 0, 1, 0] });
   });
 
+  it('ends where the edge of a column is rounded onto a sample', () => {
+    const at = 3651.3883333333333;
+    const step = 3.688271043771044;
+    expect((Math.floor(at / step) + 1) * step).toBeLessThanOrEqual(at);
+    const x = Float64Array.from({ length: 400 }, (_, i) => at + i * 0.1);
+    expect(
+      decimate(
+        x,
+        x.map(() => 1),
+        at,
+        at + 40,
+        step,
+      ).y.length,
+    ).toBeGreaterThan(0);
+  });
+
   it('breaks the line where samples are masked', () => {
     const x = grid(10_000);
     const y = x.map((_, i) => (i > 4000 && i < 6000 ? Number.NaN : 1));

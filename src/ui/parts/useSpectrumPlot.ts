@@ -1,5 +1,5 @@
 import { type RefObject, useEffect, useMemo, useRef, useState } from 'react';
-import { rangeOf, useChosenRow } from '../desk/chosen.ts';
+import { rangeOf } from '../desk/chosen.ts';
 import { useDesk } from '../desk/deskStore.ts';
 import { fluxScale } from '../plot/fluxScale.ts';
 import { inkOf } from '../plot/inkOf.ts';
@@ -23,7 +23,6 @@ export function useSpectrumPlot(
   const scale = useDesk((desk) => desk.scale);
   const gain = useDesk((desk) => desk.gain);
   const frame = useDesk((desk) => desk.frame);
-  const chosen = useChosenRow()?.index;
   const dark = useDarkness();
   const layout = useMemo(() => size && layoutOf(size.width, size.height, samples !== undefined), [size, samples]);
   const whole = useMemo(() => rangeOf(samples?.wavelength, rows), [samples, rows]);
@@ -55,7 +54,6 @@ export function useSpectrumPlot(
     return {
       samples,
       rows,
-      chosen,
       medium: analysis.reading.medium,
       fluxUnit: analysis.reading.fluxUnit,
       frame,
@@ -65,7 +63,7 @@ export function useSpectrumPlot(
       ink: inkOf(canvas.current, dark),
       layout,
     };
-  }, [analysis, layout, canvas, samples, rows, chosen, frame, scale, gain, dark]);
+  }, [analysis, layout, canvas, samples, rows, frame, scale, gain, dark]);
 
   const shown = useRef<SpectrumScene>(undefined);
   useEffect(() => {

@@ -27,14 +27,16 @@ export function decimate(x: Float64Array, y: Float64Array, from: number, to: num
     let least = -1;
     let greatest = -1;
     let gap = false;
-    for (; i < end && x[i] < edge; i++) {
+    // at least one sample is taken: a rounded edge may lie on the sample itself
+    do {
       const value = y[i];
       if (Number.isNaN(value)) gap = true;
       else {
         if (least < 0 || value < y[least]) least = i;
         if (greatest < 0 || value >= y[greatest]) greatest = i;
       }
-    }
+      i++;
+    } while (i < end && x[i] < edge);
     if (least >= 0) {
       push(points, x, y, Math.min(least, greatest));
       if (least !== greatest) push(points, x, y, Math.max(least, greatest));

@@ -34,7 +34,6 @@ interface MarkView {
   /** The view at rest, observed Angstrom: labels are kept inside it. */
   readonly view: Range;
   readonly pixelsPerAngstrom: number;
-  readonly chosen: number | undefined;
   readonly mostLabels: number;
   readonly factor: number;
 }
@@ -46,9 +45,9 @@ export const laneOfRow = (row: DeskRow) => (row.name ? laneOf(row.name.transitio
 export function marksOf(rows: readonly DeskRow[], view: MarkView): Marks {
   const seen = rows.filter(({ feature }) => feature.centroid >= view.from && feature.centroid <= view.to);
   const wishes = seen.flatMap((row, k) => {
-    const text = row.name ? shortName(row.name) : row.index === view.chosen ? row.feature.centroid.toFixed(1) : '';
-    if (text === '') return [];
-    const importance = row.index === view.chosen ? Number.POSITIVE_INFINITY : prominence(row);
+    if (!row.name) return [];
+    const text = shortName(row.name);
+    const importance = prominence(row);
     return [{ k, x: labelPlace(row.feature.centroid, text, view), lane: laneOfRow(row), text, importance }];
   });
   const fitting = labelsThatFit(wishes, widthOf, view.mostLabels);

@@ -18,7 +18,6 @@ import type { Range } from './viewRange.ts';
 export interface SpectrumScene {
   readonly samples?: PlotSamples;
   readonly rows: readonly DeskRow[];
-  readonly chosen?: number;
   readonly medium: 'air' | 'vacuum';
   readonly fluxUnit: string;
   readonly frame: Frame;
@@ -69,7 +68,6 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
     to: window[1],
     view,
     pixelsPerAngstrom: 1 / step,
-    chosen: scene.chosen,
     mostLabels: LABELS_IN_VIEW * 3,
     factor: frameFactor(scene),
   });
@@ -149,7 +147,7 @@ export interface Axes {
   readonly fluxTitle: string;
 }
 
-/** What depends on the view alone: cheap, done at every move. */
+/** What depends on the view alone. */
 export function axesOf(scene: SpectrumScene, drawn: DrawnWindow, view: Range): Axes {
   const factor = frameFactor(scene);
   const [low, high] = fluxRange(scene, drawn, view);
@@ -166,13 +164,9 @@ export function axesOf(scene: SpectrumScene, drawn: DrawnWindow, view: Range): A
   };
 }
 
-/** The axes as a change of an existing picture. */
-export const axesChange = (axes: Axes): object => ({
-  'xaxis.range': axes.x,
-  'yaxis2.range': axes.y,
-  'yaxis2.tickvals': axes.ticks.at,
-  'yaxis2.ticktext': axes.ticks.text,
-  'yaxis2.title.text': axes.fluxTitle,
+/** A move as a change of an existing picture: along the spectrum only, which is cheap and calm; the flux axis follows when the view rests. */
+export const moveTo = (scene: SpectrumScene, view: Range): object => ({
+  'xaxis.range': [view[0] * frameFactor(scene), view[1] * frameFactor(scene)],
 });
 
 /** Drops the unit when the title would be longer than its axis. */

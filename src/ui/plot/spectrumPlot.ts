@@ -1,5 +1,5 @@
 import type * as Plotly from 'plotly.js/lib/core';
-import { axesChange, axesOf, type DrawnWindow, drawWindow, layoutFor, type SpectrumScene } from './spectrumFigure.ts';
+import { axesOf, type DrawnWindow, drawWindow, layoutFor, moveTo, type SpectrumScene } from './spectrumFigure.ts';
 import type { Range } from './viewRange.ts';
 
 /** The drawn spectrum: takes a scene and a view, draws at most once a frame. */
@@ -12,8 +12,8 @@ export interface SpectrumPlot {
 }
 
 /** A view that differs from the drawn one by more than this factor gets new curves and labels. */
-const SAME_ZOOM = 1.15;
-/** Milliseconds of rest after which a moved view gets labels of its own. */
+const SAME_ZOOM = 1.7;
+/** Milliseconds of rest after which a moved view gets a flux axis and labels of its own. */
 const REST_MS = 140;
 
 /** What is used of the library. Its own type of `relayout` does not know dotted paths (`xaxis.range`). */
@@ -57,7 +57,7 @@ export async function createSpectrumPlot(element: HTMLElement, drawn: (ms: numbe
     const began = performance.now();
     if (!window || !covers(window, view)) rebuild(scene);
     else {
-      void lib.relayout(element, axesChange(axesOf(scene, window, view)));
+      void lib.relayout(element, moveTo(scene, view));
       clearTimeout(rest);
       rest = setTimeout(refresh, REST_MS);
     }
