@@ -1,17 +1,10 @@
 import { nearestWord, type Place, ProblemError } from '../problems/index.ts';
 import { roleOf } from './columnRoles.ts';
-import type { Column, RoleGuess } from './columns.ts';
+import type { Column, RankedColumn } from './columns.ts';
 import type { ErrorValues } from './errorValues.ts';
 import { guessByNumbers } from './guessByNumbers.ts';
 import { type Notes, noteFact, warn } from './notes.ts';
 import type { ReadingChoices } from './reading.ts';
-
-/** A column with its place and its likely role. */
-export interface RankedColumn extends RoleGuess {
-  readonly column: Column;
-  /** From 0. */
-  readonly index: number;
-}
 
 /** The columns that make a spectrum. */
 export interface ChosenColumns {

@@ -10,7 +10,7 @@ const FLUX_WORDS =
   adu dn electrons signal brightness surf sb radiance irradiance lum luminosity reflectance transmission photons value values f i y net data sci`);
 const ERROR_WORDS =
   words(`err errs error errors er sigma sig std stdev stddev stdv sd unc uncert uncertainty uncertainties noise rms dflux eflux fluxerr
-  errflux fluxerror fluxsig sigflux fluxsigma fluxunc fluxstd dfl ferr specerr staterr stat`);
+  errflux fluxerror fluxsig sigflux fluxsigma fluxunc fluxstd staterror sigmaflux errorflux dfl ferr specerr staterr stat`);
 const VARIANCE_WORDS = words('var variance vari fluxvar varflux');
 const IVAR_WORDS = words('ivar invvar invar ivars fluxivar');
 const MASK_WORDS = words('mask masks dq flag flags quality qual bad badpix pixmask andmask ormask good ok usable bitmask');

@@ -35,3 +35,10 @@ export interface RoleGuess {
   readonly stem: string;
   readonly reason: string;
 }
+
+/** A column with its place and its likely role. */
+export interface RankedColumn extends RoleGuess {
+  readonly column: Column;
+  /** From 0. */
+  readonly index: number;
+}

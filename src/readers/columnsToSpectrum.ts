@@ -167,8 +167,12 @@ export function unitInName(name: string): SpectralUnit | undefined {
   return whole ? spectralUnit(whole[0]) : undefined;
 }
 
+/** Characters of a sentence that are looked at. */
+const LONGEST_SENTENCE = 300;
+
 /** A unit of wavelength in a sentence: "lam - wavelength in microns", "Wavelength (Angstrom), air". */
-export function unitInWords(text: string): SpectralUnit | undefined {
+export function unitInWords(words: string): SpectralUnit | undefined {
+  const text = words.slice(0, LONGEST_SENTENCE);
   if (!/wave|lam(bda)?\b|λ|\bwl\b|spectral|frequenc|\bang|micron|dispersion|x[-_ ]?axis/i.test(text)) return undefined;
   const told = /\b(?:in(?:\s+units?\s+of)?|units?(?:\s+(?:of|are|is|in))?\s*[:=]?)\s+([^\s,;:.()[\]]+)/gi;
   for (const match of text.matchAll(told)) {

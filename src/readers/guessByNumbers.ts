@@ -1,4 +1,4 @@
-import type { RankedColumn } from './chooseColumns.ts';
+import type { RankedColumn } from './columns.ts';
 
 interface Guess {
   readonly wavelength?: RankedColumn;

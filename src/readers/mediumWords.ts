@@ -10,11 +10,15 @@ const TO_VACUUM = /\b(air)\b.{0,12}\bto\b.{0,12}\b(vac(uum)?)\b/i;
 const TO_AIR = /\b(vac(uum)?)\b.{0,12}\bto\b.{0,12}\b(air)\b/i;
 const ABOUT_WAVELENGTHS = /wave|lam(bda)?\b|λ|angstrom|\bwl\b|medium|spectral|airorvac|refract/i;
 
+/** Characters of a line that are looked at. */
+const LONGEST_SENTENCE = 300;
+
 /**
  * Whether a line of text says that wavelengths are in air or in vacuum; undefined when it does not, or says both.
  * "air mass", "vacuum pump" and the like are not about wavelengths.
  */
-export function mediumInWords(text: string): MediumEvidence | undefined {
+export function mediumInWords(words: string): MediumEvidence | undefined {
+  const text = words.slice(0, LONGEST_SENTENCE);
   if (!ABOUT_WAVELENGTHS.test(text)) return undefined;
   const evidence = `"${text.trim().slice(0, 100)}"`;
   if (TO_VACUUM.test(text)) return { medium: 'vacuum', evidence };

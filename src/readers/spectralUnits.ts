@@ -1,5 +1,3 @@
-import { airFromVacuum } from '../units/index.ts';
-
 /** What a spectral axis counts. */
 export type SpectralQuantity = 'wavelength' | 'frequency' | 'energy' | 'wavenumber' | 'velocity';
 
@@ -33,7 +31,7 @@ const SPELLINGS: readonly Spelling[] = [
   { name: 'um', quantity: 'wavelength', scale: 1e4, spelt: /^(um|µm|μm|mum|\\mum|microns?|micromet(er|re)s?|mu|micro-?m)$/i },
   { name: 'mm', quantity: 'wavelength', scale: 1e7, spelt: /^(mm|millimet(er|re)s?)$/ },
   { name: 'cm', quantity: 'wavelength', scale: 1e8, spelt: /^(cm|centimet(er|re)s?)$/i },
-  { name: 'm', quantity: 'wavelength', scale: 1e10, spelt: /^(m|met(er|re)s?)$/ },
+  { name: 'm', quantity: 'wavelength', scale: 1e10, spelt: /^(m|[mM][eE][tT]([eE][rR]|[rR][eE])[sS]?)$/ },
   { name: 'pm', quantity: 'wavelength', scale: 1e-2, spelt: /^(pm|picomet(er|re)s?)$/ },
   { name: 'Hz', quantity: 'frequency', scale: 1, spelt: /^(hz|hertz|s-1|1\/s|s\*\*-1|s\^-1|sec-1)$/i },
   { name: 'kHz', quantity: 'frequency', scale: 1e3, spelt: /^khz$/i },
@@ -61,6 +59,7 @@ const MEDIUM_WORDS = /[\s_,;:/-]*[([]?\s*\b(in\s+)?(air|vacuum|vac|obs(erved)?|r
  * Takes VOUnits and FITS forms with a scale factor (`0.1nm`, `10**-10 m`), logarithms (`log(Angstrom)`), brackets, and the usual misspellings.
  */
 export function spectralUnit(words: string): SpectralUnit | undefined {
+  if (words.length > 200) return undefined;
   const bare = words
     .normalize('NFKC')
     .replace(MEDIUM_WORDS, ' ')
@@ -147,8 +146,3 @@ export function likelyUnit(low: number, high: number): { readonly unit: Spectral
 }
 
 const short = (value: number) => String(Number(value.toPrecision(6)));
-
-/** Air wavelengths of an array in vacuum Angstrom, in place. */
-export function turnToAir(vacuum: Float64Array): void {
-  for (let i = 0; i < vacuum.length; i++) vacuum[i] = airFromVacuum(vacuum[i]);
-}

@@ -3,7 +3,7 @@ import type { Column } from '../columns.ts';
 import { type Notes, warn } from '../notes.ts';
 import type { ByteSource, ReadingControl } from '../reading.ts';
 import { numberInWords } from '../text/parseNumber.ts';
-import { MOST_SAMPLES } from './binaryTable.ts';
+import { LONGEST_NAME, MOST_SAMPLES } from './binaryTable.ts';
 import type { Hdu } from './hdus.ts';
 import { numberOf, textOf } from './header.ts';
 
@@ -47,7 +47,7 @@ export function asciiColumns(hdu: Hdu, source: ByteSource, control: ReadingContr
       return scale === 1 && zero === 0 ? stored : stored * scale + zero;
     };
     return {
-      name: textOf(header, `TTYPE${k}`) || String(k),
+      name: textOf(header, `TTYPE${k}`).slice(0, LONGEST_NAME) || String(k),
       unit: textOf(header, `TUNIT${k}`),
       ...(textOf(header, `TUCD${k}`) ? { ucd: textOf(header, `TUCD${k}`) } : {}),
       kind: match[1] === 'A' ? 'text' : match[1] === 'I' && scale === 1 ? 'whole' : 'real',

@@ -39,6 +39,8 @@ export const MOST_SAMPLES = 50_000_000;
 const SLICE = 1 << 24;
 const KEPT = 1 << 27;
 const MOST_FIELDS = 999;
+/** Longer names are cut: they are damage. */
+export const LONGEST_NAME = 100;
 
 /** The fields of a table. @throws ProblemError where a TFORM means nothing or the fields are longer than the rows */
 export function openBinaryTable(hdu: Hdu, notes: Notes): BinaryTable {
@@ -66,7 +68,7 @@ export function openBinaryTable(hdu: Hdu, notes: Notes): BinaryTable {
     const pointer = letter === 'P' || letter === 'Q' ? letter : undefined;
     fields.push({
       number: k,
-      name: textOf(header, `TTYPE${k}`),
+      name: textOf(header, `TTYPE${k}`).slice(0, LONGEST_NAME),
       unit: textOf(header, `TUNIT${k}`),
       ucd: textOf(header, `TUCD${k}`),
       utype: textOf(header, `TUTYP${k}`),

@@ -6,7 +6,6 @@ import type { ReadingChoices } from '../reading.ts';
 import type { FitsFile } from './candidate.ts';
 import { type Hdu, nameHdu } from './hdus.ts';
 import { textOf } from './header.ts';
-import type { Bands } from './imageCandidate.ts';
 import { imageLine } from './imageLine.ts';
 
 /** Other units of a file that belong to an image of fluxes. */
@@ -103,35 +102,4 @@ export async function companionMask(
     notes,
     { hdu: mask.index },
   );
-}
-
-/** Errors from the band that is called sigma or error. */
-export async function bandErrors(
-  { source, notes }: FitsFile,
-  hdu: Hdu,
-  along: number,
-  at: readonly number[],
-  bands: Bands,
-): Promise<ErrorValues | undefined> {
-  const k = bands.names.findIndex((name) => /\b(sigma|error|err|uncertainty|noise|variance|ivar)\b/i.test(name.split(' - ')[0]));
-  if (k < 0) return undefined;
-  const word = bands.names[k].split(' - ')[0];
-  const meaning = /ivar|inverse/i.test(word) ? 'ivar' : /variance/i.test(word) ? 'variance' : 'sigma';
-  noteFact(
-    notes,
-    'uncertainty',
-    `band ${k + 1}, taken as ${meaning === 'sigma' ? 'one sigma' : meaning === 'ivar' ? 'inverse variance' : 'variance'}`,
-    `BANDID${k + 1} = ${bands.names[k]}`,
-  );
-  return {
-    values: await imageLine(
-      source,
-      hdu,
-      along,
-      at.map((p, j) => (j === bands.axis - 1 ? k : p)),
-      notes,
-    ),
-    meaning,
-    label: `band ${k + 1}`,
-  };
 }

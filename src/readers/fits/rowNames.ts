@@ -14,6 +14,8 @@ export interface RowNames {
 
 const MOST_LINES = 12;
 const LEAST_SAMPLES = 20;
+/** Longer lines are not looked through for wavelengths: that would read the whole file. */
+const MOST_LOOKED_AT = 2_000_000;
 
 /**
  * Whether the lines of a two-dimensional image are wavelength, flux and so on: the header names them, or one line rises or falls throughout
@@ -52,6 +54,7 @@ const unique = (names: readonly string[]) => names.map((n, k) => (names.indexOf(
 
 async function byNumbers(file: FitsFile, hdu: Hdu, axis: 1 | 2, lines: number): Promise<RowNames | undefined> {
   const quiet = { ...file.notes, how: [], remarks: [], offers: [] };
+  if (hdu.axes[axis - 1] > MOST_LOOKED_AT) return undefined;
   let wave: number | undefined;
   for (let k = 0; k < lines; k++) {
     const values = await imageLine(file.source, hdu, axis, axis === 1 ? [0, k] : [k, 0], quiet);
@@ -72,7 +75,7 @@ async function byNumbers(file: FitsFile, hdu: Hdu, axis: 1 | 2, lines: number): 
 }
 
 /** Strictly monotonic, positive, over more than a counter's steps of 1. */
-export function wavelengthRow(values: Float64Array): boolean {
+function wavelengthRow(values: Float64Array): boolean {
   const n = values.length;
   if (n < LEAST_SAMPLES) return false;
   const sign = Math.sign(values[n - 1] - values[0]);

@@ -17,7 +17,7 @@ export function watText(header: Header, axis: number): string {
 /** `wtype=linear label=Wavelength units=angstroms spec1 = "..."` as pairs. */
 export function watAttributes(header: Header, axis: number): Readonly<Record<string, string | undefined>> {
   const pairs: Record<string, string> = {};
-  for (const [, name, quoted, bare] of watText(header, axis).matchAll(/([A-Za-z]\w*)\s*=\s*(?:"([^"]*)(?:"|$)|(\S+))/g))
+  for (const [, name, quoted, bare] of watText(header, axis).matchAll(/\b([A-Za-z]\w{0,30})\s*=\s*(?:"([^"]*)(?:"|$)|(\S+))/g))
     pairs[name.toLowerCase()] ??= quoted ?? bare;
   return pairs;
 }

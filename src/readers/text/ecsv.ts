@@ -29,9 +29,6 @@ export function ecsvColumns(comments: readonly string[]): NamedColumn[] {
   return columns;
 }
 
-export const ecsvDelimiter = (comments: readonly { text: string }[]): string =>
-  /delimiter\s*:\s*['"]?([,|;\t ])/.exec(comments.map((c) => c.text).join('\n'))?.[1] ?? ' ';
-
 function columnOf(item: string): NamedColumn | undefined {
   const found = new Map<string, string>();
   for (const [, key, value] of item.matchAll(PAIR)) if (!found.has(key)) found.set(key, unquote(value.trim()));

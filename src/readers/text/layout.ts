@@ -1,6 +1,6 @@
 import { commentText, type Dialect, isComment, splitLine } from './cells.ts';
 import { findDialect, isRow } from './dialect.ts';
-import { ecsvColumns, ecsvDelimiter } from './ecsv.ts';
+import { ecsvColumns } from './ecsv.ts';
 import { type NamedColumn, namesOfColumns } from './headerNames.ts';
 import { ipacHeader } from './ipac.ts';
 
@@ -22,6 +22,9 @@ export interface Layout {
   readonly places?: readonly (readonly [number, number])[];
 }
 
+/** Characters of a comment or of a header line that are looked at. */
+const LONGEST_COMMENT = 500;
+const LONGEST_HEADER = 5000;
 /** Lines looked at to find the dialect. */
 const SAMPLE = 400;
 
@@ -39,8 +42,7 @@ export function findLayout(head: string, whole: boolean): Layout | undefined {
   });
   const ipac = ipacHeader(plain);
   const candidates = ipac ? plain.slice(ipac.lines) : plain;
-  const fit =
-    isEcsv && ecsvDelimiter(comments) === ',' ? findDialect(sampleOf(candidates).map((t) => t)) : findDialect(sampleOf(candidates));
+  const fit = findDialect(sampleOf(candidates));
   if (!fit) return undefined;
   const { dialect, columns } = fit;
   const isData = (text: string) => {
@@ -50,11 +52,11 @@ export function findLayout(head: string, whole: boolean): Layout | undefined {
   const firstAt = candidates.findIndex(({ text }) => isData(text));
   if (firstAt < 0) return undefined;
   const firstLine = candidates[firstAt].at;
-  const before = comments.filter((c) => c.at < firstLine).map((c) => commentText(c.text));
+  const before = comments.filter((c) => c.at < firstLine).map((c) => commentText(c.text.slice(0, LONGEST_COMMENT)));
   const after = comments
     .filter((c) => c.at > firstLine)
     .slice(0, 200)
-    .map((c) => commentText(c.text));
+    .map((c) => commentText(c.text.slice(0, LONGEST_COMMENT)));
   const base = { dialect, firstRow: firstLine + 1, comments: [...before, ...after], missingValues: declaredMissing([...before, ...after]) };
 
   if (ipac) {
@@ -69,7 +71,7 @@ export function findLayout(head: string, whole: boolean): Layout | undefined {
       ...(places ? { places } : {}),
     };
   }
-  const headers = candidates.slice(0, firstAt).map(({ text }) => text);
+  const headers = candidates.slice(0, firstAt).map(({ text }) => text.slice(0, LONGEST_HEADER));
   if (isEcsv) {
     const declared = ecsvColumns(comments.map((c) => c.text));
     if (declared.length === columns) return { ...base, format: 'ECSV', columns: declared, namesFrom: 'the ECSV header', strayLines: 0 };

@@ -10,6 +10,8 @@ const MOST_DIGITS = 15;
 
 /** What a cell that is no finite number means. */
 export const MISSING = Number.NaN;
+/** Longer cells are no numbers. */
+const LONGEST_NUMBER = 100;
 const MISSING_WORDS =
   /^(|nan|-nan|\+nan|nan\(.*\)|null|none|nil|n\/?a|<na>|masked|missing|undef(ined)?|indef|blank|--+|-|\.\.\.|\.|\*+|\?+|#n\/a|n\.a\.|nodata|no_data|1\.#qnan0?|-1\.#ind0*|1\.#qnan0*)$/i;
 const INFINITE_WORDS = /^[+-]?(inf(inity)?|1\.#inf0*)$/i;
@@ -77,6 +79,7 @@ function decimalNumber(bytes: Uint8Array, from: number, to: number, point: numbe
 
 /** The slow way for what the fast way does not take. */
 export function numberInWords(words: string, decimalComma: boolean): number | undefined {
+  if (words.length > LONGEST_NUMBER) return undefined;
   const text = decimalComma ? words.replace(',', '.') : words;
   if (PLAIN.test(text)) return Number(text);
   if (MISSING_WORDS.test(text) || INFINITE_WORDS.test(text)) return MISSING;

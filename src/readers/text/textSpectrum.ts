@@ -133,7 +133,7 @@ function fluxUnitOfComments(comments: readonly string[]): { unit: string; eviden
   for (const text of comments) {
     if (!FLUX_WORDS.test(text)) continue;
     const after = text.slice(text.search(FLUX_WORDS));
-    const bracket = /[[(]([^\])]*(?:\([^)]*\)[^\])]*)*)[\])]/.exec(after)?.[1];
+    const bracket = bracketIn(after);
     const told = /(?:\bin(?: units? of)?|units?\s*[:=]?)\s+(.+)$/i.exec(after)?.[1];
     const valued = /^bunit\s*=\s*(?:'([^']*)'|[^'/]*)/i.exec(text.trim())?.[1];
     const unit = [valued, bracket, told]
@@ -142,6 +142,18 @@ function fluxUnitOfComments(comments: readonly string[]): { unit: string; eviden
       .replace(/[.;,]+$/, '');
     if (unit && unit.length < 60) return { unit, evidence: `the comment "${excerpt(text)}"` };
     if (/arbitrary/i.test(after)) return { unit: 'arbitrary', evidence: `the comment "${excerpt(text)}"` };
+  }
+  return undefined;
+}
+
+/** What stands in the first bracket, brackets inside it included. */
+function bracketIn(text: string): string | undefined {
+  const start = text.search(/[[(]/);
+  if (start < 0) return undefined;
+  let depth = 0;
+  for (let i = start; i < text.length; i++) {
+    if (text[i] === '(' || text[i] === '[') depth++;
+    else if ((text[i] === ')' || text[i] === ']') && --depth === 0) return text.slice(start + 1, i);
   }
   return undefined;
 }

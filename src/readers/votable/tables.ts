@@ -65,7 +65,7 @@ export function readTables(xml: string, file: string): VoDocument {
         tables.push(table);
       } else if (name === 'FIELD' && table && table.rows === 0) {
         field = {
-          name: of('name') || of('ID') || String(table.fields.length + 1),
+          name: (of('name') || of('ID')).slice(0, 100) || String(table.fields.length + 1),
           datatype: of('datatype'),
           arraysize: of('arraysize').trim(),
           unit: of('unit'),
@@ -106,6 +106,7 @@ export function readTables(xml: string, file: string): VoDocument {
         takeCell(table, column++, text);
       } else if (name === 'TR' && table) {
         for (let k = column; k < table.fields.length; k++) takeCell(table, k, '');
+        cells += Math.max(0, table.fields.length - column);
         table.rows++;
       } else if (name === 'FIELD') field = undefined;
       else if (name === 'DESCRIPTION') {

@@ -79,7 +79,8 @@ function endOfTag(xml: string, from: number, file: string): number {
 function attributesOf(text: string): ReadonlyMap<string, string> {
   const attributes = new Map<string, string>();
   if (text.trim() === '') return attributes;
-  for (const [, name, double, single] of text.matchAll(/([^\s=]+)\s*=\s*(?:"([^"]*)"|'([^']*)')/g))
+  // bounded words keep a tag of one endless word from costing the square of its length
+  for (const [, name, double, single] of text.matchAll(/(?:^|\s)([^\s=]{1,100})\s*=\s*(?:"([^"]*)"|'([^']*)')/g))
     attributes.set(name.slice(name.indexOf(':') + 1), resolve(double ?? single));
   return attributes;
 }
