@@ -12,6 +12,8 @@ import type { Material } from './material.ts';
 /** The finished stages. */
 interface Parts {
   readonly data: AtomicData;
+  /** Of the source's bytes. */
+  readonly sha256: string;
   readonly material: Material;
   readonly measurement?: Measurement;
   readonly features: readonly Feature[];
@@ -78,6 +80,7 @@ export function assemble(parts: Parts): Analysis {
       te: namingSettings.te,
       resolvingPower: measurement?.resolvingPower,
       atomicVersion: data.version,
+      sha256: parts.sha256,
     }),
     timings: parts.timings,
   };

@@ -9,6 +9,7 @@ import { assemble } from './assemble.ts';
 import { fixedNames } from './fixedNames.ts';
 import { marksOf } from './marksOf.ts';
 import { guessKind, type Material, readMaterial, type SourceKind } from './material.ts';
+import { sourceHash } from './sourceHash.ts';
 
 /** How a run is watched and stopped. */
 export interface RunControl {
@@ -33,6 +34,7 @@ export interface Engine {
 export function createEngine(data: AtomicData, now: () => number): Engine {
   let source: { readonly bytes: ByteSource; readonly kind: SourceKind } | undefined;
   const lists = listsOf(data);
+  const hashed = stage<string>();
   const material = stage<Material>();
   const measured = stage<Measurement | undefined>();
   const named = stage<Naming>();
@@ -43,6 +45,7 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
       const found = kind === 'guess' ? await guessKind(bytes) : kind;
       source = { bytes, kind: found };
       material.forget();
+      hashed.forget();
       return found;
     },
     async analyse(settings, verdicts, control = {}) {
@@ -65,6 +68,7 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
         ),
       );
       const { spectrum } = what;
+      const sha256 = await hashed.of([], () => run('hashing', (progress) => sourceHash(bytes, progress, control.signal)));
       const measureSettings: MeasureSettings = { ...DEFAULT_MEASURE_SETTINGS, ...settings.measure };
       const measurement = await measured.of([material.stamp(), measureSettings], () =>
         spectrum
@@ -86,6 +90,7 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
       );
       return assemble({
         data: list,
+        sha256,
         material: what,
         measurement,
         features,

@@ -62,6 +62,8 @@ export interface LineTable {
   readonly resolvingPower?: number;
   /** Edition of the bundled line list. */
   readonly atomicVersion: string;
+  /** SHA-256 of the source file's bytes, hex. */
+  readonly sha256: string;
   readonly rows: readonly LineRow[];
 }
 

@@ -8,6 +8,7 @@ export function tableFacts(table: LineTable): { readonly key: string; readonly v
     { key: 'redshift', value: table.z, meaning: 'redshift of the rest frame' },
     { key: 'redshift_err', value: table.zErr, meaning: 'its error' },
     { key: 'electron_temperature', value: table.te, meaning: 'K, for the critical densities' },
+    { key: 'source_sha256', value: table.sha256, meaning: 'SHA-256 of the source file' },
     { key: 'line_list', value: table.atomicVersion, meaning: 'edition of the line list' },
     { key: 'caution', value: 'names are proposals unless the verdict says accepted', meaning: 'caution' },
   ];

@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto';
 import { readFileSync } from 'node:fs';
 import { beforeAll, describe, expect, test } from 'vitest';
 import { type Analysis, createEngine, type Engine, type FeatureView } from '../../src/engine/index.ts';
@@ -29,6 +30,10 @@ describe('the sample, opened', () => {
   test('is read as what its comments say', () => {
     expect(analysis.reading).toMatchObject({ kind: 'spectrum', medium: 'air', mediumStated: true, samples: 5070 });
     expect(analysis.reading.fluxUnit).toContain('erg');
+  });
+
+  test('carries the SHA-256 of its bytes into the table', () => {
+    expect(analysis.table.sha256).toBe(createHash('sha256').update(sample).digest('hex'));
   });
 
   test('shows its velocity of 31.2 km/s', () => {

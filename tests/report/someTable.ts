@@ -54,5 +54,6 @@ export const table = (...rows: LineRow[]): LineTable => ({
   zErr: 2e-6,
   te: 10_000,
   atomicVersion: '1',
+  sha256: 'e3b0c44298fc1c149afbf4c8996fb92427ae41e4649b934ca495991b7852b855',
   rows,
 });
