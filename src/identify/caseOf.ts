@@ -53,7 +53,7 @@ export function caseOf(
     .map((weighed): Version => {
       const looked = !isLocal(data, weighed.lines[0]) && mark.flux > 0;
       const companions = looked ? findCompanions(mark, weighed.lines[0], weighed.shares[0], marks, kin, data, survey, model, settings) : [];
-      const evidence = evidenceOf(mark, weighed, companions, data);
+      const evidence = evidenceOf(mark, weighed, companions, data, survey);
       return { weighed, companions: companions.map((c) => c.finding), evidence, odds: evidence.reduce((sum, e) => sum + e.nats, 0) };
     })
     .sort((a, b) => b.odds - a.odds);

@@ -1,13 +1,20 @@
 import type { AtomicData } from '../atomic/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import type { WeighedCompanion } from './companions.ts';
-
 import type { Evidence, Mark } from './naming.ts';
 import { isLocal } from './options.ts';
+import type { Survey } from './survey.ts';
 import type { Weighed } from './weighed.ts';
+import { fwhmKms } from './widths.ts';
 
 /** The case of one candidate: every piece of its log odds with a sentence that a referee can read. The pieces sum to the log odds against "none of these". */
-export function evidenceOf(mark: Mark, weighed: Weighed, companions: readonly WeighedCompanion[], data: AtomicData): Evidence[] {
+export function evidenceOf(
+  mark: Mark,
+  weighed: Weighed,
+  companions: readonly WeighedCompanion[],
+  data: AtomicData,
+  survey: Survey,
+): Evidence[] {
   const evidence: Evidence[] = [
     { kind: 'wavelength', nats: weighed.wavelengthNats, sentence: wavelengthSentence(mark, weighed, data) },
     { kind: 'strength', nats: weighed.strengthNats, sentence: strengthSentence(mark, weighed, data) },
@@ -16,11 +23,18 @@ export function evidenceOf(mark: Mark, weighed: Weighed, companions: readonly We
     if (finding.outcome === 'outside' || finding.outcome === 'too-faint') continue;
     evidence.push({ kind: 'companion', nats, sentence: companionSentence(mark, finding, sameUpper, data) });
   }
-  if (Math.abs(weighed.owedNats) > 0.05) evidence.push({ kind: 'ion', nats: weighed.owedNats, sentence: owedSentence(weighed, data) });
-  else evidence[1] = { ...evidence[1], nats: evidence[1].nats + weighed.owedNats };
-  evidence.push({ kind: 'prior', nats: weighed.priorNats, sentence: priorSentence(weighed) });
-  return evidence;
+  const further: Evidence[] = [
+    { kind: 'ion', nats: weighed.owedNats, sentence: owedSentence(mark, weighed, data) },
+    { kind: 'width', nats: weighed.widthNats, sentence: widthSentence(mark, weighed, survey) },
+    { kind: 'prior', nats: weighed.claimNats, sentence: claimSentence(weighed) },
+  ];
+  const told = further.filter(({ nats }) => Math.abs(nats) >= LEAST_TOLD);
+  const untold = further.reduce((sum, { nats }) => sum + (Math.abs(nats) < LEAST_TOLD ? nats : 0), 0);
+  return [...evidence, ...told, { kind: 'prior', nats: weighed.priorNats + untold, sentence: priorSentence(weighed, data) }];
 }
+
+/** Pieces below this many nats have no sentence of their own. */
+const LEAST_TOLD = 0.02;
 
 const ionName = (data: AtomicData, line: number) => data.lines.ions[data.lines.ion[line]].name;
 
@@ -62,14 +76,27 @@ function companionSentence(
   }
 }
 
-function priorSentence({ lines, priorNats }: Weighed): string {
-  const blend = lines.length > 1 ? ` and a blend of ${lines.length} is less common than one line` : '';
-  return `Few real lines are missing from the list${blend}${priorNats < 0 ? '; another feature claims this line with better right' : ''}.`;
+function priorSentence({ lines }: Weighed, data: AtomicData): string {
+  const blend = lines.length > 1 ? ` A blend of ${lines.length} is less common than one line.` : '';
+  const local = isLocal(data, lines[0]) ? ' Reduced spectra have most of their sky taken off.' : '';
+  return `About three features in a hundred belong to no line of the list.${blend}${local}`;
 }
 
-function owedSentence({ lines }: Weighed, data: AtomicData): string {
+const claimSentence = ({ lines }: Weighed) =>
+  lines.length > 1 ? 'Another feature claims a part of this blend.' : 'Another feature claims this line with as good a right.';
+
+function owedSentence(mark: Mark, { lines, logPredicted, logPredictedErr }: Weighed, data: AtomicData): string {
   const names = [...new Set(lines.map((line) => ionName(data, line)))].join(' and ');
-  return `The other lines of ${names} predict a line here above the detection limit; no other feature can be it.`;
+  const share = Number((10 ** (logPredicted - Math.log10(Math.abs(mark.flux)))).toPrecision(2));
+  const sure = 10 ** logPredictedErr;
+  return `What is known of ${names} predicts ${share} of this flux here, within a factor ${sure.toFixed(sure < 3 ? 1 : 0)}, and no other feature at this place can be that line.`;
+}
+
+function widthSentence(mark: Mark, { lines }: Weighed, { fwhmKms: typical }: Survey): string {
+  const width = fwhmKms(mark);
+  const times =
+    typical === undefined ? '' : `, ${(width / typical).toFixed(2)} times that of the brighter features (${typical.toFixed(0)} km/s)`;
+  return `Its FWHM is ${width.toFixed(0)} km/s${times}${lines.length > 1 ? '; the parts of the blend widen it' : ''}.`;
 }
 
 const signed = (value: number, digits = 1) => `${value < 0 ? '−' : '+'}${Math.abs(value).toFixed(digits)}`;

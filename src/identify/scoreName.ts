@@ -5,6 +5,7 @@ import { isLocal } from './options.ts';
 import { logFluxErr } from './sightings.ts';
 import type { WeighContext } from './weighContext.ts';
 import type { Weighed } from './weighed.ts';
+import { widthNats } from './widths.ts';
 
 /** log10 odds that a blend rather than one line is measured, before anything is known. */
 const BLEND_PRIOR = Math.log(0.35);
@@ -17,6 +18,10 @@ const WIDE_DEX = 1.2;
 const OUTLIER_SHARE = 0.02;
 const OUTLIER_SIGMAS = 3;
 const MOST_OWED = 5;
+/** Share of real lines that no list holds: common practice, no source (deep spectra leave a few percent without a name). */
+const STRANGERS = 0.03;
+/** Strangers spread over this many dex of flux. */
+const STRANGER_DEX = 3;
 
 /** The nats of one name: a line, or a blend of `parts`. */
 export function scoreName(mark: Mark, j: number, parts: readonly Single[], context: WeighContext): Weighed {
@@ -33,24 +38,23 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
   const err = Math.hypot(Math.sqrt(sorted.reduce((sum, p, k) => sum + sortedShares[k] * p.err ** 2, 0)), logFluxErr(mark));
   const excess = Math.log10(Math.abs(mark.flux)) - logPredicted;
   const normal = (x: number, s: number) => Math.exp(-0.5 * (x / s) ** 2) / (s * Math.sqrt(2 * Math.PI));
-  // rates per Angstrom and dex: the line's against that of strangers
+  // against a stranger anywhere between the neighbours, and of any flux within three dex
   const wavelengthNats =
-    Math.log((1 - OUTLIER_SHARE) * normal(off, sigma) + OUTLIER_SHARE * normal(off, OUTLIER_SIGMAS * sigma)) +
-    Math.log(survey.high - survey.low);
+    Math.log((1 - OUTLIER_SHARE) * normal(off, sigma) + OUTLIER_SHARE * normal(off, OUTLIER_SIGMAS * sigma)) + Math.log(survey.spacing);
   const owedNats = Math.min(
     MOST_OWED,
     sorted.reduce((sum, p) => sum + p.owed, 0),
   );
   const strengthNats =
-    Math.log((1 - WIDE_SHARE) * normal(excess, err) + WIDE_SHARE * normal(excess, Math.hypot(err, WIDE_DEX))) - Math.log(1 / 3);
-  // the rates of strangers were put as one a spectrum and three dex: their true number makes the rest
-  let priorNats = -Math.log(survey.strangerRate * (survey.high - survey.low) * 3);
+    Math.log((1 - WIDE_SHARE) * normal(excess, err) + WIDE_SHARE * normal(excess, Math.hypot(err, WIDE_DEX))) + Math.log(STRANGER_DEX);
+  let priorNats = -Math.log(STRANGERS);
   if (parts.length > 1) priorNats += BLEND_PRIOR * (parts.length - 1);
+  let claimNats = 0;
   for (const part of sorted) {
     if (isLocal(data, part.line)) priorNats += LOCAL_PRIOR;
     const elsewhere = claimedElsewhere(claims, part.line, j);
     const share = parts.length > 1 ? sortedShares[sorted.indexOf(part)] : 1;
-    priorNats += share * Math.log(Math.max(0.02, 1 - 0.95 * elsewhere));
+    claimNats += share * Math.log(Math.max(0.02, 1 - 0.95 * elsewhere));
   }
   return {
     lines: sorted.map((p) => p.line),
@@ -61,7 +65,9 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
     logPredictedErr: err,
     wavelengthNats,
     strengthNats,
+    widthNats: widthNats(mark, Math.sqrt(mixing), survey.fwhmKms),
     priorNats,
+    claimNats,
     owedNats,
     ionSeen: sorted[0].seen,
     probability: 0,

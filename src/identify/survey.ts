@@ -1,5 +1,6 @@
 import { quantile } from '../numeric/index.ts';
 import type { Mark } from './naming.ts';
+import { typicalFwhmKms } from './widths.ts';
 
 /** What the list of marks itself tells: where it looked and how faint a line it would have shown. */
 export interface Survey {
@@ -8,11 +9,13 @@ export interface Survey {
   readonly high: number;
   /** log10 of the faintest flux that would have been measured at a wavelength, in the marks' unit. */
   readonly logLimitAt: (wavelength: number) => number;
-  /** Unidentified lines expected per Angstrom and dex of flux: what "none of these" competes with. */
-  readonly strangerRate: number;
+  /** Mean distance of neighbouring marks, Angstrom. */
+  readonly spacing: number;
   /** log10 flux of the faintest and the brightest mark. */
   readonly logFaintest: number;
   readonly logBrightest: number;
+  /** FWHM of the brighter features, km/s; absent when too few have one. */
+  readonly fwhmKms?: number;
 }
 
 /** The spectrum is taken to reach this far beyond its outermost marks, as a share of the wavelength. */
@@ -21,10 +24,8 @@ const MARGIN = 0.004;
 const NEIGHBOURS = 24;
 /** The faintest marks of a neighbourhood stand near the limit. */
 const FAINT_QUANTILE = 0.06;
-/** Share of real lines that no list holds: common practice, no source (deep spectra leave a few percent without a name). */
-const STRANGERS = 0.03;
-/** Strangers spread over this many dex of flux. */
-const STRANGER_DEX = 3;
+/** A lone mark stands for at least this much spectrum, Angstrom. */
+const MIN_RANGE = 100;
 
 export function surveyOf(marks: readonly Mark[]): Survey {
   const shown = marks.filter((m) => !m.artefact && m.flux > 0).sort((a, b) => a.wavelength - b.wavelength);
@@ -47,12 +48,14 @@ export function surveyOf(marks: readonly Mark[]): Survey {
     }
     return limits[nearest];
   };
+  const fwhmKms = typicalFwhmKms(marks);
   return {
     low,
     high,
     logLimitAt,
-    strangerRate: (STRANGERS * Math.max(1, marks.length)) / Math.max(100, high - low) / STRANGER_DEX,
+    spacing: Math.max(MIN_RANGE, high - low) / Math.max(1, marks.length),
     logFaintest: Math.min(...logs),
     logBrightest: Math.max(...logs),
+    ...(fwhmKms === undefined ? {} : { fwhmKms }),
   };
 }

@@ -52,7 +52,7 @@ export function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
   };
 }
 
-const logOdds = (w: Weighed) => w.wavelengthNats + w.strengthNats + w.priorNats + w.owedNats;
+const logOdds = (w: Weighed) => w.wavelengthNats + w.strengthNats + w.widthNats + w.priorNats + w.claimNats + w.owedNats;
 
 /** Options this many nats below the best are not weighed further. */
 const OUT_OF_REACH = 16;

@@ -9,7 +9,11 @@ export interface Weighed {
   readonly logPredictedErr: number;
   readonly wavelengthNats: number;
   readonly strengthNats: number;
+  readonly widthNats: number;
+  /** How rare strangers and blends are. */
   readonly priorNats: number;
+  /** Other marks claim its lines too. */
+  readonly claimNats: number;
   /** What the place owes: a line that the rest of the spectrum predicts here, that no other feature can be, is missing if this name is wrong. */
   readonly owedNats: number;
   /** Weighted number of other lines of the (main) ion that were seen. */
