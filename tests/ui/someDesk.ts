@@ -76,6 +76,7 @@ export const analysed = (...features: FeatureView[]) => ({
     zErr: 0,
     te: 10_000,
     atomicVersion: '1',
+    sha256: '',
     rows: features.map((f) => ({
       feature: f.number,
       wavelengthObs: f.centroid,

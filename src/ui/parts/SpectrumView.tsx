@@ -29,8 +29,9 @@ export function SpectrumView() {
   const shown = useMemo(() => samples && plotSamples(samples), [samples]);
   const area = useRef<HTMLDivElement>(null);
   const canvas = useRef<HTMLDivElement>(null);
+  const marks = useRef<HTMLCanvasElement>(null);
   const size = useSize(area);
-  const { layout, state, view } = useSpectrumPlot(canvas, shown, size);
+  const { layout, state, view } = useSpectrumPlot(canvas, marks, shown, size);
   const pointer = usePointer(area, layout);
   return (
     <section className="spectrum" aria-label={label.label}>
@@ -64,6 +65,7 @@ export function SpectrumView() {
         {...pointer.handlers}
       >
         <div ref={canvas} className="plot-canvas" />
+        <canvas ref={marks} className="plot-marks" />
         {state !== 'drawn' && <p className="plot-wait">{state === 'failed' ? label.plotFailed : label.drawing}</p>}
         <div className="plot-readout number" aria-hidden="true" ref={pointer.readout} />
       </div>

@@ -12,6 +12,7 @@ import { useDarkness } from './useDarkness.ts';
 /** Keeps the picture in step with the desk. */
 export function useSpectrumPlot(
   canvas: RefObject<HTMLDivElement | null>,
+  marks: RefObject<HTMLCanvasElement | null>,
   samples: PlotSamples | undefined,
   size: { width: number; height: number } | undefined,
 ) {
@@ -29,10 +30,10 @@ export function useSpectrumPlot(
   const view = range ?? whole;
 
   useEffect(() => {
-    if (!canvas.current) return;
+    if (!canvas.current || !marks.current) return;
     let gone = false;
     let made: SpectrumPlot | undefined;
-    createSpectrumPlot(canvas.current, (ms) => {
+    createSpectrumPlot(canvas.current, marks.current, (ms) => {
       setState('drawn');
       if (canvas.current) canvas.current.dataset.frameMs = ms.toFixed(2);
     }).then(
@@ -47,7 +48,7 @@ export function useSpectrumPlot(
       gone = true;
       made?.end();
     };
-  }, [canvas]);
+  }, [canvas, marks]);
 
   const scene = useMemo((): SpectrumScene | undefined => {
     if (!analysis || !layout || !canvas.current) return undefined;

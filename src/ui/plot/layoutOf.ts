@@ -17,6 +17,8 @@ export interface PanelLayout {
 
 /** Lanes by energy and one for features without a name. */
 export const LANE_COUNT = LANES.length + 1;
+/** Height of a mark above the foot of its lane, in lanes. */
+export const LANE_FOOT = 0.28;
 
 const MARGIN = { left: 64, right: 16, top: 4, bottom: 40 };
 const GAP = 8;

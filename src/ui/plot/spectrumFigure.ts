@@ -7,8 +7,8 @@ import { fitCurve } from './fitCurve.ts';
 import { commonExponent, type FluxScale, fluxTicks, tickText } from './fluxScale.ts';
 import type { Ink } from './inkOf.ts';
 import { UNNAMED_LANE } from './lanes.ts';
-import { domainOf, LANE_COUNT, type PanelLayout } from './layoutOf.ts';
-import { laneTicks, marksOf } from './marksOf.ts';
+import { domainOf, LANE_COUNT, LANE_FOOT, type PanelLayout } from './layoutOf.ts';
+import { laneTicks } from './marksOf.ts';
 import type { PlotSamples } from './plotSamples.ts';
 import { profileOf } from './profileOf.ts';
 import { extent } from './svgPath.ts';
@@ -38,10 +38,6 @@ export interface DrawnWindow {
   readonly heights: Points;
 }
 
-/** Height of a mark above the foot of its lane, in lanes. */
-const LANE_FOOT = 0.28;
-/** Labels drawn across one width of the view. */
-const LABELS_IN_VIEW = 40;
 /** Fewer points than this a pixel of the window are drawn as steps: one level a sample. */
 const STEPS_BELOW = 1;
 /** Residuals beyond this are cut, sigma. */
@@ -50,7 +46,7 @@ const RESIDUAL_REACH = 6;
 /** Observed -> shown wavelength. */
 export const frameFactor = (scene: Pick<SpectrumScene, 'frame' | 'z'>) => (scene.frame === 'rest' ? 1 / (1 + scene.z) : 1);
 
-/** Curves and marks of a window three views wide. */
+/** Curves of a window three views wide. */
 export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
   const viewWidth = view[1] - view[0];
   const window: Range = [view[0] - viewWidth, view[1] + viewWidth];
@@ -63,14 +59,6 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
   const residual = samples ? cut(samples.residual) : { x: [], y: [] };
   const isSparse = samples !== undefined && flux.x.length < STEPS_BELOW * inner;
   const model = isSparse ? fitBetween(scene.rows, continuum, window, 3 * inner) : samples ? cut(samples.model) : { x: [], y: [] };
-  const marks = marksOf(scene.rows, {
-    from: window[0],
-    to: window[1],
-    view,
-    pixelsPerAngstrom: 1 / step,
-    mostLabels: LABELS_IN_VIEW * 3,
-    factor: frameFactor(scene),
-  });
   const line = (points: Points, yaxis: 'y2' | 'y3', color: string, width: number, stroke: 'solid' | 'dot' | 'steps' = 'solid'): Data => ({
     type: 'scatter',
     mode: 'lines',
@@ -86,36 +74,12 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
     viewWidth,
     heights: { x: [...flux.x, ...model.x], y: [...flux.y, ...model.y] },
     data: [
+      // the lanes' axis is only drawn when something stands on it; the marks themselves are painted over the drawing
+      { type: 'scatter', mode: 'markers', x: [window[0]], y: [UNNAMED_LANE - 1], yaxis: 'y', hoverinfo: 'skip' },
       line(residual, 'y3', ink.muted, 1, isSparse ? 'steps' : 'solid'),
       line(continuum, 'y2', ink.muted, 1, 'dot'),
       line(model, 'y2', ink.fit, 2.5),
       line(flux, 'y2', ink.ink, samples ? 1 : 1.5, isSparse ? 'steps' : 'solid'),
-      {
-        type: 'scatter',
-        mode: 'markers',
-        ...marks.rings,
-        yaxis: 'y',
-        marker: { symbol: 'circle-open', size: 10.5, color: ink.ink, line: { width: 1 } },
-        hoverinfo: 'skip',
-      },
-      {
-        type: 'scatter',
-        mode: 'markers',
-        x: marks.x,
-        y: marks.y,
-        yaxis: 'y',
-        marker: { symbol: marks.symbol, size: 5.5, color: ink.ink, line: { width: 1.25, color: ink.ink } },
-        hoverinfo: 'skip',
-      },
-      {
-        type: 'scatter',
-        mode: 'text',
-        ...marks.labels,
-        yaxis: 'y',
-        textposition: 'middle center',
-        textfont: { size: 10.5, color: ink.ink, family: ink.font },
-        hoverinfo: 'skip',
-      },
     ],
   };
 }

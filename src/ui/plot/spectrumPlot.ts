@@ -1,4 +1,5 @@
 import type * as Plotly from 'plotly.js/lib/core';
+import { paintMarks } from './paintMarks.ts';
 import { axesOf, type DrawnWindow, drawWindow, layoutFor, moveTo, type SpectrumScene } from './spectrumFigure.ts';
 import type { Range } from './viewRange.ts';
 
@@ -32,8 +33,16 @@ function plotly(): Promise<Library> {
   return library;
 }
 
-/** @param drawn called after every frame that was drawn, with the milliseconds of work it took */
-export async function createSpectrumPlot(element: HTMLElement, drawn: (ms: number) => void): Promise<SpectrumPlot> {
+/**
+ * @param element takes the drawing
+ * @param marks   lies over it and takes the marks
+ * @param drawn   called after every frame that was drawn, with the milliseconds of work it took
+ */
+export async function createSpectrumPlot(
+  element: HTMLElement,
+  marks: HTMLCanvasElement,
+  drawn: (ms: number) => void,
+): Promise<SpectrumPlot> {
   const lib = await plotly();
   let scene: SpectrumScene | undefined;
   let view: Range = [0, 1];
@@ -61,6 +70,7 @@ export async function createSpectrumPlot(element: HTMLElement, drawn: (ms: numbe
       clearTimeout(rest);
       rest = setTimeout(refresh, REST_MS);
     }
+    paintMarks(marks, scene, view);
     drawn(performance.now() - began);
   };
   const refresh = () => {
