@@ -123,7 +123,7 @@ export function unitOfColumn(
       `the column is called ${column.name}`,
     );
   const { low, high } = rangeOf(stored);
-  const likely = likelyUnit(low, high);
+  const likely = isEvenLog(stored) ? LOG_GUESS : likelyUnit(low, high);
   if (!likely) {
     throw new ProblemError({
       code: 'unknown-wavelength-unit',
@@ -137,7 +137,25 @@ export function unitOfColumn(
     where: { ...around.place, column: column.name },
     doThis: 'Choose the unit if this is wrong.',
   });
+  for (const other of ['Angstrom', 'nm', 'um'] as const)
+    if (other !== likely.unit.name) notes.offers.push({ label: `wavelengths in ${other}`, adds: true, choices: { wavelengthUnit: other } });
   return told(likely.unit, `assumed: ${likely.reason}`);
+}
+
+const LOG_GUESS = {
+  unit: { name: 'log10 Angstrom', quantity: 'wavelength', scale: 1, log: 10 } as const satisfies SpectralUnit,
+  reason: 'numbers between 3 and 4.6 in even steps of 0.00001 to 0.0005 are usually logarithms of Angstrom (common practice, no source)',
+};
+
+/** Logarithms of Angstrom in the even steps of surveys, rather than micrometres. */
+function isEvenLog(stored: Float64Array): boolean {
+  const n = stored.length;
+  if (n < 100 || !(stored[0] >= 3 && stored[n - 1] <= 4.6)) return false;
+  const step = (stored[n - 1] - stored[0]) / (n - 1);
+  if (!(step >= 1e-5 && step <= 5e-4)) return false;
+  // stored as 32-bit floats the steps waver by 2e-7
+  for (let i = 1; i < n; i++) if (Math.abs(stored[i] - stored[i - 1] - step) > 0.02 * step + 5e-7) return false;
+  return true;
 }
 
 /** Lowest and highest positive finite value; NaN when there is none. */

@@ -20,9 +20,11 @@ async function endsWell(name: string, bytes: Uint8Array, choices: ReadingChoices
     const { spectrum, how } = await readSpectrum(bytesSource(name, bytes), choices);
     const { wavelength, flux, fluxErr, masked } = spectrum;
     const n = wavelength.length;
-    if (n < 2 || flux.length !== n || masked.length !== n || (fluxErr && fluxErr.length !== n) || how.length === 0) throw new Error(`unsound lengths: ${n} ${flux.length} ${masked.length}`);
+    if (n < 2 || flux.length !== n || masked.length !== n || (fluxErr && fluxErr.length !== n) || how.length === 0)
+      throw new Error(`unsound lengths: ${n} ${flux.length} ${masked.length}`);
     for (let i = 0; i < n; i++) {
-      if (!(wavelength[i] > 0 && wavelength[i] < Number.POSITIVE_INFINITY) || (i > 0 && !(wavelength[i] > wavelength[i - 1]))) throw new Error(`unsound wavelength ${wavelength[i]} at ${i}`);
+      if (!(wavelength[i] > 0 && wavelength[i] < Number.POSITIVE_INFINITY) || (i > 0 && !(wavelength[i] > wavelength[i - 1])))
+        throw new Error(`unsound wavelength ${wavelength[i]} at ${i}`);
       if (!masked[i] && (!Number.isFinite(flux[i]) || (fluxErr && !(fluxErr[i] > 0)))) throw new Error(`sample ${i} should be masked`);
     }
     return 'read';
@@ -35,7 +37,11 @@ async function endsWell(name: string, bytes: Uint8Array, choices: ReadingChoices
 }
 
 /** Runs a property and returns how often files were read and refused. */
-async function tally<T>(arbitrary: fc.Arbitrary<T>, runs: number, end: (made: T) => Promise<'read' | 'refused'>): Promise<{ read: number; refused: number }> {
+async function tally<T>(
+  arbitrary: fc.Arbitrary<T>,
+  runs: number,
+  end: (made: T) => Promise<'read' | 'refused'>,
+): Promise<{ read: number; refused: number }> {
   const ends = { read: 0, refused: 0 };
   await fc.assert(
     fc.asyncProperty(arbitrary, async (made) => {
@@ -70,11 +76,27 @@ const anyChoices: fc.Arbitrary<ReadingChoices> = fc.record(
 /** Bytes replaced, bits flipped, a piece cut out, doubled or cut off. */
 const damages = fc.array(
   fc.oneof(
-    fc.record({ kind: fc.constant('put' as const), at: fc.double({ min: 0, max: 1, noNaN: true }), value: fc.integer({ min: 0, max: 255 }) }),
-    fc.record({ kind: fc.constant('flip' as const), at: fc.double({ min: 0, max: 1, noNaN: true }), value: fc.integer({ min: 0, max: 7 }) }),
-    fc.record({ kind: fc.constant('cut' as const), at: fc.double({ min: 0, max: 1, noNaN: true }), value: fc.integer({ min: 1, max: 400 }) }),
+    fc.record({
+      kind: fc.constant('put' as const),
+      at: fc.double({ min: 0, max: 1, noNaN: true }),
+      value: fc.integer({ min: 0, max: 255 }),
+    }),
+    fc.record({
+      kind: fc.constant('flip' as const),
+      at: fc.double({ min: 0, max: 1, noNaN: true }),
+      value: fc.integer({ min: 0, max: 7 }),
+    }),
+    fc.record({
+      kind: fc.constant('cut' as const),
+      at: fc.double({ min: 0, max: 1, noNaN: true }),
+      value: fc.integer({ min: 1, max: 400 }),
+    }),
     fc.record({ kind: fc.constant('end' as const), at: fc.double({ min: 0, max: 1, noNaN: true }), value: fc.constant(0) }),
-    fc.record({ kind: fc.constant('double' as const), at: fc.double({ min: 0, max: 1, noNaN: true }), value: fc.integer({ min: 1, max: 400 }) }),
+    fc.record({
+      kind: fc.constant('double' as const),
+      at: fc.double({ min: 0, max: 1, noNaN: true }),
+      value: fc.integer({ min: 1, max: 400 }),
+    }),
   ),
   { minLength: 1, maxLength: 6 },
 );
@@ -94,9 +116,18 @@ function damage(bytes: Uint8Array, all: readonly { kind: string; at: number; val
 }
 
 /** Header cards replaced by other values: sizes, formats, scalings that promise too much or nothing. */
-const KEYWORDS = 'NAXIS NAXIS1 NAXIS2 NAXIS3 BITPIX TFIELDS PCOUNT GCOUNT THEAP TFORM1 TFORM2 TFORM3 TTYPE1 TTYPE2 TUNIT1 TSCAL2 TZERO2 TNULL2 TBCOL1 TBCOL2 TDIM2 CTYPE1 CUNIT1 CRVAL1 CRPIX1 CDELT1 CD1_1 BSCALE BZERO BLANK DC-FLAG RESTWAV EXTNAME XTENSION SIMPLE END'.split(' ');
-const VALUES = "0 1 -1 2 40 999999999999 1e308 -1e308 1E400 nan T F 'A' '' '0' 'D' '3D' '1PD(9)' '1QE(0)' '999999999D' '0X' '13X' 'WAVE' 'AWAV' 'WAVE-LOG' 'WAVE-F2W' 'FREQ' 'VELO' 'MULTISPE' 'LOG' 'um' 'Angstrom' 'km/s' 'FLUX' 'IVAR' 'BINTABLE' 'TABLE' 'IMAGE' 2147483648 -2147483648 3.5e3 1e-300".split(' ');
-const cardChanges = fc.array(fc.record({ keyword: fc.constantFrom(...KEYWORDS), value: fc.constantFrom(...VALUES), which: fc.integer({ min: 0, max: 2 }) }), { minLength: 1, maxLength: 4 });
+const KEYWORDS =
+  'NAXIS NAXIS1 NAXIS2 NAXIS3 BITPIX TFIELDS PCOUNT GCOUNT THEAP TFORM1 TFORM2 TFORM3 TTYPE1 TTYPE2 TUNIT1 TSCAL2 TZERO2 TNULL2 TBCOL1 TBCOL2 TDIM2 CTYPE1 CUNIT1 CRVAL1 CRPIX1 CDELT1 CD1_1 BSCALE BZERO BLANK DC-FLAG RESTWAV EXTNAME XTENSION SIMPLE END'.split(
+    ' ',
+  );
+const VALUES =
+  "0 1 -1 2 40 999999999999 1e308 -1e308 1E400 nan T F 'A' '' '0' 'D' '3D' '1PD(9)' '1QE(0)' '999999999D' '0X' '13X' 'WAVE' 'AWAV' 'WAVE-LOG' 'WAVE-F2W' 'FREQ' 'VELO' 'MULTISPE' 'LOG' 'um' 'Angstrom' 'km/s' 'FLUX' 'IVAR' 'BINTABLE' 'TABLE' 'IMAGE' 2147483648 -2147483648 3.5e3 1e-300".split(
+    ' ',
+  );
+const cardChanges = fc.array(
+  fc.record({ keyword: fc.constantFrom(...KEYWORDS), value: fc.constantFrom(...VALUES), which: fc.integer({ min: 0, max: 2 }) }),
+  { minLength: 1, maxLength: 4 },
+);
 
 function changeCards(bytes: Uint8Array, changes: readonly { keyword: string; value: string; which: number }[]): Uint8Array {
   const made = bytes.slice();
@@ -120,11 +151,60 @@ function changeCards(bytes: Uint8Array, changes: readonly { keyword: string; val
 const cell = fc.oneof(
   { weight: 6, arbitrary: fc.double({ min: -1e6, max: 1e6, noNaN: true }).map(String) },
   { weight: 2, arbitrary: fc.integer({ min: 3000, max: 9000 }).map(String) },
-  { weight: 1, arbitrary: fc.constantFrom('', 'nan', '-999', 'inf', '1e999', '****', '"', "'", '1,5', 'a b', '#', '5000.5D3', '1.2-101', '0x10', '\u0000', '\uFEFF', '\u2212 5', '--', '=1+1', '<td>', 'NaN\r') },
+  {
+    weight: 1,
+    arbitrary: fc.constantFrom(
+      '',
+      'nan',
+      '-999',
+      'inf',
+      '1e999',
+      '****',
+      '"',
+      "'",
+      '1,5',
+      'a b',
+      '#',
+      '5000.5D3',
+      '1.2-101',
+      '0x10',
+      '\u0000',
+      '\uFEFF',
+      '\u2212 5',
+      '--',
+      '=1+1',
+      '<td>',
+      'NaN\r',
+    ),
+  },
 );
 const madeText = fc
   .record({
-    head: fc.array(fc.constantFrom('# wavelength [nm]', 'wavelength,flux', 'wave flux err', '# air wavelengths', '%ECSV', '# %ECSV 1.0', '# delimiter: ","', '# datatype:', '# - {name: flux, unit: "x', '| wave | flux |', '| a |', '\\key = 1', '', '   ', ',,,', ';;;', '# 1: wave', '# missing = -999', '<VOTABLE>', 'x'.repeat(300)), { maxLength: 4 }),
+    head: fc.array(
+      fc.constantFrom(
+        '# wavelength [nm]',
+        'wavelength,flux',
+        'wave flux err',
+        '# air wavelengths',
+        '%ECSV',
+        '# %ECSV 1.0',
+        '# delimiter: ","',
+        '# datatype:',
+        '# - {name: flux, unit: "x',
+        '| wave | flux |',
+        '| a |',
+        '\\key = 1',
+        '',
+        '   ',
+        ',,,',
+        ';;;',
+        '# 1: wave',
+        '# missing = -999',
+        '<VOTABLE>',
+        'x'.repeat(300),
+      ),
+      { maxLength: 4 },
+    ),
     delimiter: fc.constantFrom(',', ';', '\t', ' ', '|', ', ', '  '),
     rows: fc.array(fc.array(cell, { maxLength: 5 }), { maxLength: 30 }),
     end: fc.constantFrom('\n', '\r\n', '\r', ''),
@@ -132,7 +212,44 @@ const madeText = fc
   .map(({ head, delimiter, rows, end }) => [...head, ...rows.map((r) => r.join(delimiter))].join(end || '\n') + end);
 
 const madeXml = fc
-  .array(fc.constantFrom('<?xml version="1.0"?>', '<VOTABLE>', '</VOTABLE>', '<TABLE>', '</TABLE>', '<FIELD name="wave" datatype="double" unit="nm"/>', '<FIELD name="flux" datatype="float"/>', '<FIELD name="flux" datatype="double" arraysize="*"/>', '<FIELD name="n" datatype="nonsense"/>', '<DATA><TABLEDATA>', '<TR><TD>500</TD><TD>1</TD></TR>', '<TR><TD>501</TD><TD>2</TD></TR>', '<TR><TD>', '</TD></TR>', '<TR/>', '<BINARY><STREAM encoding="base64">', '<BINARY2><STREAM>', 'QH9AAAAAAAA/gAAA', '</STREAM></BINARY>', '<FITS><STREAM>U0lNUExF', '</STREAM></FITS>', '<![CDATA[', ']]>', '<!--', '-->', '&amp;', '&#99999999;', '&x;', '<!DOCTYPE a [<!ENTITY b "c">]>', '<', '>', '"', ' 5 6 7 '), { maxLength: 25 })
+  .array(
+    fc.constantFrom(
+      '<?xml version="1.0"?>',
+      '<VOTABLE>',
+      '</VOTABLE>',
+      '<TABLE>',
+      '</TABLE>',
+      '<FIELD name="wave" datatype="double" unit="nm"/>',
+      '<FIELD name="flux" datatype="float"/>',
+      '<FIELD name="flux" datatype="double" arraysize="*"/>',
+      '<FIELD name="n" datatype="nonsense"/>',
+      '<DATA><TABLEDATA>',
+      '<TR><TD>500</TD><TD>1</TD></TR>',
+      '<TR><TD>501</TD><TD>2</TD></TR>',
+      '<TR><TD>',
+      '</TD></TR>',
+      '<TR/>',
+      '<BINARY><STREAM encoding="base64">',
+      '<BINARY2><STREAM>',
+      'QH9AAAAAAAA/gAAA',
+      '</STREAM></BINARY>',
+      '<FITS><STREAM>U0lNUExF',
+      '</STREAM></FITS>',
+      '<![CDATA[',
+      ']]>',
+      '<!--',
+      '-->',
+      '&amp;',
+      '&#99999999;',
+      '&x;',
+      '<!DOCTYPE a [<!ENTITY b "c">]>',
+      '<',
+      '>',
+      '"',
+      ' 5 6 7 ',
+    ),
+    { maxLength: 25 },
+  )
   .map((parts) => `<VOTABLE>${parts.join('')}`);
 
 describe('a read ends in a sound spectrum or in a ProblemError', () => {
@@ -144,7 +261,9 @@ describe('a read ends in a sound spectrum or in a ProblemError', () => {
 
   it('for 5000 files with other header cards', async () => {
     const fits = files.filter((f) => f.name.endsWith('.fits'));
-    const ends = await tally(fc.tuple(fc.constantFrom(...fits), cardChanges), 5000, ([file, changes]) => endsWell(file.name, changeCards(file.bytes, changes)));
+    const ends = await tally(fc.tuple(fc.constantFrom(...fits), cardChanges), 5000, ([file, changes]) =>
+      endsWell(file.name, changeCards(file.bytes, changes)),
+    );
     expect(ends.read).toBeGreaterThan(500);
     expect(ends.refused).toBeGreaterThan(100);
   });
@@ -166,7 +285,15 @@ describe('a read ends in a sound spectrum or in a ProblemError', () => {
   });
 
   it('for 1500 strings of random bytes, packed or not, and the starts of every kind of file', async () => {
-    const start = fc.constantFrom('', 'SIMPLE  =                    T', '<?xml version="1.0"?><VOTABLE>', '# %ECSV 1.0\n', 'PK\u0003\u0004', '\u001f\u008b\u0008', '| a | b |\n');
+    const start = fc.constantFrom(
+      '',
+      'SIMPLE  =                    T',
+      '<?xml version="1.0"?><VOTABLE>',
+      '# %ECSV 1.0\n',
+      'PK\u0003\u0004',
+      '\u001f\u008b\u0008',
+      '| a | b |\n',
+    );
     await tally(fc.tuple(start, fc.uint8Array({ maxLength: 6000 }), fc.boolean()), 1500, ([head, tail, packed]) => {
       const bytes = Uint8Array.from([...Array.from(head, (c) => c.charCodeAt(0)), ...tail]);
       return endsWell('made', packed ? new Uint8Array(gzipSync(bytes)) : bytes);
@@ -195,11 +322,18 @@ describe('a read ends in a sound spectrum or in a ProblemError', () => {
 describe('laws of reading', () => {
   it('numbers written in any usual form are read to the bit', async () => {
     await fc.assert(
-      fc.asyncProperty(fc.array(fc.double({ min: -1e25, max: 1e25, noNaN: true }), { minLength: 2, maxLength: 20 }), fc.constantFrom('plain', 'exponent', 'digits'), async (values, form) => {
-        const words = values.map((v) => (form === 'plain' ? String(v) : form === 'exponent' ? v.toExponential() : v.toPrecision(9)));
-        const { spectrum } = await readSpectrum(bytesSource('made.csv', new TextEncoder().encode(`wavelength,flux\n${words.map((w, i) => `${5000 + i},${w}`).join('\n')}`)), {});
-        expect(Array.from(spectrum.flux)).toEqual(words.map(Number));
-      }),
+      fc.asyncProperty(
+        fc.array(fc.double({ min: -1e25, max: 1e25, noNaN: true }), { minLength: 2, maxLength: 20 }),
+        fc.constantFrom('plain', 'exponent', 'digits'),
+        async (values, form) => {
+          const words = values.map((v) => (form === 'plain' ? String(v) : form === 'exponent' ? v.toExponential() : v.toPrecision(9)));
+          const { spectrum } = await readSpectrum(
+            bytesSource('made.csv', new TextEncoder().encode(`wavelength,flux\n${words.map((w, i) => `${5000 + i},${w}`).join('\n')}`)),
+            {},
+          );
+          expect(Array.from(spectrum.flux)).toEqual(words.map(Number));
+        },
+      ),
       { numRuns: 500, seed: SEED },
     );
   });
@@ -207,7 +341,8 @@ describe('laws of reading', () => {
   it('the order of rows does not matter', async () => {
     await fc.assert(
       fc.asyncProperty(fc.uniqueArray(fc.integer({ min: 3000, max: 9000 }), { minLength: 3, maxLength: 30 }), async (waves) => {
-        const text = (list: readonly number[]) => new TextEncoder().encode(`wavelength,flux\n${list.map((w) => `${w},${Math.sin(w)}`).join('\n')}`);
+        const text = (list: readonly number[]) =>
+          new TextEncoder().encode(`wavelength,flux\n${list.map((w) => `${w},${Math.sin(w)}`).join('\n')}`);
         const one = await readSpectrum(bytesSource('made.csv', text(waves)), {});
         const other = await readSpectrum(bytesSource('made.csv', text(waves.toSorted((a, b) => a - b))), {});
         expect(one.spectrum).toEqual(other.spectrum);

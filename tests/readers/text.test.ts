@@ -210,3 +210,55 @@ describe('progress and cancelling', () => {
     expect(shares.at(-1)).toBe(1);
   });
 });
+
+describe('further forms of text tables', () => {
+  it('a machine-readable table with a byte-by-byte description', async () => {
+    const text = `Title: A spectrum made for tests
+================================================================================
+Byte-by-byte Description of file: made.txt
+--------------------------------------------------------------------------------
+   Bytes Format Units   Label   Explanations
+--------------------------------------------------------------------------------
+   1-  7 F7.2   nm      lambda  Wavelength in vacuum
+   9- 13 F5.2   mJy     Flux    Flux density
+  15- 18 F4.2   mJy     e_Flux  One sigma error of Flux
+--------------------------------------------------------------------------------
+ 500.00  1.00 0.10
+ 500.10  2.00 0.20
+ 500.20  3.00 0.30
+`;
+    const reading = await read(text);
+    expect(shown(reading)).toBe('5000 5001 5002 | 1 2 3 | 0.1 0.2 0.3 | vacuum | 000');
+    expect(reading.spectrum.fluxUnit).toBe('mJy');
+  });
+
+  it('survey logarithms without the word are taken as such, with a warning and a way out', async () => {
+    const rows = Array.from({ length: 200 }, (_, i) => `${(3.55 + i * 1e-4).toFixed(4)},${1 + (i % 7)}`).join('\n');
+    const reading = await read(`wavelength,flux\n${rows}\n`);
+    expect(reading.spectrum.wavelength[0]).toBeCloseTo(10 ** 3.55, 9);
+    expect(codes(reading)).toContain('unit-assumed');
+    expect(reading.offers.map((o) => o.choices.wavelengthUnit)).toContain('um');
+  });
+
+  it('up to thirty columns, of which the right ones are proposed with their reasons', async () => {
+    const names = Array.from({ length: 30 }, (_, k) => (k === 20 ? 'Wave' : k === 3 ? 'Flux' : k === 25 ? 'e_Flux' : `aux${k}`));
+    const rows = [5000, 5001, 5002].map((w, i) =>
+      names.map((n) => (n === 'Wave' ? w : n === 'Flux' ? i + 1 : n === 'e_Flux' ? (i + 1) / 10 : 42)).join('\t'),
+    );
+    const reading = await read(`${names.join('\t')}\n${rows.join('\n')}\n`);
+    expect(shown(reading)).toBe(SAME);
+    expect(reading.columns?.length).toBe(30);
+    expect(reading.how.find((h) => h.fact === 'flux')?.reason).toContain('Flux');
+  });
+
+  it('a rest-frame spectrum is warned of', async () => {
+    expect(codes(await read(`# rest-frame wavelengths in Angstrom\n${COMMAS}`))).toContain('rest-frame');
+  });
+
+  it('a velocity correction is applied only when it is asked for', async () => {
+    const plain = await read(COMMAS);
+    const corrected = await read(COMMAS, { velocityCorrectionKms: 299.792458 });
+    expect(plain.spectrum.wavelength[0]).toBe(5000);
+    expect(corrected.spectrum.wavelength[0]).toBeCloseTo(5005, 9);
+  });
+});

@@ -78,7 +78,7 @@ export async function judgeImage(file: FitsFile, hdu: Hdu): Promise<Judged> {
     whyNot:
       axes.length >= 2 && lines > 1
         ? 'its image has no wavelength axis (a picture or a raw frame?)'
-        : 'its image has no wavelength axis (no CRVAL1 and CDELT1 or CD1_1)',
+        : 'its image has no wavelength axis (CRVAL1 and CDELT1 or CD1_1 are missing, or count pixels)',
   };
 }
 

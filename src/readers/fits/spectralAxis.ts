@@ -53,7 +53,11 @@ function axisCards(header: Header, axis: number): AxisCards | undefined {
   const pc = numberOf(header, `PC${axis}_${axis}`) ?? 1;
   const step = (cd ? cd : cdelt !== undefined ? cdelt * pc : undefined) ?? coefficients[1] ?? (/^MULTISPE/.test(type) ? 1 : undefined);
   if (reference === undefined || !step || !Number.isFinite(step)) return undefined;
-  return { axis, type, reference, pixel: numberOf(header, `CRPIX${axis}`) ?? 1, step, unitWords: textOf(header, `CUNIT${axis}`) };
+  const pixel = numberOf(header, `CRPIX${axis}`) ?? 1;
+  const first = reference + step * (1 - pixel);
+  // 1, 2, 3 ... counts pixels
+  if (step === 1 && (first === 0 || first === 1) && !STANDARD.test(type) && !/^MULTISPE/.test(type)) return undefined;
+  return { axis, type, reference, pixel, step, unitWords: textOf(header, `CUNIT${axis}`) };
 }
 
 /** Whether a header's axis counts velocities. */

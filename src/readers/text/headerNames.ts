@@ -19,6 +19,7 @@ interface Names {
 /** Names of columns from the lines before the rows, else from the comments, else numbers: "column 1". */
 export function namesOfColumns(headers: readonly string[], comments: readonly string[], dialect: Dialect, columns: number): Names {
   return (
+    fromByteDescription(headers, columns) ??
     fromHeaderLines(headers, dialect, columns) ??
     fromNumberedComments(comments, columns) ??
     fromComments(comments, dialect, columns) ?? {
@@ -27,6 +28,18 @@ export function namesOfColumns(headers: readonly string[], comments: readonly st
       linesUsed: 0,
     }
   );
+}
+
+/** The "Byte-by-byte Description" of machine-readable tables (CDS standard): bytes, format, unit, label, explanation. */
+function fromByteDescription(headers: readonly string[], columns: number): Names | undefined {
+  if (!headers.some((line) => /byte-by-byte description/i.test(line))) return undefined;
+  const found: NamedColumn[] = [];
+  for (const line of headers) {
+    const match = /^\s*(?:\d+\s*-\s*)?\d+\s+[AIFE]\d[\d.]*\s+(\S+)\s+(\S+)\s*(.*)$/.exec(line);
+    if (match)
+      found.push({ name: match[2], unit: match[1] === '---' ? '' : match[1], description: match[3].replace(/^\?=?\S*\s/, '').trim() });
+  }
+  return found.length === columns ? { columns: found, from: 'the byte-by-byte description', linesUsed: headers.length } : undefined;
 }
 
 function fromHeaderLines(headers: readonly string[], dialect: Dialect, columns: number): Names | undefined {
