@@ -19,17 +19,11 @@ for (const colorScheme of ['light', 'dark'] as const) {
     await desk.chooseRow('[O III] 5006.84');
     await page.keyboard.press('Enter');
     await desk.isIdle();
-    await check('case');
-    for (const [key, view] of [
-      ['s', 'settings'],
-      ['i', 'reading'],
-      ['h', 'history'],
-      ['?', 'keys'],
-    ]) {
-      await page.keyboard.press(key);
-      await check(view);
+    for (const tab of await page.getByRole('tab').all()) {
+      await tab.click();
+      await check((await tab.textContent()) ?? '');
     }
-    await page.locator('summary').click();
+    await page.locator('.menu > summary').click();
     await check('menu');
   });
 }
