@@ -10,7 +10,7 @@ const FLUX_WORDS =
   adu dn electrons signal brightness surf sb radiance irradiance lum luminosity reflectance transmission photons value values f i y net data sci`);
 const ERROR_WORDS =
   words(`err errs error errors er sigma sig std stdev stddev stdv sd unc uncert uncertainty uncertainties noise rms dflux eflux fluxerr
-  errflux fluxerror fluxsig sigflux fluxsigma fluxunc fluxstd staterror sigmaflux errorflux dfl ferr specerr staterr stat`);
+  errflux fluxerror fluxsig sigflux fluxsigma fluxunc fluxstd staterror dfnu dflam dflambda efnu eflam sigmaflux errorflux dfl ferr specerr staterr stat`);
 const VARIANCE_WORDS = words('var variance vari fluxvar varflux');
 const IVAR_WORDS = words('ivar invvar invar ivars fluxivar');
 const MASK_WORDS = words('mask masks dq flag flags quality qual bad badpix pixmask andmask ormask good ok usable bitmask');
@@ -202,6 +202,7 @@ function roleOfName({ name, unit }: Pick<Column, 'name' | 'unit'>): RoleGuess {
     );
   }
   if (/^(vel(ocity)?|vrad|vlsr|vhel(io)?|v)$/i.test(name)) return guess('velocity', 60, '');
+  if (parts.length === 1 && parts[0] === 'e') return guess('sigma', 40, '');
   const fluxWord = parts.findLast((p) => FLUX_WORDS.has(p));
   if (fluxWord !== undefined && parts.every((p) => FLUX_WORDS.has(p) || p in FLUX_ASIDES || FAMILY_WORDS.has(p))) {
     const rank: Record<string, number> = {

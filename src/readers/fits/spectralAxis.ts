@@ -224,10 +224,20 @@ function plainAxis(cards: AxisCards, header: Header, n: number, choices: Reading
     `CRVAL${axis}${log ? `; ${log}` : ''}`,
   );
   noteFact(notes, 'wavelength unit', unit.name, found.reason);
-  return {
-    wavelength: toAngstrom(stored, unit),
-    ...(unit.quantity !== 'wavelength' ? { medium: { medium: 'vacuum', evidence: `a ${unit.quantity} gives vacuum wavelengths` } } : {}),
-  };
+  const medium = mediumOfPlain(cards, unit);
+  return { wavelength: toAngstrom(stored, unit), ...(medium ? { medium } : {}) };
+}
+
+/** WAVE and AWAV say the medium whatever the unit; a frequency has none but vacuum. */
+function mediumOfPlain({ type, axis }: AxisCards, { quantity }: SpectralUnit): MediumEvidence | undefined {
+  if (quantity !== 'wavelength') return { medium: 'vacuum', evidence: `a ${quantity} gives vacuum wavelengths` };
+  const code = /^(WAVE|AWAV)(-|\s*$)/.exec(type)?.[1];
+  return code
+    ? {
+        medium: code === 'AWAV' ? 'air' : 'vacuum',
+        evidence: `CTYPE${axis} = ${type} means ${code === 'AWAV' ? 'air' : 'vacuum'} wavelengths (FITS WCS paper III)`,
+      }
+    : undefined;
 }
 
 /** Why the axis is one of log10 of the wavelength; undefined when it is not. */
