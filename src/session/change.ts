@@ -1,10 +1,11 @@
-import type { SessionDocument, Settings, Source, Verdict } from './document.ts';
+import type { SessionDocument, Settings, Shelved, Source, Verdict } from './document.ts';
 
 /** One reversible step: what stood there before and after. A verdict is found by its place `at`. */
 export type Step =
   | { readonly on: 'verdict'; readonly before?: Verdict; readonly after?: Verdict }
   | { readonly on: 'settings'; readonly before: Settings; readonly after: Settings }
-  | { readonly on: 'source'; readonly before?: Source; readonly after?: Source };
+  | { readonly on: 'source'; readonly before?: Source; readonly after?: Source }
+  | { readonly on: 'shelf'; readonly before?: readonly Shelved[]; readonly after?: readonly Shelved[] };
 
 /** A described change of the document: a sentence for the history and the steps that make it. Plain data. */
 export interface Change {
@@ -30,6 +31,10 @@ function applyStep(document: SessionDocument, step: Step): SessionDocument {
       return { ...document, settings: step.after };
     case 'source':
       return { ...document, source: step.after };
+    case 'shelf': {
+      const { shelf: _, ...rest } = document;
+      return step.after ? { ...rest, shelf: step.after } : rest;
+    }
     case 'verdict': {
       const place = step.before?.at ?? step.after?.at;
       const others = document.verdicts.filter((v) => v.at !== place);

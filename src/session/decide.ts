@@ -1,5 +1,5 @@
 import type { Change, Step } from './change.ts';
-import type { LineKey, SessionDocument, Settings, Source, Verdict } from './document.ts';
+import { type LineKey, type SessionDocument, type Settings, type Source, sameSource, type Verdict } from './document.ts';
 import { findVerdict, type Place } from './matchVerdicts.ts';
 
 /** A feature as the user points at it: its place, and how the history calls it. */
@@ -83,17 +83,37 @@ export function changeSettings(document: SessionDocument, after: Settings, sente
   return { sentence, steps: [{ on: 'settings', before: document.settings, after }] };
 }
 
-/** A new source: settings of reading and all verdicts belong to the old one and go with it. */
+/**
+ * Puts `source` on the desk. What was there goes onto the shelf with its settings and verdicts; a source that was on the shelf comes back as it was left, a new
+ * one starts with the settings of the desk but its own way of reading. Opening what is already on the desk changes nothing.
+ */
 export function openSource(document: SessionDocument, source: Source): Change {
-  const steps: Step[] = document.verdicts.map((before) => ({ on: 'verdict', before }) as const);
-  const settings = { ...document.settings, reading: {} };
+  const shelf = document.shelf ?? [];
+  const left = document.source;
+  if (left && sameSource(left, source)) return { sentence: `opened ${source.name} again`, steps: [] };
+  const returning = shelf.find((s) => sameSource(s.source, source));
+  const staying = shelf.filter((s) => !sameSource(s.source, source));
+  const gone = left ? [{ source: left, settings: document.settings, verdicts: document.verdicts }] : [];
+  const after = [...staying, ...gone];
+  const settings = returning?.settings ?? { ...document.settings, reading: {} };
+  const steps: Step[] = [
+    ...document.verdicts.map((before) => ({ on: 'verdict', before }) as const),
+    { on: 'settings', before: document.settings, after: settings },
+    { on: 'source', before: left, after: source },
+    ...(after.length > 0 || document.shelf
+      ? [{ on: 'shelf', before: document.shelf, after: after.length > 0 ? after : undefined } as const]
+      : []),
+    ...(returning?.verdicts ?? []).map((verdict) => ({ on: 'verdict', after: verdict }) as const),
+  ];
+  return { sentence: `${returning ? 'went back to' : 'opened'} ${source.name}`, steps };
+}
+
+/** Takes a source off the shelf; its verdicts go with it, undo brings both back. */
+export function dropShelved(document: SessionDocument, source: Source): Change {
+  const after = (document.shelf ?? []).filter((s) => !sameSource(s.source, source));
   return {
-    sentence: `opened ${source.name}`,
-    steps: [
-      ...steps,
-      { on: 'settings', before: document.settings, after: settings },
-      { on: 'source', before: document.source, after: source },
-    ],
+    sentence: `closed ${source.name}`,
+    steps: [{ on: 'shelf', before: document.shelf, after: after.length > 0 ? after : undefined }],
   };
 }
 

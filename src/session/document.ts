@@ -50,6 +50,18 @@ export interface SessionDocument {
   readonly settings: Settings;
   /** Ascending `at`. */
   readonly verdicts: readonly Verdict[];
+  /** Other spectra of the session, each as it was left; absent when there is none. */
+  readonly shelf?: readonly Shelved[];
 }
+
+/** A source that is not on the desk now, with its own settings and verdicts. */
+export interface Shelved {
+  readonly source: Source;
+  readonly settings: Settings;
+  readonly verdicts: readonly Verdict[];
+}
+
+/** Whether two sources are the same file. */
+export const sameSource = (a: Source, b: Source) => a.kind === b.kind && a.name === b.name && a.size === b.size;
 
 export const EMPTY_DOCUMENT: SessionDocument = { settings: { reading: {}, measure: {}, naming: {} }, verdicts: [] };

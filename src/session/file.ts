@@ -22,11 +22,18 @@ const settingsShape = v.object({
   ownLines: v.optional(v.object({ name: v.string(), text: v.string() })),
 });
 const sourceShape = v.object({ kind: v.picklist(['spectrum', 'line-list']), name: v.string(), size: v.number() });
-const documentShape = v.object({ source: v.optional(sourceShape), settings: settingsShape, verdicts: v.array(verdictShape) });
+const shelfShape = v.array(v.object({ source: sourceShape, settings: settingsShape, verdicts: v.array(verdictShape) }));
+const documentShape = v.object({
+  source: v.optional(sourceShape),
+  settings: settingsShape,
+  verdicts: v.array(verdictShape),
+  shelf: v.optional(shelfShape),
+});
 const stepShape = v.variant('on', [
   v.object({ on: v.literal('verdict'), before: v.optional(verdictShape), after: v.optional(verdictShape) }),
   v.object({ on: v.literal('settings'), before: settingsShape, after: settingsShape }),
   v.object({ on: v.literal('source'), before: v.optional(sourceShape), after: v.optional(sourceShape) }),
+  v.object({ on: v.literal('shelf'), before: v.optional(shelfShape), after: v.optional(shelfShape) }),
 ]);
 const changesShape = v.array(v.object({ sentence: v.string(), steps: v.array(stepShape) }));
 const fileShape = v.object({

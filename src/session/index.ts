@@ -6,6 +6,7 @@ export {
   acceptMany,
   changeSettings,
   declare,
+  dropShelved,
   openSource,
   type PointedFeature,
   type PointedName,

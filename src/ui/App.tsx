@@ -1,6 +1,6 @@
 import { type DragEvent, useState } from 'react';
 import { useDesk } from './desk/deskStore.ts';
-import { openAny } from './desk/files.ts';
+import { openAll } from './desk/files.ts';
 import { Alerts } from './parts/Alerts.tsx';
 import { EmptyDesk } from './parts/EmptyDesk.tsx';
 import { LineTable } from './parts/LineTable.tsx';
@@ -60,8 +60,7 @@ function useDrop() {
     onDrop(event: DragEvent) {
       event.preventDefault();
       setOver(false);
-      const file = event.dataTransfer.files[0];
-      if (file) void openAny(file);
+      void openAll([...event.dataTransfer.files]);
     },
   };
   return { over, handlers };

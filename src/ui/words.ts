@@ -35,6 +35,14 @@ export const words = {
     changed: (medium: string) => `wavelengths read as ${medium}`,
   },
   tabs: { case: 'Case', settings: 'Settings', reading: 'Reading', list: 'Lines', history: 'History', keys: 'Keys' },
+  shelf: {
+    title: 'Spectra of this session',
+    here: 'on the desk',
+    goTo: (name: string) => `Go to ${name}`,
+    close: (name: string) => `Close ${name}`,
+    verdicts: (n: number) => (n === 1 ? '1 verdict' : `${n} verdicts`),
+    more: (n: number) => `+ ${n} more`,
+  },
   tabsLabel: 'Side panel',
   list: {
     title: 'The line list',

@@ -117,3 +117,26 @@ test('a changed setting is measured anew, a run can be stopped, and both can be 
   await expect(page.getByText(/A number between/)).toBeVisible();
   expect(desk.faults).toEqual([]);
 });
+
+test('several files opened at once form a list, and each comes back as it was left', async ({ page }) => {
+  const desk = new Desk(page);
+  await desk.openSample();
+  await desk.chooseRow('[O III] 5006.84');
+  await page.keyboard.press('Enter');
+  await expect(page.locator('.facts')).toContainText('1 accepted');
+  const chooser = page.waitForEvent('filechooser');
+  await page.getByRole('button', { name: 'Open a file' }).click();
+  const file = (name: string) => ({ name, mimeType: 'text/csv', buffer: Buffer.from(SAMPLE) });
+  await (await chooser).setFiles([file('second.csv'), file('third.csv')]);
+  await expect(page.locator('.facts')).toContainText('third.csv', { timeout: 30_000 });
+  await desk.isIdle();
+  await expect(page.locator('.facts')).toContainText('+ 2 more');
+  await page.getByRole('tab', { name: 'Reading' }).click();
+  await page.getByRole('button', { name: 'Go to lantern-nebula.csv' }).click();
+  await expect(page.locator('.facts')).toContainText('1 accepted', { timeout: 30_000 });
+  await desk.isIdle();
+  await page.getByRole('tab', { name: 'Reading' }).click();
+  await page.getByRole('button', { name: 'Close third.csv' }).click();
+  await expect(page.locator('.facts')).toContainText('+ 1 more');
+  expect(desk.faults).toEqual([]);
+});

@@ -4,6 +4,7 @@ import {
   acceptMany,
   applyChange,
   declare,
+  dropShelved,
   EMPTY_DOCUMENT,
   inverseOf,
   openSource,
@@ -69,12 +70,37 @@ describe('verdicts', () => {
     expect(applyChange(document, inverseOf(change))).toEqual(EMPTY_DOCUMENT);
   });
 
-  test('another source takes the verdicts with it, and undo brings them back', () => {
-    const document = applyChange(EMPTY_DOCUMENT, accept(EMPTY_DOCUMENT, feature, oIII));
-    const change = openSource(document, { kind: 'spectrum', name: 'other.fits', size: 10 });
-    const opened = applyChange(document, change);
-    expect(opened.verdicts).toEqual([]);
-    expect(opened.source?.name).toBe('other.fits');
-    expect(applyChange(opened, inverseOf(change)).verdicts).toEqual(document.verdicts);
+  test('another source puts the first on the shelf with its verdicts, and going back brings both', () => {
+    const first = { kind: 'spectrum', name: 'lantern.csv', size: 10 } as const;
+    const second = { kind: 'spectrum', name: 'other.fits', size: 20 } as const;
+    let document = applyChange(EMPTY_DOCUMENT, openSource(EMPTY_DOCUMENT, first));
+    document = applyChange(document, accept(document, feature, oIII));
+    const atFirst = document;
+    const change = openSource(document, second);
+    document = applyChange(document, change);
+    expect(document.source).toEqual(second);
+    expect(document.verdicts).toEqual([]);
+    expect(document.shelf).toEqual([{ source: first, settings: atFirst.settings, verdicts: atFirst.verdicts }]);
+    expect(applyChange(document, inverseOf(change))).toEqual(atFirst);
+    document = applyChange(document, openSource(document, first));
+    expect(document.source).toEqual(first);
+    expect(document.verdicts).toEqual(atFirst.verdicts);
+    expect(document.shelf?.map((s) => s.source)).toEqual([second]);
+  });
+
+  test('a spectrum is closed with its verdicts, and undo brings it back', () => {
+    const first = { kind: 'spectrum', name: 'lantern.csv', size: 10 } as const;
+    const opened = applyChange(EMPTY_DOCUMENT, openSource(EMPTY_DOCUMENT, first));
+    const both = applyChange(opened, openSource(opened, { kind: 'spectrum', name: 'other.fits', size: 20 }));
+    const change = dropShelved(both, first);
+    expect(applyChange(both, change).shelf).toBeUndefined();
+    expect(applyChange(applyChange(both, change), inverseOf(change))).toEqual(both);
+  });
+
+  test('opening what is already on the desk keeps everything', () => {
+    const first = { kind: 'spectrum', name: 'lantern.csv', size: 10 } as const;
+    let document = applyChange(EMPTY_DOCUMENT, openSource(EMPTY_DOCUMENT, first));
+    document = applyChange(document, accept(document, feature, oIII));
+    expect(openSource(document, first).steps).toEqual([]);
   });
 });

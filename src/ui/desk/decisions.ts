@@ -5,13 +5,16 @@ import {
   type Change,
   changeSettings,
   declare,
+  dropShelved,
   type History,
   make,
+  openSource,
   type PointedFeature,
   redo,
   reject,
   reopen,
   type Settings,
+  type Source,
   undo,
   writeNote,
 } from '../../session/index.ts';
@@ -65,6 +68,11 @@ function chosenOnly<T extends object>(choices: T): T {
   for (const key of Object.keys(kept) as (keyof T)[]) if (kept[key] === undefined) delete kept[key];
   return kept;
 }
+
+/** Puts a spectrum of the shelf back on the desk. */
+export const goTo = (source: Source) => commit(openSource(present(), source));
+/** Closes a spectrum of the shelf. */
+export const close = (source: Source) => commit(dropShelved(present(), source));
 
 export const undoLast = () => step(undo, desk().history.past.at(-1), (sentence) => `took back: ${sentence}`);
 export const redoNext = () => step(redo, desk().history.future.at(-1), (sentence) => `did again: ${sentence}`);

@@ -16,8 +16,13 @@ export async function openSample(): Promise<void> {
   await openFile(await response.blob(), SAMPLE);
 }
 
+/** Opens files one after the other; the last one stays on the desk, the others stand on the shelf. */
+export async function openAll(files: readonly File[]): Promise<void> {
+  for (const file of files) await openAny(file);
+}
+
 /** Any file the user hands over: a session by its ending, else a spectrum or a list. */
-export async function openAny(file: File): Promise<void> {
+async function openAny(file: File): Promise<void> {
   if (file.name.endsWith(`.${SESSION_ENDING}`)) await openSession(file);
   else await openFile(file, file.name);
 }

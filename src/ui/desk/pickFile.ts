@@ -1,12 +1,12 @@
-import { openAny } from './files.ts';
+import { openAll } from './files.ts';
 
-/** Asks for a file with the browser's own dialog. */
+/** Asks for files with the browser's own dialog. */
 export function pickFile(): void {
   const input = document.createElement('input');
   input.type = 'file';
+  input.multiple = true;
   input.onchange = () => {
-    const file = input.files?.[0];
-    if (file) void openAny(file);
+    void openAll([...(input.files ?? [])]);
   };
   input.click();
 }

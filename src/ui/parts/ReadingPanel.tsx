@@ -2,6 +2,7 @@ import { wordPlace } from '../../problems/index.ts';
 import { useDesk } from '../desk/deskStore.ts';
 import { chooseReading } from '../desk/readingChoices.ts';
 import { words } from '../words.ts';
+import { ShelfBox } from './ShelfBox.tsx';
 import { TextSetting } from './TextSetting.tsx';
 
 const UNITS = ['Angstrom', 'nm', 'um'] as const;
@@ -18,6 +19,7 @@ export function ReadingPanel() {
   const take = (change: typeof choices, what: string) => chooseReading({ ...choices, ...change }, label.changed(what));
   return (
     <section className="reading">
+      <ShelfBox />
       <h2>{label.title}</h2>
       <p className="hint">{label.samples(reading.samples, reading.maskedSamples)}</p>
       <dl className="facts-list" aria-label={label.facts}>

@@ -42,6 +42,7 @@ function UndoButtons() {
 function Facts() {
   const analysis = useDesk((state) => state.analysis);
   const rows = useDesk((state) => state.rows);
+  const others = useDesk((state) => state.history.document.shelf?.length ?? 0);
   if (!analysis) return null;
   const { reading, z, zErr, resolvingPower } = analysis;
   const named = rows.filter((row) => row.name).length;
@@ -51,6 +52,7 @@ function Facts() {
       <Fact tab="reading" strong>
         {reading.name}
       </Fact>
+      {others > 0 && <Fact tab="reading">{words.shelf.more(others)}</Fact>}
       <Fact tab="reading">{`${words.medium[reading.medium]}${reading.mediumStated ? '' : ' ?'}`}</Fact>
       <Fact tab="settings">{velocityFact(z, zErr)}</Fact>
       {resolvingPower !== undefined && <Fact tab="settings">{`R ${Math.round(resolvingPower).toLocaleString('en')}`}</Fact>}
