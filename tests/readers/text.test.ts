@@ -262,3 +262,11 @@ Byte-by-byte Description of file: made.txt
     expect(corrected.spectrum.wavelength[0]).toBeCloseTo(5005, 9);
   });
 });
+
+describe('headers that do not quite match', () => {
+  it('fewer names than columns name the first ones', async () => {
+    const reading = await read('wavelength flux\n5000 1 0.1\n5001 2 0.2\n5002 3 0.3\n');
+    expect(Array.from(reading.spectrum.flux)).toEqual([1, 2, 3]);
+    expect(reading.how.find((h) => h.fact === 'wavelength')?.reason).toContain('wavelength');
+  });
+});

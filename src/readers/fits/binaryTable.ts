@@ -3,7 +3,7 @@ import type { Column } from '../columns.ts';
 import { type Notes, warn } from '../notes.ts';
 import type { ByteSource, ReadingControl } from '../reading.ts';
 import type { Hdu } from './hdus.ts';
-import { type Header, numberOf, textOf } from './header.ts';
+import { commentOf, type Header, numberOf, textOf } from './header.ts';
 import { decode, LETTER_BYTES, type Scaling } from './numbers.ts';
 
 /** One field of a binary table (FITS 4.0, section 7.3). */
@@ -72,7 +72,7 @@ export function openBinaryTable(hdu: Hdu, notes: Notes): BinaryTable {
       unit: textOf(header, `TUNIT${k}`),
       ucd: textOf(header, `TUCD${k}`),
       utype: textOf(header, `TUTYP${k}`),
-      description: textOf(header, `TCOMM${k}`) || textOf(header, `TDESC${k}`),
+      description: textOf(header, `TCOMM${k}`) || textOf(header, `TDESC${k}`) || commentOf(header, `TTYPE${k}`),
       letter: pointer ? (match[3] ?? 'B') : letter,
       ...(pointer ? { pointer } : {}),
       repeat: pointer ? Math.min(repeat, 1) : repeat,

@@ -1,7 +1,8 @@
 import { type MediumEvidence, mediumInWords, saysRestFrame } from '../mediumWords.ts';
 import { type Notes, noteFact, warn } from '../notes.ts';
 import type { Hdu } from './hdus.ts';
-import { type Header, logicalOf, numberOf, textOf } from './header.ts';
+import { commentOf, type Header, logicalOf, numberOf, textOf } from './header.ts';
+import { watAttributes } from './wat.ts';
 
 /** What the headers say around a spectrum. */
 export interface HeaderFacts {
@@ -55,7 +56,7 @@ export function headerFacts(hdu: Hdu, primary: Hdu, notes: Notes): HeaderFacts {
   if (object) noteFact(notes, 'object', object, 'the header');
   const frame = text('SPECSYS');
   noteVelocities(headers, notes);
-  const medium = first(mediumOfHeader) ?? mediumOfTexts(headers, notes);
+  const medium = first(mediumOfHeader) ?? mediumOfAxis(hdu.header) ?? mediumOfTexts(headers, notes);
   const rest = first((h) => h.texts.find((t) => /wave|lam/i.test(t) && saysRestFrame(t)));
   const rp = first((h) => numberOf(h, 'SPEC_RP') ?? numberOf(h, 'SPECRP') ?? numberOf(h, 'RESOLPOW'));
   const unit = fluxUnitOf(hdu, primary);
@@ -100,6 +101,17 @@ function mediumOfHeader(header: Header): MediumEvidence | undefined {
     if (air !== vac) return { medium: air ? 'air' : 'vacuum', evidence: `${keyword} = ${words} in the header` };
   }
   return undefined;
+}
+
+/** The words around the first axis: CTYPE1, the comments of its cards, the label in its WAT cards. */
+function mediumOfAxis(header: Header): MediumEvidence | undefined {
+  const label = watAttributes(header, 1).label ?? '';
+  const words = [textOf(header, 'CTYPE1'), label, ...['CTYPE1', 'CUNIT1', 'CRVAL1', 'CDELT1', 'CD1_1'].map((k) => commentOf(header, k))];
+  // AWAV and WAVE themselves are read with the axis
+  return words
+    .filter((w) => !/^(AWAV|WAVE)/.test(w))
+    .map((w) => mediumInWords(`wavelength ${w}`))
+    .find((m) => m !== undefined);
 }
 
 function mediumOfTexts(headers: readonly Header[], notes: Notes): MediumEvidence | undefined {

@@ -43,7 +43,9 @@ function fromByteDescription(headers: readonly string[], columns: number): Names
 }
 
 function fromHeaderLines(headers: readonly string[], dialect: Dialect, columns: number): Names | undefined {
-  const rows = headers.map((line) => cellsOfHeader(line, dialect, columns)).filter((cells) => cells !== undefined);
+  const rows = headers
+    .map((line) => cellsOfHeader(line, dialect, columns) ?? firstNames(line, dialect, columns))
+    .filter((cells) => cells !== undefined);
   if (rows.length === 0) return undefined;
   const nameAt = Math.max(0, rows.findIndex(namesAnAxis));
   const names = rows[nameAt];
@@ -118,6 +120,13 @@ function cellsOfHeader(line: string, dialect: Dialect, columns: number): string[
     if (cells.length === columns) return cells;
   }
   return undefined;
+}
+
+/** Names of the first columns where a header names fewer than there are. */
+function firstNames(line: string, { delimiter }: Dialect, columns: number): string[] | undefined {
+  const cells = splitLine(line, delimiter);
+  const rest = Array.from({ length: columns - cells.length }, (_, k) => String(cells.length + k + 1));
+  return cells.length >= 2 && cells.length < columns && namesAnAxis(cells) ? [...cells, ...rest] : undefined;
 }
 
 /** `wave [A] flux [Jy]` -> `wave [A]`, `flux [Jy]`. */
