@@ -8,11 +8,11 @@ export interface Window {
 }
 
 /** Peaks nearer than this, in FWHM, are fitted together. */
-const JOIN_FWHM = 3.6;
+const JOIN_FWHM = 5;
 /** A window reaches this far beyond its outermost peaks ... */
 const REACH_FWHM = 4;
 /** ... but not nearer than this to a peak of the next group. */
-const AWAY_FWHM = 2.3;
+const AWAY_FWHM = 2.5;
 /** A chain of more peaks is cut at its widest gap: the cost of a fit grows with the cube. */
 const MOST_PEAKS = 14;
 

@@ -11,7 +11,7 @@ const SPIKE_SIGMA = 7;
 /** Samples to either side that may be the spike instead. */
 const SPIKE_NEIGHBOURS = 2;
 /** Nothing is added this near to the ends of a window, in sigma: there a line and the slope of the continuum are one. */
-const MARGIN_SIGMA = 3;
+const MARGIN_SIGMA = 1.2;
 
 /**
  * Fits a group and looks into its residuals for components that the peaks did not show, one at a time, as long as each improves the fit by more than
@@ -44,7 +44,20 @@ export function growGroup(
     if (totalChi2(fit) - totalChi2(trial) < price || !holds(trial, width)) break;
     fit = trial;
   }
-  return fit;
+  return fit.components.length > starts.length ? pruned(samples, fit, width, price) : fit;
+}
+
+/** Takes out, faintest first, what the fit can do without: a component added early may only have stood in for one found later. */
+function pruned(samples: FitSamples, fit: GroupFit, width: WidthPrior, price: number): GroupFit {
+  let kept = fit;
+  const faintestFirst = [...fit.components].sort((a, b) => Math.abs(a.flux) - Math.abs(b.flux)).map((c) => c.centre);
+  for (const centre of faintestFirst) {
+    const rest = kept.components.filter((c) => Math.abs(c.centre - centre) > 1e-3 * width.sigmaAt(centre));
+    if (rest.length === kept.components.length || rest.length === 0) continue;
+    const trial = fitGroup(samples, kept.first, kept.last, rest, width);
+    if (totalChi2(trial) - totalChi2(kept) < price) kept = trial;
+  }
+  return kept;
 }
 
 const totalChi2 = (fit: GroupFit) => fit.end.chi2;

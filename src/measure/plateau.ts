@@ -6,6 +6,8 @@ import type { FitSamples, GroupFit, WidthPrior } from './fitGroup.ts';
 const ALIKE = 3;
 /** ... and stand no further apart than this, in FWHM. */
 const TOUCHING_FWHM = 2.6;
+/** A narrower row, outermost centre to outermost, is a blend: a box looks like it. */
+const NARROWEST_FWHM = 1.3;
 /** Edges are sought this far beyond the outermost components, on a grid of so many places. */
 const EDGE_REACH_FWHM = 1.6;
 const EDGES = 16;
@@ -22,7 +24,8 @@ export function isPlateau(samples: FitSamples, fit: GroupFit, width: WidthPrior)
   const fluxes = lines.map((l) => l.flux);
   if (Math.max(...fluxes) > ALIKE * Math.min(...fluxes)) return false;
   const fwhm = FWHM_PER_SIGMA * width.sigmaAt(lines[0].centre);
-  if (lines.some((line, k) => k > 0 && line.centre - lines[k - 1].centre > TOUCHING_FWHM * fwhm)) return false;
+  const gaps = lines.slice(1).map((line, k) => (line.centre - lines[k].centre) / fwhm);
+  if (Math.max(...gaps) > TOUCHING_FWHM || gaps.reduce((a, b) => a + b, 0) < NARROWEST_FWHM) return false;
   const price = Math.log(fit.last - fit.first + 1);
   const box = bestBoxChi2(samples, fit, lines[0].centre, lines[lines.length - 1].centre, width.sigmaAt(lines[0].centre), fwhm);
   return box + BOX_UNKNOWNS * price < fit.chi2 + 3 * lines.length * price;
