@@ -26,7 +26,10 @@ export function withError(value: number | undefined, err: number | undefined, ot
 }
 
 /** A wavelength with its error, Angstrom. */
-export const wavelengthText = (value: number, err: number | undefined) => withError(value, err, 2, MOST_WAVELENGTH_DECIMALS);
+export function wavelengthText(value: number, err: number | undefined): string {
+  const text = withError(value, err, 2, MOST_WAVELENGTH_DECIMALS);
+  return text.replace(/± 0\.0000$/, '± < 0.0001');
+}
 
 /** "+31.2 ± 0.4", with its sign. */
 export function signed(value: number, err: number | undefined, otherwise: number): string {

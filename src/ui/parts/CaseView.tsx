@@ -1,3 +1,4 @@
+import { useEffect, useRef } from 'react';
 import { useChosenRow } from '../desk/chosen.ts';
 import { declareRow, reopenRow } from '../desk/decisions.ts';
 import type { DeskRow } from '../desk/deskRows.ts';
@@ -13,10 +14,15 @@ import { NoteField } from './NoteField.tsx';
 /** The chosen feature: close-up, numbers, candidates with their evidence, verdict. */
 export function CaseView() {
   const row = useChosenRow();
+  const top = useRef<HTMLElement>(null);
+  const number = row?.feature.number;
+  useEffect(() => {
+    if (number !== undefined) top.current?.scrollIntoView({ block: 'nearest' });
+  }, [number]);
   if (!row) return <p className="hint">{words.case.none}</p>;
   return (
     <article className="case">
-      <header className="case-head">
+      <header className="case-head" ref={top}>
         <CommandButton name="previous-feature">
           <Icon name="left" />
         </CommandButton>

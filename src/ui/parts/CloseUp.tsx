@@ -4,7 +4,9 @@ import type { DeskRow } from '../desk/deskRows.ts';
 import { useDesk } from '../desk/deskStore.ts';
 import { round } from '../figures.ts';
 import { decimate } from '../plot/decimate.ts';
+import { evenTicks } from '../plot/evenTicks.ts';
 import { fitCurve } from '../plot/fitCurve.ts';
+import { plotSamplesOf } from '../plot/plotSamples.ts';
 import type { Profile } from '../plot/profileCurve.ts';
 import { profileOf } from '../plot/profileOf.ts';
 import { extent, place, svgPath, svgSteps } from '../plot/svgPath.ts';
@@ -15,6 +17,8 @@ const HEIGHT = 128;
 const FOOT = 14;
 /** Half width of the picture in FWHM. */
 const HALF_FWHM = 7;
+/** Half width of what must fit into its height. */
+const CORE_FWHM = 1.25;
 const CURVE_POINTS = 160;
 
 /** Data, fit and every component about the chosen feature. */
@@ -25,13 +29,15 @@ export function CloseUp({ row }: { row: DeskRow }) {
   if (!drawn) return null;
   return (
     <svg className="curves close-up" viewBox={`0 0 ${WIDTH} ${HEIGHT + FOOT}`} role="img" aria-label={words.case.closeUp}>
-      <path className="curve-chosen" d={`M${drawn.centre.toFixed(1)} 0V${HEIGHT}`} />
-      <path className="curve-continuum" d={drawn.continuum} />
-      {drawn.components.map(({ at, d }) => (
-        <path key={at} className="curve-component" d={d} />
-      ))}
-      <path className="curve-data" d={drawn.data} />
-      <path className="curve-model" d={drawn.model} />
+      <svg width={WIDTH} height={HEIGHT} aria-hidden="true">
+        <path className="curve-chosen" d={`M${drawn.centre.toFixed(1)} 0V${HEIGHT}`} />
+        <path className="curve-continuum" d={drawn.continuum} />
+        {drawn.components.map(({ at, d }) => (
+          <path key={at} className="curve-component" d={d} />
+        ))}
+        <path className="curve-data" d={drawn.data} />
+        <path className="curve-model" d={drawn.model} />
+      </svg>
       <path className="curve-zero" d={`M0 ${HEIGHT}H${WIDTH}`} />
       {drawn.ticks.map(({ x, text }) => (
         <text key={text} x={x} y={HEIGHT + 11} textAnchor="middle">
@@ -51,12 +57,15 @@ function closeUpCurves(samples: SamplesView, row: DeskRow, rows: readonly DeskRo
   const from = centroid - half;
   const to = centroid + half;
   const cut = (values: Float64Array) => decimate(samples.wavelength, values, from, to, (2 * half) / WIDTH);
-  const data = cut(samples.flux);
-  const model = cut(samples.model);
+  const { flux } = plotSamplesOf(samples);
+  const data = cut(flux);
   const continuum = cut(samples.continuum);
-  const range = extent(data.y, model.y, continuum.y);
+  // the height is that of the chosen line: a strong neighbour runs out of the picture
+  const reach = half * (CORE_FWHM / HALF_FWHM);
+  const core = (values: Float64Array) => decimate(samples.wavelength, values, centroid - reach, centroid + reach, (2 * half) / WIDTH).y;
+  const range = extent(core(flux), core(samples.model), continuum.y);
   if (!range) return undefined;
-  const margin = (range[1] - range[0]) * 0.06;
+  const margin = (range[1] - range[0]) * 0.08;
   const xAxis = { low: from, high: to, from: 0, to: WIDTH };
   const yAxis = { low: range[0] - margin, high: range[1] + margin, from: HEIGHT - 1, to: 12 };
   const profiles = rows.map((each) => profileOf(each.feature)).filter((profile) => reaches(profile, from, to));
@@ -78,13 +87,8 @@ function closeUpCurves(samples: SamplesView, row: DeskRow, rows: readonly DeskRo
 /** A line outside the picture whose wing is still in it counts. */
 const reaches = ({ centre, fwhm }: Profile, from: number, to: number) => centre > from - fwhm && centre < to + fwhm;
 
-/** Three or four round wavelengths. */
+/** Round wavelengths that are not cut by an end of the picture. */
 function closeUpTicks(from: number, to: number): number[] {
-  const rough = (to - from) / 4;
-  const size = 10 ** Math.floor(Math.log10(rough));
-  const step = size * ([1, 2, 5, 10].find((k) => k * size >= rough) ?? 10);
-  const digits = Math.max(0, -Math.floor(Math.log10(step)));
-  const ticks: number[] = [];
-  for (let k = Math.ceil(from / step); k * step < to; k++) ticks.push(Number((k * step).toFixed(digits)));
-  return ticks.filter((tick) => tick - from > rough / 4 && to - tick > rough / 4);
+  const air = (to - from) / 16;
+  return evenTicks(from, to, 4).filter((tick) => tick - from > air && to - tick > air);
 }

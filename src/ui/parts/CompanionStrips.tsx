@@ -5,6 +5,7 @@ import { choose } from '../desk/chosen.ts';
 import type { DeskRow } from '../desk/deskRows.ts';
 import { useDesk } from '../desk/deskStore.ts';
 import { decimate } from '../plot/decimate.ts';
+import { plotSamplesOf } from '../plot/plotSamples.ts';
 import { profileAt } from '../plot/profileCurve.ts';
 import { extent, svgPath, svgSteps } from '../plot/svgPath.ts';
 import { words } from '../words.ts';
@@ -86,7 +87,7 @@ function stripCurves(samples: SamplesView, companion: CompanionView, fwhmKms: nu
   const perKms = expectedAt / SPEED_OF_LIGHT_KMS;
   const from = expectedAt - halfKms * perKms;
   const to = expectedAt + halfKms * perKms;
-  const data = decimate(samples.wavelength, samples.flux, from, to, (to - from) / WIDTH);
+  const data = decimate(samples.wavelength, plotSamplesOf(samples).flux, from, to, (to - from) / WIDTH);
   const base = decimate(samples.wavelength, samples.continuum, expectedAt, expectedAt, 1).y[0];
   if (data.x.length < 2 || base === undefined) return undefined;
   const x = Array.from({ length: CURVE_POINTS + 1 }, (_, k) => from + ((to - from) * k) / CURVE_POINTS);

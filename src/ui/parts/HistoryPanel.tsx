@@ -1,4 +1,5 @@
 import { useDesk } from '../desk/deskStore.ts';
+import { fixed } from '../figures.ts';
 import { words } from '../words.ts';
 import { CommandButton } from './CommandButton.tsx';
 
@@ -22,6 +23,26 @@ export function HistoryPanel() {
           </li>
         ))}
       </ol>
+      <LostVerdicts />
     </section>
+  );
+}
+
+/** What was decided on features that the present settings do not find. */
+function LostVerdicts() {
+  const lost = useDesk((state) => state.analysis?.lostVerdicts);
+  if (!lost || lost.length === 0) return null;
+  return (
+    <>
+      <h3>{words.history.lost}</h3>
+      <p className="hint">{words.history.lostHint}</p>
+      <ul>
+        {lost.map((verdict) => (
+          <li key={verdict.at}>
+            <span className="number">{`${fixed(verdict.at, 2)} Å`}</span> {verdict.decision} {verdict.accepted?.join(' + ')} {verdict.note}
+          </li>
+        ))}
+      </ul>
+    </>
   );
 }

@@ -13,8 +13,8 @@ import { RowVerdict } from './RowVerdict.tsx';
 
 const ROW_PX = 26;
 const VERDICT_PX = 56;
-const GROWING = ['name', 'note'];
-const trackOf = ({ key, width }: TableColumn) => (GROWING.includes(key) ? `minmax(${width}px, 1fr)` : `${width}px`);
+const GROWING: Record<string, string> = { name: '320px', note: '1fr' };
+const trackOf = ({ key, width }: TableColumn) => (GROWING[key] ? `minmax(${width}px, ${GROWING[key]})` : `${width}px`);
 const GRID = { gridTemplateColumns: [...TABLE_COLUMNS.map(trackOf), `${VERDICT_PX}px`].join(' ') };
 const LEAST_WIDTH = TABLE_COLUMNS.reduce((sum, { width }) => sum + width, VERDICT_PX);
 

@@ -1,6 +1,7 @@
 import { wordPlace } from '../../problems/index.ts';
 import { useDesk } from '../desk/deskStore.ts';
 import { chooseReading } from '../desk/readingChoices.ts';
+import { fixed } from '../figures.ts';
 import { words } from '../words.ts';
 import { ShelfBox } from './ShelfBox.tsx';
 import { TextSetting } from './TextSetting.tsx';
@@ -15,7 +16,7 @@ export function ReadingPanel() {
   const analysis = useDesk((state) => state.analysis);
   const choices = useDesk((state) => state.history.document.settings.reading);
   if (!analysis) return null;
-  const { reading, remarks } = analysis;
+  const { reading, remarks, missing } = analysis;
   const take = (change: typeof choices, what: string) => chooseReading({ ...choices, ...change }, label.changed(what));
   return (
     <section className="reading">
@@ -45,6 +46,19 @@ export function ReadingPanel() {
           </li>
         ))}
       </ul>
+      {missing.length > 0 && (
+        <>
+          <h3>{label.missing}</h3>
+          <p className="hint">{label.missingHint}</p>
+          <ul className="remarks">
+            {missing.map((line) => (
+              <li key={`${line.label} ${line.expectedAt}`}>
+                <strong>{line.label}</strong> {label.expectedAt(fixed(line.expectedAt, 2))}
+              </li>
+            ))}
+          </ul>
+        </>
+      )}
       {reading.offers.length > 0 && (
         <>
           <h3>{label.offers}</h3>

@@ -1,10 +1,10 @@
-import { useMemo, useRef } from 'react';
+import { useRef } from 'react';
 import { useChosenRow } from '../desk/chosen.ts';
 import { setDesk, useDesk } from '../desk/deskStore.ts';
 import { look, shownRange } from '../desk/looking.ts';
 import { fixed } from '../figures.ts';
 import { SCALE_KINDS } from '../plot/fluxScale.ts';
-import { plotSamples } from '../plot/plotSamples.ts';
+import { plotSamplesOf } from '../plot/plotSamples.ts';
 import { words } from '../words.ts';
 import { ChosenFlag } from './ChosenFlag.tsx';
 import { CommandButton } from './CommandButton.tsx';
@@ -26,7 +26,7 @@ export function SpectrumView() {
   const scale = useDesk((state) => state.scale);
   const frame = useDesk((state) => state.frame);
   const chosen = useChosenRow();
-  const shown = useMemo(() => samples && plotSamples(samples), [samples]);
+  const shown = samples && plotSamplesOf(samples);
   const area = useRef<HTMLDivElement>(null);
   const canvas = useRef<HTMLDivElement>(null);
   const marks = useRef<HTMLCanvasElement>(null);

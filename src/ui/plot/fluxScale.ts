@@ -1,3 +1,5 @@
+import { evenTicks } from './evenTicks.ts';
+
 export type ScaleKind = 'linear' | 'log' | 'asinh';
 export const SCALE_KINDS: readonly ScaleKind[] = ['linear', 'log', 'asinh'];
 
@@ -38,15 +40,6 @@ export function fluxTicks(scale: FluxScale, low: number, high: number, count: nu
     if (last === undefined || scale.forward(tick) - scale.forward(last) >= (0.6 * spread) / count) kept.push(tick);
   }
   return kept.length < FEWEST_TICKS ? evenTicks(low, high, count) : kept;
-}
-
-function evenTicks(low: number, high: number, count: number): number[] {
-  const rough = (high - low) / count;
-  const size = 10 ** Math.floor(Math.log10(rough));
-  const step = size * ([1, 2, 5, 10].find((k) => k * size >= rough) ?? 10);
-  const ticks: number[] = [];
-  for (let k = Math.ceil(low / step); k * step <= high; k++) ticks.push(k * step);
-  return ticks;
 }
 
 /** 1 and 3 of every decade, both signs, and zero. */

@@ -14,7 +14,16 @@ export interface PlotSamples {
 
 const NOISE_PROBES = 2001;
 
-export function plotSamples(samples: SamplesView): PlotSamples {
+const made = new WeakMap<SamplesView, PlotSamples>();
+
+/** The samples as they are drawn, made once for each reading. */
+export function plotSamplesOf(samples: SamplesView): PlotSamples {
+  const known = made.get(samples) ?? plotSamples(samples);
+  made.set(samples, known);
+  return known;
+}
+
+function plotSamples(samples: SamplesView): PlotSamples {
   const n = samples.wavelength.length;
   const flux = new Float64Array(n);
   const residual = new Float64Array(n);
