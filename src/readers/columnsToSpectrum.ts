@@ -1,6 +1,7 @@
 import { type Place, ProblemError } from '../problems/index.ts';
 import { assemble, type RawSpectrum } from './assemble.ts';
 import { chooseColumns, columnList } from './chooseColumns.ts';
+import { roleOf } from './columnRoles.ts';
 import type { Column } from './columns.ts';
 import { flaggedBy } from './maskValues.ts';
 import { type MediumEvidence, mediumInColumn, saysRestFrame } from './mediumWords.ts';
@@ -48,6 +49,7 @@ export async function columnsToSpectrum(
   const medium: MediumEvidence | undefined =
     mediumInColumn(chosen.wavelength) ??
     around.medium ??
+    mediumOfSibling(columns, chosen.wavelength) ??
     (unit.quantity === 'wavelength' ? undefined : { medium: 'vacuum', evidence: `a ${unit.quantity} gives vacuum wavelengths` });
   const raw: RawSpectrum = {
     name: around.name,
@@ -66,6 +68,15 @@ export async function columnsToSpectrum(
     columns: columnList(columns),
   };
   return assemble(raw, choices, takenChoices(columns, chosen, around, choices), notes);
+}
+
+/** Beside a column called wavelength_air the one called wavelength is in vacuum, and the other way round. */
+function mediumOfSibling(columns: readonly Column[], wavelength: Column): MediumEvidence | undefined {
+  const others = columns.filter((c) => c !== wavelength && c.samples === wavelength.samples && roleOf(c).role === 'wavelength');
+  const said = others.map((c) => ({ name: c.name, told: mediumInColumn(c) })).filter(({ told }) => told !== undefined);
+  if (said.length !== 1 || others.length !== 1) return undefined;
+  const [{ name, told }] = said;
+  return { medium: told?.medium === 'air' ? 'vacuum' : 'air', evidence: `the column beside it is called ${name}` };
 }
 
 function restFrameOf(wavelength: Column, { restFrame }: Surroundings): { restFrame?: string } {

@@ -43,18 +43,25 @@ const linesOf = (hdu: Hdu) => hdu.axes.slice(1).reduce((a, b) => a * b, 1);
 /** The role by the words of the name that name roles: B_IVAR and IVAR are the same. */
 export function imageRole(hdu: Hdu) {
   if (hdu.name === '' && hdu.index === 0) return 'flux';
-  const known = nameWords(hdu.name).filter((w) => ROLE_WORDS.test(w));
-  return roleOf({ name: known.length ? known.join('_') : hdu.name, unit: '', kind: 'real' }).role;
+  const known = unitWords(hdu).filter((w) => ROLE_WORDS.test(w));
+  // "sci" and "data" say nothing where another word names the role
+  const telling = known.filter((w) => !/^(sci|data|primary)$/.test(w));
+  const words = telling.length ? telling : known;
+  return roleOf({ name: words.length ? words.join('_') : hdu.name, unit: '', kind: 'real' }).role;
 }
 
 const isErrorRole = (role: string) => role === 'sigma' || role === 'ivar' || role === 'variance' || role === 'relative';
 
 const ROLE_WORDS =
-  /^(flux|fluxes|wave|wavelength|wavelengths|lambda|loglam|ivar|err|errs|error|errors|sigma|variance|var|mask|dq|sci|data|stat|rel|relative|spec|spectrum|noise|unc|std|quality|flags?|counts|qual|primary)$/;
+  /^(flux|fluxes|wave|wavelength|wavelengths|lambda|loglam|ivar|err|errs|error|errors|sigma|variance|var|mask|dq|sci|data|stat|rel|relative|spec|spectrum|noise|unc|uncert|uncertainty|std|sig|sigmas?|lam|wl|wav|invvar|variances|intensity|signal|quality|flags?|counts|qual|primary)$/;
+
+/** The words of a unit's name; SCIFLUX and FLUX1 are taken apart. */
+const unitWords = (hdu: Hdu) =>
+  nameWords(hdu.name.replace(/^(sci|sky|cal|obj)(flux|wave|wavelength|var|err|ivar)/i, '$1_$2').replace(/([a-z])(\d+)$/i, '$1_$2'));
 
 /** The name without the words of its role: "b" of B_FLUX. */
 const stemOf = (hdu: Hdu) =>
-  nameWords(hdu.name)
+  unitWords(hdu)
     .filter((w) => !ROLE_WORDS.test(w))
     .join(' ');
 
@@ -64,7 +71,7 @@ function meaningOf(hdu: Hdu): { meaning: ErrorValues['meaning']; reason: string 
   const told = ({ MSE: 'variance', RMSE: 'sigma', INVMSE: 'ivar', INVRMSE: 'sigma' } as const)[word];
   if (told && word !== 'INVRMSE') return { meaning: told, reason: `HDUCLAS3 = ${word}` };
   if (/^stat$/i.test(hdu.name)) return { meaning: 'variance', reason: 'a unit called STAT holds variances (common practice, no source)' };
-  const { role } = roleOf({ name: hdu.name, unit: '', kind: 'real' });
+  const role = imageRole(hdu);
   return { meaning: role === 'ivar' || role === 'variance' || role === 'relative' ? role : 'sigma', reason: `its name is ${hdu.name}` };
 }
 

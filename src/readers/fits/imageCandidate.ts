@@ -50,14 +50,9 @@ export async function judgeImage(file: FitsFile, hdu: Hdu): Promise<Judged> {
     };
   const found = companions(file, hdu);
   const lines = linesOf(axes, axis?.axis ?? 1);
-  const lesser =
-    role === 'flux' ||
-    (role === 'other' &&
-      (hdu.name === '' ||
-        hdu.index === 0 ||
-        !/sky|back|cont|resid|norm|tell?uric|resol|model|cross|scatter|profile|wht|weight/i.test(hdu.name)))
-      ? 0
-      : -60;
+  const isAside =
+    /sky|back|bkg|cont|resid|norm|tell?uric|resol|model|cross|scatter|profile|wht|weight|blaze/i.test(hdu.name) && hdu.index !== 0;
+  const lesser = (role === 'flux' || role === 'other') && !isAside ? 0 : -60;
   if (axis || found.wavelength) {
     const merit =
       (lines > FRAME_LINES ? 45 : lines > 1 ? 84 : 90) +

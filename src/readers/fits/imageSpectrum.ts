@@ -93,6 +93,9 @@ export async function readImageLine(
     noteFact(notes, 'uncertainty', 'none', choices.errorColumn === 'none' ? 'chosen by you' : 'no band or other unit of the file holds it');
   const flagged = await companionMask(file, found, along, at, choices);
   offerLines(file, hdu, lines, row, bands, band, chosen === undefined);
+  // rows with wavelengths of their own are orders of one spectrum, not different objects
+  if (lines > 1 && lines <= FRAME_LINES && (found.wavelength?.axes.length ?? 0) > 1)
+    notes.offers.push({ label: `all ${lines} rows as one spectrum`, choices: { hdu: hdu.index, merge: true } });
   const medium = facts.medium ?? wavelengths.medium;
   if (facts.medium && wavelengths.medium && facts.medium.medium !== wavelengths.medium.medium) {
     warn(

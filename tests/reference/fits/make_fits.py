@@ -195,6 +195,32 @@ with open(os.path.join(here, 'samples.fits'), 'rb') as plain, open(os.path.join(
     packed.write(gzip.compress(plain.read(), mtime=0))
 expected['samples.fits.gz'] = [{**expected['samples.fits'][0], 'file': 'samples.fits.gz'}]
 
+# 12b echelle orders side by side: fluxes, variances and wavelengths as two-dimensional images, glued names
+two = lambda a, b: np.array([a, b])
+parts = [fits.ImageHDU(two(flux, flux * 2), name='GREEN_SCI_FLUX1'), fits.ImageHDU(two(err**2, err**2), name='GREEN_SCI_VAR1'), fits.ImageHDU(two(wave, wave + 3000), name='GREEN_SCI_WAVE1'), fits.ImageHDU(two(flux, flux), name='GREEN_SKY_FLUX1')]
+parts[2].header['BUNIT'] = 'Angstrom'
+back = put('echelle.fits', fits.PrimaryHDU(), *parts)
+for row in (1, 2):
+    say('echelle.fits', back['GREEN_SCI_WAVE1'].data[row - 1], back['GREEN_SCI_FLUX1'].data[row - 1], {'row': row}, error=np.sqrt(back['GREEN_SCI_VAR1'].data[row - 1]))
+
+# 12c DATA and STAT (variance), air wavelengths
+header = fits.Header({'CTYPE1': 'AWAV', 'CUNIT1': 'Angstrom', 'CRPIX1': 1.0, 'CRVAL1': 4750.0, 'CDELT1': 1.25, 'BUNIT': '10**(-20)*erg/s/cm**2/Angstrom'})
+back = put('stat.fits', fits.PrimaryHDU(), fits.ImageHDU(flux * 1e15, header, name='DATA'), fits.ImageHDU((err * 1e15) ** 2, header, name='STAT'))
+say('stat.fits', 4750.0 + 1.25 * np.arange(N), back['DATA'].data, error=np.sqrt(back['STAT'].data), medium='air', unit='10**(-20)*erg/s/cm**2/Angstrom')
+
+# 12d WAT cards: a Chebyshev order (numpy.polynomial), a log-linear and a linear one with a redshift to take out
+spec = 'wtype=multispec spec1 = "1 31 2 0. 0. 40 0. 1. 2. 1. 0. 1 4 1. 40. 5500. 150. 3. 0.25" spec2 = "2 30 1 3.6 0.0001 40 0. 1. 2." spec3 = "3 29 0 6000. 2.5 40 0.001 1. 2."'
+hdu = fits.PrimaryHDU(np.array([flux, flux * 2, flux * 3]))
+for key, value in {'WCSDIM': 2, 'CTYPE1': 'MULTISPE', 'CTYPE2': 'MULTISPE', 'CD1_1': 1.0, 'CD2_2': 1.0, 'WAT0_001': 'system=multispec', 'WAT1_001': 'wtype=multispec label=Wavelength units=angstroms'}.items():
+    hdu.header[key] = value
+for k in range(0, len(spec), 68):
+    hdu.header[f'WAT2_{k // 68 + 1:03d}'] = spec[k:k + 68]
+back = put('wat.fits', hdu)[0].data
+pixel = np.arange(1, N + 1)
+say('wat.fits', np.polynomial.chebyshev.chebval((2 * pixel - 41) / 39, [5500, 150, 3, 0.25]), back[0], {'order': 1}, digits=1e-15)
+say('wat.fits', 10 ** (3.6 + 1e-4 * np.arange(N)), back[1], {'order': 2}, digits=4e-15)
+say('wat.fits', (6000 + 2.5 * np.arange(N)) / 1.001, back[2], {'order': 3}, digits=1e-15)
+
 # 13 ECSV and VOTable by astropy.table
 table = Table({'wavelength': wave / 1e4, 'flux': MaskedColumn(flux, mask=np.arange(N) == 11), 'flux_err': err, 'name': ['a b'] * N}, meta={'comments': ['made for tests']})
 table['wavelength'].unit = 'um'
