@@ -15,6 +15,9 @@ const LEAST_PROBABILITY = 1e-4;
 /** Names whose companions are looked for: the others cannot win. */
 const MOST_WEIGHED = 14;
 
+/** Lines of one multiplet nearer than this share of a width are one name. */
+const UNRESOLVED_FWHM = 0.5;
+
 /** A weighed name with its evidence. */
 interface Version {
   readonly weighed: Weighed;
@@ -62,7 +65,7 @@ export function caseOf(
     const accepted: Evidence = { kind: 'verdict', nats: 0, sentence: 'You accepted this name.' };
     return { candidates: [candidateOf(mark, { ...only, evidence: [...only.evidence, accepted] }, 1, measured, data)], noneProbability: 0 };
   }
-  const joined = joinVersions(versions, data);
+  const joined = joinVersions(versions, data, UNRESOLVED_FWHM * (mark.fwhm ?? 0));
   const top = Math.max(0, ...joined.map((v) => v.odds));
   const none = Math.exp(-top);
   const weights = joined.map((v) => Math.exp(v.odds - top));
@@ -77,11 +80,14 @@ export function caseOf(
   };
 }
 
-/** @param versions best first */
-function joinVersions(versions: readonly Version[], data: AtomicData): Version[] {
+/**
+ * @param versions   best first
+ * @param unresolved Angstrom
+ */
+function joinVersions(versions: readonly Version[], data: AtomicData, unresolved: number): Version[] {
   const groups: Version[][] = [];
   for (const version of versions) {
-    const group = groups.find(([best]) => isOneName(best.weighed, version.weighed, data));
+    const group = groups.find(([best]) => isOneName(best.weighed, version.weighed, data, unresolved));
     if (group) group.push(version);
     else groups.push([version]);
   }
@@ -99,13 +105,13 @@ function joinVersions(versions: readonly Version[], data: AtomicData): Version[]
 }
 
 /** Same leading line, or leading lines of one multiplet that this mark cannot tell apart. */
-function isOneName(a: Weighed, b: Weighed, { lines }: AtomicData): boolean {
+function isOneName(a: Weighed, b: Weighed, { lines }: AtomicData, unresolved: number): boolean {
   const [p] = a.lines;
   const [q] = b.lines;
   if (p === q) return true;
   if (lines.ion[p] !== lines.ion[q]) return false;
   const kin = (lines.multiplet[p] > 0 && lines.multiplet[p] === lines.multiplet[q]) || lines.upperId[p] === lines.upperId[q];
-  return kin && Math.abs(lines.wavelengthVac[p] - lines.wavelengthVac[q]) < Math.min(a.sigma, b.sigma);
+  return kin && Math.abs(lines.wavelengthVac[p] - lines.wavelengthVac[q]) < Math.max(Math.min(a.sigma, b.sigma), unresolved);
 }
 
 function candidateOf(

@@ -79,7 +79,7 @@ function companionSentence(
 function priorSentence({ lines }: Weighed, data: AtomicData): string {
   const blend = lines.length > 1 ? ` A blend of ${lines.length} is less common than one line.` : '';
   const local = isLocal(data, lines[0]) ? ' Reduced spectra have most of their sky taken off.' : '';
-  return `About three features in a hundred belong to no line of the list.${blend}${local}`;
+  return `About six features in a hundred belong to no line of the list.${blend}${local}`;
 }
 
 const claimSentence = ({ lines }: Weighed) =>

@@ -18,10 +18,16 @@ const WIDE_DEX = 1.2;
 const OUTLIER_SHARE = 0.02;
 const OUTLIER_SIGMAS = 3;
 const MOST_OWED = 5;
-/** Share of real lines that no list holds: common practice, no source (deep spectra leave a few percent without a name). */
-const STRANGERS = 0.03;
-/** Strangers spread over this many dex of flux. */
-const STRANGER_DEX = 3;
+/** Share of features that belong to no line of the list: missing entries, artefacts. Common practice, no source (deep spectra leave a few percent without a name). */
+const STRANGERS = 0.06;
+/** Strangers are faint: their number falls by e for so many dex above the limit; a few are of any flux within three dex. */
+const STRANGER_DEX = 0.6;
+const ANY_FLUX_SHARE = 0.05;
+const ANY_FLUX_DEX = 3;
+
+/** Density of strangers in log10 flux, per dex, `above` dex over the limit. */
+const strangersPerDex = (above: number) =>
+  ((1 - ANY_FLUX_SHARE) * Math.exp(-Math.max(0, above) / STRANGER_DEX)) / STRANGER_DEX + ANY_FLUX_SHARE / ANY_FLUX_DEX;
 
 /** The nats of one name: a line, or a blend of `parts`. */
 export function scoreName(mark: Mark, j: number, parts: readonly Single[], context: WeighContext): Weighed {
@@ -38,7 +44,7 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
   const err = Math.hypot(Math.sqrt(sorted.reduce((sum, p, k) => sum + sortedShares[k] * p.err ** 2, 0)), logFluxErr(mark));
   const excess = Math.log10(Math.abs(mark.flux)) - logPredicted;
   const normal = (x: number, s: number) => Math.exp(-0.5 * (x / s) ** 2) / (s * Math.sqrt(2 * Math.PI));
-  // against a stranger anywhere between the neighbours, and of any flux within three dex
+  // against a stranger anywhere between the neighbours, and faint as strangers are
   const wavelengthNats =
     Math.log((1 - OUTLIER_SHARE) * normal(off, sigma) + OUTLIER_SHARE * normal(off, OUTLIER_SIGMAS * sigma)) + Math.log(survey.spacing);
   const owedNats = Math.min(
@@ -46,7 +52,8 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
     sorted.reduce((sum, p) => sum + p.owed, 0),
   );
   const strengthNats =
-    Math.log((1 - WIDE_SHARE) * normal(excess, err) + WIDE_SHARE * normal(excess, Math.hypot(err, WIDE_DEX))) + Math.log(STRANGER_DEX);
+    Math.log((1 - WIDE_SHARE) * normal(excess, err) + WIDE_SHARE * normal(excess, Math.hypot(err, WIDE_DEX))) -
+    Math.log(strangersPerDex(Math.log10(Math.abs(mark.flux)) - survey.logLimitAt(mark.wavelength)));
   let priorNats = -Math.log(STRANGERS);
   if (parts.length > 1) priorNats += BLEND_PRIOR * (parts.length - 1);
   let claimNats = 0;

@@ -1,4 +1,5 @@
 import { atomicBench } from './atomicBench.ts';
+import { identifyBench } from './identifyBench.ts';
 import { namingBench } from './namingBench.ts';
 import { physicsBench } from './physicsBench.ts';
 import { readersBench } from './readersBench.ts';
@@ -11,6 +12,7 @@ for (const [title, bench] of [
   ['level populations', physicsBench],
   ['reading', readersBench],
   ['naming', namingBench],
+  ['naming a simulated nebula', identifyBench],
   ['measuring, beside a script of numpy and scipy', seededBench],
 ] as const) {
   process.stdout.write(`\n${title}\n`);

@@ -5,6 +5,8 @@ import { seededRandom } from '../../src/numeric/index.ts';
 /** A mark whose origin is known: its lines, strongest first; none = a line that no list holds. */
 export interface SimulatedMark extends Mark {
   readonly lines: readonly number[];
+  /** Share of the flux that its strongest line carries; 1 for a line of no list. */
+  readonly mainShare: number;
 }
 
 export interface SimulatedNebula {
@@ -26,7 +28,7 @@ const CUT_EV = { low: 36, high: 110, shocked: 60 } as const;
 const ION_SCATTER_DEX = 0.5;
 /** A feature further than this share of a width from the next one is measured apart. */
 const APART_FWHM = 0.9;
-const LEAST_SHARE = 0.1;
+const LEAST_SHARE = 0.25;
 
 /**
  * Marks as measured of a nebula made from the list's own strengths with other abundances, line ratios, reddening, velocity, calibration errors and lines
@@ -61,7 +63,7 @@ export function simulateNebula(data: AtomicData, what: SimulatedNebula): Simulat
     const snr = (5 * flux) / limit;
     const err = Math.hypot((0.6 * fwhm) / snr, 0.02 * fwhm);
     const share = (at - what.low) / (what.high - what.low);
-    const calibration = (0.01 * fwhm * (drift[0] + drift[1] * Math.cos(3 * share)));
+    const calibration = 0.01 * fwhm * (drift[0] + drift[1] * Math.cos(3 * share));
     const measured = flux * (1 + Math.hypot(1 / snr, 0.02) * random.normal());
     return {
       wavelength: at + err * random.normal() + calibration,
@@ -70,13 +72,14 @@ export function simulateNebula(data: AtomicData, what: SimulatedNebula): Simulat
       fluxErr: Math.hypot(limit / 5, 0.02 * flux),
       fwhm,
       lines: parts.filter((p) => p.flux > LEAST_SHARE * flux).map((p) => p.line),
+      mainShare: parts[0].flux / flux,
     };
   });
   for (let k = 0; k < what.strangers * what.count; k++) {
     const wavelength = what.low + (what.high - what.low) * random.uniform();
     const flux = limit * 10 ** (1.2 * random.uniform());
     const fwhm = wavelength / what.resolvingPower;
-    marks.push({ wavelength, wavelengthErr: (0.12 * fwhm * limit) / flux, flux, fluxErr: limit / 5, fwhm, lines: [] });
+    marks.push({ wavelength, wavelengthErr: (0.12 * fwhm * limit) / flux, flux, fluxErr: limit / 5, fwhm, lines: [], mainShare: 1 });
   }
   return marks.sort((a, b) => a.wavelength - b.wavelength);
 }
@@ -101,4 +104,3 @@ function joinUnresolved(emitted: readonly { line: number; at: number; flux: numb
   for (const blend of blends) blend.parts.sort((a, b) => b.flux - a.flux);
   return blends;
 }
-
