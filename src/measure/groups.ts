@@ -1,8 +1,8 @@
 import type { Peak } from './peaks.ts';
 
 /** The peaks fitted together and their window of samples [first, last]. */
-export interface Window {
-  readonly peaks: readonly Peak[];
+export interface Window<P extends Peak> {
+  readonly peaks: readonly P[];
   readonly first: number;
   readonly last: number;
 }
@@ -21,8 +21,8 @@ const MOST_PEAKS = 14;
  * @param fwhm  n, in samples
  * @param n     samples of the spectrum
  */
-export function groupPeaks(peaks: readonly Peak[], fwhm: (sample: number) => number, n: number): Window[] {
-  const chains: Peak[][] = [];
+export function groupPeaks<P extends Peak>(peaks: readonly P[], fwhm: (sample: number) => number, n: number): Window<P>[] {
+  const chains: P[][] = [];
   for (const peak of peaks) {
     const chain = chains.at(-1);
     const previous = chain?.at(-1);
@@ -50,7 +50,7 @@ export function groupPeaks(peaks: readonly Peak[], fwhm: (sample: number) => num
   });
 }
 
-function cutChain(chain: Peak[]): Peak[][] {
+function cutChain<P extends Peak>(chain: P[]): P[][] {
   if (chain.length <= MOST_PEAKS) return [chain];
   let widest = 1;
   for (let k = 2; k < chain.length; k++) if (chain[k].at - chain[k - 1].at > chain[widest].at - chain[widest - 1].at) widest = k;

@@ -11,7 +11,7 @@ const SPIKE_SIGMA = 7;
 /** Samples to either side that may be the spike instead. */
 const SPIKE_NEIGHBOURS = 2;
 /** Nothing is added this near to the ends of a window, in sigma: there a line and the slope of the continuum are one. */
-const MARGIN_SIGMA = 1.2;
+const MARGIN_SIGMA = 3;
 
 /**
  * Fits a group and looks into its residuals for components that the peaks did not show, one at a time, as long as each improves the fit by more than

@@ -6,13 +6,12 @@ import { fitContinuum } from './continuum.ts';
 import type { Feature, Group, Measurement, MeasureSettings } from './feature.ts';
 import { artefactFeature, featuresOfFit } from './featuresOfFit.ts';
 import { addProfiles, type Component, type FitSamples, fitGroup, type WidthPrior } from './fitGroup.ts';
+import { fitPasses } from './fitPasses.ts';
 import { groupPeaks } from './groups.ts';
-import { growGroup } from './growGroup.ts';
 import { type LineSpread, sigmaAt, spreadOfLines, widthOfTallPeaks } from './lineSpread.ts';
 import { matchedFilter } from './matchedFilter.ts';
 import { scatterNoise } from './noise.ts';
 import { findPeaks, type Peak } from './peaks.ts';
-import { isPlateau } from './plateau.ts';
 import { regularAxis } from './regularAxis.ts';
 import { findSpikes } from './spikes.ts';
 
@@ -56,41 +55,31 @@ export function measure(spectrum: Spectrum, settings: MeasureSettings, control: 
   control.progress?.('detecting', 0);
   const width: WidthPrior = { sigmaAt: (w) => sigmaAt(spread.resolvingPower, w), spread: spread.spread };
   const spikes = [...state.spikes];
-  const snr = matchedFilter(
-    state.samples.y,
-    state.samples.noise,
-    state.samples.usable,
-    sigmaInSamples(state.samples, spread.resolvingPower),
-    settings.thresholdSigma,
+  const fits = fitPasses(
+    state.samples,
+    {
+      width,
+      threshold: settings.thresholdSigma,
+      absorption: settings.absorption,
+      between: (share) => {
+        control.signal?.throwIfAborted();
+        control.progress?.('fitting', share);
+      },
+    },
+    spikes,
   );
-  const peaks = findPeaks(snr, settings.thresholdSigma, settings.absorption);
-  const windows = groupPeaks(
-    peaks,
-    (i) => (FWHM_PER_SIGMA * sigmaAt(spread.resolvingPower, state.samples.x[i])) / state.samples.sampleWidth[i],
-    state.samples.x.length,
-  );
-
-  const features: Feature[] = [];
-  const groups: Group[] = [];
+  const groups = fits.map((fit): Group => ({ first: fit.first, last: fit.last, chi2: fit.chi2, dof: fit.dof }));
   const model = Float64Array.from(state.continuum);
-  windows.forEach((window, k) => {
-    control.signal?.throwIfAborted();
-    if (k % 16 === 0) control.progress?.('fitting', k / windows.length);
-    const starts = window.peaks.map((peak) => startOf(state.samples, peak, width));
-    const fit = growGroup(state.samples, window.first, window.last, starts, width, settings.thresholdSigma, spikes);
-    if (isPlateau(state.samples, fit, width)) return;
-    groups.push({ first: fit.first, last: fit.last, chi2: fit.chi2, dof: fit.dof });
-    addProfiles(state.samples, fit.components, model, { fit, into: model });
-    features.push(
-      ...featuresOfFit(state.samples, fit, {
-        continuum: state.continuum,
-        group: groups.length - 1,
-        spread,
-        threshold: settings.thresholdSigma,
-        masked: spectrum.masked,
-      }),
-    );
-  });
+  for (const fit of fits) addProfiles(state.samples, fit.components, model, { fit, into: model });
+  const features = fits.flatMap((fit, group): Feature[] =>
+    featuresOfFit(state.samples, fit, {
+      continuum: state.continuum,
+      group,
+      spread,
+      threshold: settings.thresholdSigma,
+      masked: spectrum.masked,
+    }),
+  );
   for (const spike of new Set(spikes)) features.push(artefactFeature(state.samples, spike, state.continuum, groups));
   features.sort((a, b) => a.centroid - b.centroid);
   return {

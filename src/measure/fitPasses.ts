@@ -1,0 +1,99 @@
+import { FWHM_PER_SIGMA } from '../units/index.ts';
+import { addProfiles, type Component, type FitSamples, firstAtLeast, type GroupFit, type WidthPrior } from './fitGroup.ts';
+import { groupPeaks, type Window } from './groups.ts';
+import { growGroup } from './growGroup.ts';
+import { matchedFilter } from './matchedFilter.ts';
+import { findPeaks, type Peak } from './peaks.ts';
+import { withoutPlateaus } from './plateau.ts';
+
+/** What the passes need beside the samples. */
+export interface PassSettings {
+  readonly width: WidthPrior;
+  readonly threshold: number;
+  readonly absorption: boolean;
+  /** Told the share done, and asked to stop by throwing. */
+  readonly between: (share: number) => void;
+}
+
+/** A place to start a component from: a peak of the S/N map, or a component of an earlier pass. */
+interface Seed extends Peak {
+  readonly start: Component;
+}
+
+/** Later passes find what a neighbour's wing hid; one more finds next to nothing. */
+const PASSES = 3;
+/** A residual peak this near to a component, in FWHM, is that component's misfit, not another line. */
+const OWN_FWHM = 0.7;
+
+/**
+ * Finds and fits all components: peaks of the S/N map are grouped and fitted; then what is left is searched once more, and groups that gained a component or a
+ * neighbour are fitted anew.
+ *
+ * @param spikes found on the way are added; their samples are marked unusable
+ */
+export function fitPasses(samples: FitSamples, settings: PassSettings, spikes: number[]): GroupFit[] {
+  const { width, threshold, absorption } = settings;
+  const sigma = samples.x.map((w, i) => width.sigmaAt(w) / samples.sampleWidth[i]);
+  const fwhmAt = (i: number) => FWHM_PER_SIGMA * sigma[i];
+  let fits: GroupFit[] = [];
+  let known = new Map<string, GroupFit>();
+  let residual = samples.y;
+  let seeds: Seed[] = [];
+  for (let pass = 0; pass < PASSES; pass++) {
+    const snr = matchedFilter(residual, samples.noise, samples.usable, sigma, threshold);
+    const found = findPeaks(snr, threshold, absorption).filter((peak) =>
+      seeds.every((s) => Math.abs(s.at - peak.at) > OWN_FWHM * fwhmAt(peak.at)),
+    );
+    if (pass > 0 && found.length === 0) break;
+    seeds = [...seeds, ...found.map((peak) => ({ ...peak, start: startOf(samples, residual, peak, width) }))].sort(
+      (a, b) => a.start.centre - b.start.centre,
+    );
+    const windows = groupPeaks(seeds, fwhmAt, samples.x.length);
+    const next = new Map<string, GroupFit>();
+    fits = windows.map((window, k) => {
+      if (k % 16 === 0) settings.between((pass + k / windows.length) / PASSES);
+      const key = keyOf(window);
+      const fit = known.get(key) ?? growGroup(samples, window.first, window.last, startsOf(window), width, threshold, spikes);
+      next.set(key, fit);
+      return fit;
+    });
+    // what was fitted under a key may have gained components: the next pass knows it by them
+    seeds = fits.flatMap((fit) => fit.components.map((c) => seedOf(samples, c)));
+    known = new Map(
+      groupPeaks(seeds, fwhmAt, samples.x.length).flatMap((window): [string, GroupFit][] => {
+        const fit = fits.find((f) => f.first === window.first && f.last === window.last && f.components.length === window.peaks.length);
+        return fit ? [[keyOf(window), fit]] : [];
+      }),
+    );
+    residual = residualOf(samples, fits);
+  }
+  return fits.map((fit) => withoutPlateaus(samples, fit, width)).filter((fit) => fit.components.length > 0);
+}
+
+const startsOf = (window: Window<Seed>) => window.peaks.map((peak) => peak.start);
+
+/** A window with its starts, told from every other. */
+const keyOf = (window: Window<Seed>) =>
+  `${window.first} ${window.last} ${startsOf(window)
+    .map((s) => `${s.centre} ${s.flux} ${s.sigma}`)
+    .join(' ')}`;
+
+const seedOf = (samples: FitSamples, component: Component): Seed => ({
+  at: Math.min(samples.x.length - 1, firstAtLeast(samples.x, component.centre)),
+  snr: Math.sign(component.flux) || 1,
+  start: component,
+});
+
+function startOf(samples: FitSamples, residual: Float64Array, peak: Peak, width: WidthPrior): Component {
+  const centre = samples.x[peak.at];
+  const sigma = width.sigmaAt(centre);
+  const height = residual[peak.at];
+  const sure = samples.usable[peak.at] && Math.sign(height) === Math.sign(peak.snr) ? height : Math.sign(peak.snr) * samples.noise[peak.at];
+  return { flux: sure * sigma * Math.sqrt(2 * Math.PI), centre, sigma };
+}
+
+function residualOf(samples: FitSamples, fits: readonly GroupFit[]): Float64Array {
+  const model = new Float64Array(samples.x.length);
+  for (const fit of fits) addProfiles(samples, fit.components, model, { fit, into: model });
+  return samples.y.map((y, i) => y - model[i]);
+}
