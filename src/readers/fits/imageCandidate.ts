@@ -4,6 +4,7 @@ import { columnsToSpectrum } from '../columnsToSpectrum.ts';
 import { count, noteFact } from '../notes.ts';
 import type { Reading, ReadingChoices } from '../reading.ts';
 import { spectralUnit } from '../spectralUnits.ts';
+import { type AxisCards, findAxis, isVelocityAxis } from './axisCards.ts';
 import type { FitsFile, Judged } from './candidate.ts';
 import { companions, imageRole } from './companions.ts';
 import { type Hdu, nameHdu } from './hdus.ts';
@@ -14,7 +15,7 @@ import { FRAME_LINES, readImageLine } from './imageSpectrum.ts';
 import { readOrders } from './orders.ts';
 import { requireChoice } from './requireChoice.ts';
 import { namesOfRows } from './rowNames.ts';
-import { type AxisCards, axisWavelengths, findAxis, isVelocityAxis } from './spectralAxis.ts';
+import { axisWavelengths } from './spectralAxis.ts';
 import { watAttributes } from './wat.ts';
 
 /** Judges an image: a spectrum, a stack of spectra, bands or orders, or columns of a table. */

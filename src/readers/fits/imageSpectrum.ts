@@ -6,6 +6,7 @@ import { mergeReadings } from '../mergeReadings.ts';
 import { noteFact, warn } from '../notes.ts';
 import type { Reading, ReadingChoices, ReadingControl } from '../reading.ts';
 import { toAngstrom } from '../spectralUnits.ts';
+import type { AxisCards } from './axisCards.ts';
 import { type Bands, bandErrors, bandsOf } from './bands.ts';
 import type { FitsFile } from './candidate.ts';
 import { type Companions, companionErrors, companionMask } from './companions.ts';
@@ -14,7 +15,7 @@ import { textOf } from './header.ts';
 import { headerFacts } from './headerFacts.ts';
 import { imageLine } from './imageLine.ts';
 import { requireChoice } from './requireChoice.ts';
-import { type AxisCards, axisWavelengths } from './spectralAxis.ts';
+import { axisWavelengths } from './spectralAxis.ts';
 
 /** Images with more lines than this are two-dimensional frames rather than stacks of spectra. */
 export const FRAME_LINES = 64;
