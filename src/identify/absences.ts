@@ -1,6 +1,6 @@
 import { type AtomicData, linesBetween } from '../atomic/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
-import type { Absence } from './ionScales.ts';
+import type { Absence, IonScale } from './ionScales.ts';
 import { factsOf } from './lineFacts.ts';
 import { predictedLog, type SystemModel } from './model.ts';
 import type { Mark, NamingSettings } from './naming.ts';
@@ -52,6 +52,46 @@ export function absencesOf(
       return room < FAR_BELOW_DEX ? [{ line, room, err: facts.errDex[line] }] : [];
     }),
   );
+}
+
+/** Ions of this many sightings are sure enough to tell what a list leaves out. */
+const SURE_SIGHTINGS = 2.5;
+/** Lines predicted this far above the limit, in their own errors, should be there. */
+const CLEAR_SIGMAS = 1.5;
+/** The share is taken as this before anything is counted, as if it had been seen on so many lines. */
+const USUAL_LEFT_OUT = 0.05;
+const USUAL_WEIGHT = 20;
+
+/**
+ * Share of the lines that well-seen ions should show above the limit and that are not among the marks: an observer's selection, gaps, a limit that varies.
+ */
+export function leftOutShare(
+  marks: readonly Mark[],
+  data: AtomicData,
+  strongest: readonly (readonly number[])[],
+  survey: Survey,
+  model: SystemModel,
+  scales: readonly IonScale[],
+  settings: NamingSettings,
+): number {
+  const facts = factsOf(data);
+  const places = marks
+    .filter((m) => !m.artefact)
+    .map((m) => m.wavelength)
+    .sort((a, b) => a - b);
+  let missing = 0;
+  let expected = 0;
+  strongest.forEach((list, ion) => {
+    if (facts.localIon[ion] === 1 || !(scales[ion].seen > SURE_SIGHTINGS)) return;
+    for (const line of list) {
+      const at = data.lines.wavelengthVac[line] * (1 + model.z);
+      const above = predictedLog(facts, line, model) + scales[ion].mean - survey.logLimitAt(at);
+      if (above < CLEAR_SIGMAS * Math.hypot(facts.errDex[line], Math.sqrt(scales[ion].variance))) continue;
+      expected++;
+      if (!hasWithin(places, at, (settings.toleranceKms / SPEED_OF_LIGHT_KMS) * at)) missing++;
+    }
+  });
+  return (missing + USUAL_LEFT_OUT * USUAL_WEIGHT) / (expected + USUAL_WEIGHT);
 }
 
 function hasWithin(sorted: readonly number[], at: number, reach: number): boolean {

@@ -104,7 +104,8 @@ export function findCompanions(
       if (above <= 0) return say('too-faint', 0);
       const near = nearestWithin(marks, expectedAt, mergedWithin(mark));
       if (near !== undefined && Math.log10(marks[near].flux) > logPredicted - err) return say('hidden', 0, near);
-      return say('absent', -Math.min(MOST_AGAINST, 0.5 * (above / Math.hypot(err, 0.1)) ** 2));
+      const gone = Math.exp(-0.5 * (above / Math.hypot(err, 0.1)) ** 2);
+      return say('absent', Math.max(-MOST_AGAINST, Math.log(model.leftOut + (1 - model.leftOut) * gone)));
     }
     const off = Math.log10(marks[there].flux) - logPredicted;
     const fluxErr = Number.isFinite(marks[there].fluxErr) ? (Math.LOG10E * marks[there].fluxErr) / marks[there].flux : 0.05;

@@ -1,6 +1,6 @@
 import type { AtomicData } from '../atomic/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
-import { absencesOf, strongestLines } from './absences.ts';
+import { absencesOf, leftOutShare, strongestLines } from './absences.ts';
 import { claimsOf } from './claims.ts';
 import { type Drift, type DriftPoint, fitDrift, startPoints, withoutDrift } from './drift.ts';
 import { fitScale, type IonScale, priorMeans } from './ionScales.ts';
@@ -62,7 +62,8 @@ export function infer(
     const sightings = sightingsOf(weighings, placed, data, model);
     const means = priorMeans(data, settings.kind, scales, facts.localIon);
     const absences = absencesOf(placed, data, strongest, survey, model, settings);
-    scales = Array.from(means, (mean, ion) => fitScale(mean, sightings.byIon.get(ion) ?? [], absences[ion]));
+    scales = Array.from(means, (mean, ion) => fitScale(mean, sightings.byIon.get(ion) ?? [], absences[ion], model.leftOut));
+    model = { ...model, leftOut: leftOutShare(placed, data, strongest, survey, model, scales, settings) };
     const shared = { data, facts, settings, survey, model, sightings, absences, means, scales, claims: claimsOf(weighings) };
     const next = placed.map((mark, j) => weigh(mark, j, { ...shared, rule: rules[j] }));
     const moved = round + 1 < LEAST_ROUNDS ? 1 : largestMove(weighings, next);

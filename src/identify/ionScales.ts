@@ -36,9 +36,7 @@ const PRIOR_SPREAD_DEX = 0.9;
 const KERNEL_WIDTH = 0.35;
 const KERNEL_PRIOR_WEIGHT = 1.5;
 const CENSOR_ROUNDS = 12;
-/** Chance that a line above the limit is not among the marks all the same. */
-const LEFT_OUT = 0.08;
-/** ... and that chance falls by ten for every so many dex that the line should stand above the limit. */
+/** The chance that a line above the limit is left out falls by ten for every so many dex that the line should stand above the limit. */
 const LEFT_OUT_DEX = 0.7;
 
 /** Prior mean of every ion: the kind of object, and what ions of about the same creation energy show. */
@@ -63,9 +61,16 @@ export function priorMeans(data: AtomicData, kind: ObjectKind, scales: readonly 
 /**
  * Posterior of one ion's scale from sightings and absences: normal, with the censored absences worked in by expectation-maximisation (Dempster, Laird & Rubin 1977).
  *
+ * @param leftOutShare chance that a line just above the limit is not among the marks all the same
  * @param without leaves the sightings of this mark out: what the rest of the spectrum says
  */
-export function fitScale(priorMean: number, sightings: readonly Sighting[], absences: readonly Absence[], without = -1): IonScale {
+export function fitScale(
+  priorMean: number,
+  sightings: readonly Sighting[],
+  absences: readonly Absence[],
+  leftOutShare: number,
+  without = -1,
+): IonScale {
   let precision = 1 / PRIOR_SPREAD_DEX ** 2;
   let moment = priorMean * precision;
   let seen = 0;
@@ -87,7 +92,7 @@ export function fitScale(priorMean: number, sightings: readonly Sighting[], abse
       if (alpha > 3) continue;
       // an observer's list leaves lines out for other reasons too: that floor keeps one absence from ruling the scale
       const density = Math.exp(-0.5 * alpha * alpha) / Math.sqrt(2 * Math.PI);
-      const leftOut = round < CENSOR_ROUNDS / 2 ? 1e-9 : LEFT_OUT * 10 ** (Math.min(0, a.room - mean) / LEFT_OUT_DEX);
+      const leftOut = round < CENSOR_ROUNDS / 2 ? 1e-9 : leftOutShare * 10 ** (Math.min(0, a.room - mean) / LEFT_OUT_DEX);
       const hazard = ((1 - leftOut) * density) / (leftOut + (1 - leftOut) * normalTail(-alpha));
       // expectation of the unseen flux below its limit; its information falls as the limit moves away
       const expected = mean - a.err * hazard;

@@ -10,6 +10,8 @@ export interface SystemModel {
   readonly logZero: number;
   /** Rough reddening, c(Hbeta). */
   readonly cHbeta: number;
+  /** Chance that a line above the limit is not among the marks all the same. */
+  readonly leftOut: number;
 }
 
 /** log10 flux predicted for a line at ion scale 0, in the marks' unit. */

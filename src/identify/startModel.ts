@@ -5,6 +5,8 @@ import type { SystemModel } from './model.ts';
 import type { Mark } from './naming.ts';
 import { isLocal } from './options.ts';
 
+const START_LEFT_OUT = 0.05;
+
 /** The model before any name is weighed. */
 export const startModel = (marks: readonly Mark[], data: AtomicData, z: number, zErr: number): SystemModel => ({
   z,
@@ -12,6 +14,7 @@ export const startModel = (marks: readonly Mark[], data: AtomicData, z: number, 
   dispersionKms: startDispersion(marks),
   logZero: startZero(marks, data, z),
   cHbeta: 0,
+  leftOut: START_LEFT_OUT,
 });
 
 /** A first guess of the dispersion: marks with tiny formal errors still scatter by the wavelength calibration. */

@@ -24,7 +24,7 @@ export function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
     if (known) return known;
     const { byIon, ionsOfMark } = context.sightings;
     const scale = ionsOfMark[j].has(ion)
-      ? fitScale(context.means[ion], byIon.get(ion) ?? [], context.absences[ion], j)
+      ? fitScale(context.means[ion], byIon.get(ion) ?? [], context.absences[ion], model.leftOut, j)
       : context.scales[ion];
     cache.set(ion, scale);
     return scale;
