@@ -44,7 +44,44 @@ export function growGroup(
     if (totalChi2(fit) - totalChi2(trial) < price || !holds(trial, width)) break;
     fit = trial;
   }
-  return fit.components.length > starts.length ? pruned(samples, fit, width, price) : fit;
+  const grown = fit.components.length > starts.length ? pruned(samples, fit, width, price) : fit;
+  return withoutHiddenSpike(samples, grown, width, price, spikes);
+}
+
+/** Lines of fewer samples than this a FWHM can hide a spike among their own ... */
+const HIDING_FWHM_SAMPLES = 4;
+/** ... which shows as a component this much narrower than the instrument. */
+const SUSPICIOUS_WIDTH = 0.85;
+
+/**
+ * A spike in the middle of an under-sampled line makes a component narrower than the instrument, often with a second one beside it. The samples of such a
+ * component are taken out one by one: when a simpler fit without one of them is better by far, that one was a spike.
+ */
+function withoutHiddenSpike(samples: FitSamples, fit: GroupFit, width: WidthPrior, price: number, spikes: number[]): GroupFit {
+  const middle = (fit.first + fit.last) >> 1;
+  if (FWHM_PER_SIGMA * width.sigmaAt(samples.x[middle]) > HIDING_FWHM_SAMPLES * samples.sampleWidth[middle]) return fit;
+  const narrow = fit.components.find((c) => c.sigma < SUSPICIOUS_WIDTH * width.sigmaAt(c.centre) && c.flux !== 0);
+  if (!narrow) return fit;
+  const reach = FWHM_PER_SIGMA * width.sigmaAt(narrow.centre);
+  const others = fit.components.filter((c) => Math.abs(c.centre - narrow.centre) > 2 * reach);
+  const usual = { ...narrow, sigma: width.sigmaAt(narrow.centre) };
+  const cost = (f: GroupFit) => totalChi2(f) + price * f.components.length;
+  let best: { at: number; fit: GroupFit } | undefined;
+  for (let at = fit.first + 1; at < fit.last; at++) {
+    if (!samples.usable[at] || Math.abs(samples.x[at] - narrow.centre) > reach || Math.abs(samples.y[at]) < SPIKE_SIGMA * samples.noise[at])
+      continue;
+    samples.usable[at] = 0;
+    for (const starts of [others, [...others, usual]]) {
+      if (starts.length === 0) continue;
+      const trial = fitGroup(samples, fit.first, fit.last, starts, width);
+      if (!best || cost(trial) < cost(best.fit)) best = { at, fit: trial };
+    }
+    samples.usable[at] = 1;
+  }
+  if (!best || cost(best.fit) + SPIKE_SIGMA ** 2 > cost(fit)) return fit;
+  samples.usable[best.at] = 0;
+  spikes.push(best.at);
+  return best.fit;
 }
 
 /** Takes out, faintest first, what the fit can do without: a component added early may only have stood in for one found later. */
