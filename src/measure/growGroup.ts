@@ -48,6 +48,9 @@ export function growGroup(
   return withoutHiddenSpike(samples, grown, width, price, spikes);
 }
 
+/** A component is not tried without when the square of its S/N is this many times its price. */
+const SURE_TIMES = 6;
+
 /** Lines of fewer samples than this a FWHM can hide a spike among their own ... */
 const HIDING_FWHM_SAMPLES = 4;
 /** ... which shows as a component this much narrower than the instrument. */
@@ -87,7 +90,15 @@ function withoutHiddenSpike(samples: FitSamples, fit: GroupFit, width: WidthPrio
 /** Takes out, faintest first, what the fit can do without: a component added early may only have stood in for one found later. */
 function pruned(samples: FitSamples, fit: GroupFit, width: WidthPrior, price: number): GroupFit {
   let kept = fit;
-  const faintestFirst = [...fit.components].sort((a, b) => Math.abs(a.flux) - Math.abs(b.flux)).map((c) => c.centre);
+  const size = fit.parameters.length;
+  const { end } = fit;
+  // a component many times its error strong is not in question
+  const sure = (k: number) =>
+    end.ended === 'converged' && fit.components[k].flux ** 2 > SURE_TIMES * price * end.covariance[3 * k * size + 3 * k];
+  const faintestFirst = fit.components
+    .filter((_, k) => !sure(k))
+    .sort((a, b) => Math.abs(a.flux) - Math.abs(b.flux))
+    .map((c) => c.centre);
   for (const centre of faintestFirst) {
     const rest = kept.components.filter((c) => Math.abs(c.centre - centre) > 1e-3 * width.sigmaAt(centre));
     if (rest.length === kept.components.length || rest.length === 0) continue;
