@@ -3,10 +3,11 @@ import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import { absencesOf, leftOutShare, strongestLines } from './absences.ts';
 import { claimsOf } from './claims.ts';
 import { type Drift, type DriftPoint, fitDrift, startPoints, withoutDrift } from './drift.ts';
+import { estimateKind } from './estimateKind.ts';
 import { fitScale, type IonScale, priorMeans } from './ionScales.ts';
 import { factsOf } from './lineFacts.ts';
 import type { SystemModel } from './model.ts';
-import type { FixedName, Mark, NamingSettings } from './naming.ts';
+import type { FixedName, Mark, NamingSettings, ObjectKind } from './naming.ts';
 import { rulesOf } from './rules.ts';
 import { sightingsOf } from './sightings.ts';
 import { startModel } from './startModel.ts';
@@ -22,6 +23,8 @@ export interface Inferred {
   /** The marks with the drift of the wavelength calibration taken off. */
   readonly placed: readonly Mark[];
   readonly drift: Drift;
+  /** As set, or as estimated from the ion scales. */
+  readonly kind: ObjectKind;
 }
 
 const MOST_ROUNDS = 7;
@@ -52,6 +55,7 @@ export function infer(
   let placed = withoutDrift(marks, drift);
   let model = startModel(placed, data, z0, zErr0);
   let scales: IonScale[] = [];
+  let kind = settings.kind;
   let weighings: Weighing[] = [];
   for (let round = 0; round < MOST_ROUNDS; round++) {
     if (round > 0) {
@@ -60,7 +64,8 @@ export function infer(
       placed = withoutDrift(marks, drift);
     }
     const sightings = sightingsOf(weighings, placed, data, model);
-    const means = priorMeans(data, settings.kind, scales, facts.localIon);
+    if (round > 1 && settings.kind === 'unknown') kind = estimateKind(data, scales).kind;
+    const means = priorMeans(data, kind, scales, facts.localIon);
     const absences = absencesOf(placed, data, strongest, survey, model, settings);
     scales = Array.from(means, (mean, ion) => fitScale(mean, sightings.byIon.get(ion) ?? [], absences[ion], model.leftOut));
     model = { ...model, leftOut: leftOutShare(placed, data, strongest, survey, model, scales, settings) };
@@ -70,7 +75,7 @@ export function infer(
     weighings = next;
     if (moved < SETTLED) break;
   }
-  return { model, weighings, scales, placed, drift };
+  return { model, weighings, scales, placed, drift, kind };
 }
 
 /** Raw velocities of the likely names against the systemic one. */

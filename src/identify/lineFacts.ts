@@ -13,6 +13,8 @@ export interface LineFacts {
   readonly errDex: Float64Array;
   /** log10 of the dimming relative to H beta for c(Hbeta) = 1, sign as in `roughDimming`. */
   readonly dimming: Float64Array;
+  /** How hard the ion is to make, ln((eV + 8) / 25), one value an ion: what a trend of velocity is taken against. */
+  readonly hardness: Float64Array;
   /** 1 for ions whose lines are local, one value an ion. */
   readonly localIon: Uint8Array;
 }
@@ -24,6 +26,9 @@ const UNKNOWN_ERR_DEX = 1.3;
 const MODEL_SCATTER_DEX = 0.12;
 /** Collisionally excited lines move further with temperature and density. */
 const COLLISIONAL_SCATTER_DEX = 0.2;
+
+const SOFTEST_EV = 8;
+const MIDDLE_EV = 25;
 
 const known = new WeakMap<AtomicData, LineFacts>();
 
@@ -38,6 +43,7 @@ export function factsOf(data: AtomicData): LineFacts {
     logStrength: new Float64Array(lines.count),
     errDex: new Float64Array(lines.count),
     dimming: new Float64Array(lines.count),
+    hardness: Float64Array.from(lines.ions, (ion) => Math.log((ion.creationEv + SOFTEST_EV) / MIDDLE_EV)),
     localIon: new Uint8Array(lines.ions.length),
   };
   for (let line = 0; line < lines.count; line++) {

@@ -6,6 +6,8 @@ export interface SystemModel {
   readonly zErr: number;
   /** Extra scatter of centroids, km/s. */
   readonly dispersionKms: number;
+  /** Trend of velocity with the ion's hardness (see `LineFacts`), km/s per e-fold of energy. */
+  readonly trendKms: number;
   /** log10 of the marks' flux unit against H beta = 100. */
   readonly logZero: number;
   /** Rough reddening, c(Hbeta). */

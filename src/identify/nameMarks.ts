@@ -6,7 +6,7 @@ import { shownDrift } from './drift.ts';
 import { infer } from './inference.ts';
 import { factsOf } from './lineFacts.ts';
 import { predictedLog } from './model.ts';
-import type { FixedName, Mark, Naming, NamingSettings } from './naming.ts';
+import type { FixedName, Mark, Naming, NamingSettings, ObjectKind } from './naming.ts';
 import { findRedshift } from './redshift.ts';
 import { surveyOf } from './survey.ts';
 
@@ -60,6 +60,7 @@ export function nameMarks(
     caseOf(inferred.placed[k], k, inferred.placed, inferred, kin, data, survey, settings, forced.has(k), sorted[k].wavelength),
   );
   const { model, scales } = inferred;
+  if (inferred.kind !== settings.kind) remarks.push(kindRemark(inferred.kind));
   const drift = shownDrift(inferred.drift, LEAST_DRIFT_KMS);
   if (drift) remarks.push(driftRemark(drift));
   const refined = redshifts.map((h, k) => (k === 0 ? { ...h, z: model.z, zErr: model.zErr } : h));
@@ -69,7 +70,8 @@ export function nameMarks(
     z: model.z,
     zErr: model.zErr,
     dispersionKms: model.dispersionKms,
-    kind: settings.kind,
+    kind: inferred.kind,
+    ...(model.trendKms === 0 ? {} : { trendKms: model.trendKms }),
     ...(drift ? { drift } : {}),
     remarks,
     missing: missingLines(
@@ -83,6 +85,14 @@ export function nameMarks(
     ),
   };
 }
+
+const kindRemark = (kind: ObjectKind): Remark => ({
+  code: 'kind-estimated',
+  weight: 'note',
+  where: {},
+  found: `the strengths of the recognised ions are those of this kind of object: ${kind.replaceAll('-', ' ')}; it was taken as what to expect of the others`,
+  doThis: 'Set the kind of object if this is wrong.',
+});
 
 /** A smaller drift is not worth a word, km/s. */
 const LEAST_DRIFT_KMS = 5;

@@ -1,6 +1,7 @@
 import { type AtomicData, linesBetween } from '../atomic/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import { factsOf } from './lineFacts.ts';
+import type { SystemModel } from './model.ts';
 import type { Mark, NamingSettings } from './naming.ts';
 
 /** One transition that a mark may be, before it is weighed. */
@@ -23,13 +24,12 @@ const LINE_SIGMAS = 3;
 /**
  * All lines within the tolerance of a mark: `toleranceKms`, or `toleranceSigma` times the mark's error, or three errors of the line's own wavelength.
  *
- * @param z             systemic redshift
- * @param dispersionKms extra scatter of centroids
+ * @param model systemic velocity, its trend with the ion, and the extra scatter of centroids
  */
-export function optionsOf(mark: Mark, data: AtomicData, settings: NamingSettings, z: number, dispersionKms: number): Option[] {
+export function optionsOf(mark: Mark, data: AtomicData, settings: NamingSettings, { z, dispersionKms, trendKms }: SystemModel): Option[] {
   if (mark.artefact) return [];
   const { lines } = data;
-  const { local, absorbs } = factsOf(data);
+  const { local, absorbs, hardness } = factsOf(data);
   const absorbing = mark.flux < 0 ? 1 : 0;
   const reach = Math.max((settings.toleranceKms / SPEED_OF_LIGHT_KMS) * mark.wavelength, settings.toleranceSigma * mark.wavelengthErr);
   const widest = reach + 2;
@@ -38,7 +38,8 @@ export function optionsOf(mark: Mark, data: AtomicData, settings: NamingSettings
     const [first, end] = linesBetween(lines, (mark.wavelength - widest) / shift, (mark.wavelength + widest) / shift);
     for (let line = first; line < end; line++) {
       if (local[line] !== inPlace || absorbs[line] !== absorbing) continue;
-      const off = mark.wavelength - lines.wavelengthVac[line] * shift;
+      const trend = inPlace === 1 ? 0 : (trendKms * hardness[lines.ion[line]]) / SPEED_OF_LIGHT_KMS;
+      const off = mark.wavelength - lines.wavelengthVac[line] * shift * (1 + trend);
       const lineErr = lines.wavelengthErr[line] * shift;
       if (Math.abs(off) > Math.max(reach, LINE_SIGMAS * Math.hypot(lineErr, mark.wavelengthErr))) continue;
       const spreadKms = absorbing === 1 && lines.nature(line) === 'interstellar' ? CLOUD_KMS : dispersionKms;

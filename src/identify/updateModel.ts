@@ -1,6 +1,7 @@
 import type { AtomicData } from '../atomic/index.ts';
 import { median } from '../numeric/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
+import { factsOf } from './lineFacts.ts';
 import type { SystemModel } from './model.ts';
 import type { Mark } from './naming.ts';
 import { isLocal } from './options.ts';
@@ -36,7 +37,42 @@ export function updateModel(
   const dispersionKms = Math.min(60, Math.max(1.5, Math.sqrt(Math.max(0, scatter ** 2 - typicalErr ** 2)), 0.3 * Math.sqrt(median(pulls))));
   const z = zFixed ? model.z : (1 + model.z) * (1 + shift / SPEED_OF_LIGHT_KMS) - 1;
   const zErr = zFixed ? 0 : (Math.hypot(scatter, 0.3) / SPEED_OF_LIGHT_KMS / Math.sqrt(sure.length)) * 1.25;
-  return { ...model, z, zErr, dispersionKms, ...fluxFrame(model, sure, data) };
+  const hardness = sure.map(({ best }) => factsOf(data).hardness[data.lines.ion[best.lines[0]]]);
+  const trendKms = trendOf(
+    hardness,
+    kms.map(({ v }) => v - shift),
+    weights,
+    model.trendKms,
+  );
+  return { ...model, z, zErr, dispersionKms, trendKms, ...fluxFrame(model, sure, data) };
+}
+
+/** Residuals beyond this many of their errors are left out of the trend. */
+const CLIP_SIGMAS = 3;
+/** A trend below this many of its own errors is none. */
+const SIGNIFICANT = 2.5;
+
+/** Slope of velocity against the ion's hardness, weighted least squares, on top of the one already taken off; 0 when it is not significant. */
+function trendOf(hardness: readonly number[], residuals: readonly number[], weights: readonly number[], before: number): number {
+  let sw = 0;
+  let swx = 0;
+  let swxx = 0;
+  let swxy = 0;
+  let swy = 0;
+  hardness.forEach((x, i) => {
+    const y = residuals[i] + before * x;
+    const w = weights[i];
+    if (residuals[i] ** 2 * w > CLIP_SIGMAS ** 2) return;
+    sw += w;
+    swx += w * x;
+    swxx += w * x * x;
+    swy += w * y;
+    swxy += w * x * y;
+  });
+  const spread = swxx - (swx * swx) / sw;
+  if (!(spread > 0)) return 0;
+  const slope = (swxy - (swx * swy) / sw) / spread;
+  return slope === 0 ? 0 : slope * Math.max(0, 1 - (SIGNIFICANT ** 2 * (1 / spread)) / (slope * slope));
 }
 
 /** The names that the model learns from: likely, and of the object. */

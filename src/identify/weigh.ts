@@ -29,7 +29,7 @@ export function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
     cache.set(ion, scale);
     return scale;
   };
-  const singles = likelyOnes(mark, optionsOf(mark, data, settings, model.z, model.dispersionKms), context, scaleWithout).map((single) => ({
+  const singles = likelyOnes(mark, optionsOf(mark, data, settings, model), context, scaleWithout).map((single) => ({
     ...single,
     owed: owedBy(mark, j, single, context),
   }));

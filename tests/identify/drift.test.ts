@@ -33,9 +33,23 @@ describe('a wavelength calibration that errs', () => {
     for (const seed of [23, 24, 25]) {
       const { naming } = wrongIons(nebula({ seed, scatter: 0.2 }));
       expect(naming.drift).toBeUndefined();
-      expect(naming.remarks).toEqual([]);
+      expect(naming.remarks.map((r) => r.code)).not.toContain('calibration-drift');
     }
   });
+});
+
+test('a trend of velocity with ionisation is found, and none where there is none', () => {
+  const trendOf = (slope: number) => {
+    const marks = nebula({ seed: 27, scatter: 0.03 }).map((m) => {
+      const ion = data.lines.ions.find((i) => i.name === m.ion.replace(/[[\]]/g, ''));
+      const kms = slope * Math.log(((ion?.creationEv ?? 0) + 8) / 25);
+      return { ...m, wavelength: m.wavelength * (1 + kms / C) };
+    });
+    return nameMarks(marks, data, DEFAULT_NAMING_SETTINGS, []).trendKms ?? 0;
+  };
+  expect(trendOf(-8)).toBeLessThan(-5);
+  expect(trendOf(-8)).toBeGreaterThan(-10);
+  expect(trendOf(0)).toBe(0);
 });
 
 test('a feature four times as wide as the others is less likely a line', () => {
