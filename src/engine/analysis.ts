@@ -1,7 +1,7 @@
 import type { Evidence, NamingSettings, RedshiftHypothesis } from '../identify/index.ts';
 import type { Feature, Group, MeasureSettings } from '../measure/index.ts';
 import type { Remark } from '../problems/index.ts';
-import type { Offer, ReadingChoices } from '../readers/index.ts';
+import type { Offer, Reading, ReadingChoices } from '../readers/index.ts';
 import type { LineTable } from '../report/index.ts';
 import type { LineKey, Verdict } from '../session/index.ts';
 import type { Medium } from '../spectrum/index.ts';
@@ -17,6 +17,8 @@ export interface ReadingView {
   readonly maskedSamples: number;
   readonly how: readonly { readonly fact: string; readonly value: string; readonly reason: string }[];
   readonly offers: readonly Offer[];
+  /** Columns to choose from; absent when the file has none. */
+  readonly columns?: Reading['columns'];
   readonly choices: ReadingChoices;
   readonly remarks: readonly Remark[];
 }

@@ -50,6 +50,7 @@ export async function readMaterial(
       maskedSamples: spectrum.wavelength.length - countUsable(spectrum),
       how: reading.how,
       offers: reading.offers,
+      ...(reading.columns ? { columns: reading.columns } : {}),
       choices: reading.choices,
       remarks: reading.remarks,
     },

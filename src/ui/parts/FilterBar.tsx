@@ -5,6 +5,7 @@ import { setDesk, useDesk } from '../desk/deskStore.ts';
 import { FILTER_ID } from '../desk/focus.ts';
 import type { RowFilter } from '../table/rowFilter.ts';
 import { words } from '../words.ts';
+import { ColumnsMenu } from './ColumnsMenu.tsx';
 
 const { table: label } = words;
 /** Names at least this probable may be accepted in one go. */
@@ -56,6 +57,7 @@ export function FilterBar({ shown, all }: { shown: readonly DeskRow[]; all: numb
           {label.acceptShown(sure.length)}
         </button>
       )}
+      <ColumnsMenu />
       <span className="number muted">{label.count(shown.length, all)}</span>
     </div>
   );

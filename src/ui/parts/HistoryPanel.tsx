@@ -1,3 +1,4 @@
+import { goTo } from '../desk/decisions.ts';
 import { useDesk } from '../desk/deskStore.ts';
 import { fixed } from '../figures.ts';
 import { words } from '../words.ts';
@@ -20,6 +21,16 @@ export function HistoryPanel() {
         {entries.map(({ number, sentence, isUndone }) => (
           <li key={number} className={isUndone ? 'undone' : undefined}>
             <span className="number">{number}</span> {sentence} {isUndone && <span>({words.history.undone})</span>}
+            {number !== past.length && (
+              <button
+                type="button"
+                className="small go-back"
+                aria-label={`${words.history.goBack}: ${sentence}`}
+                onClick={() => goTo(number)}
+              >
+                {words.history.goBack}
+              </button>
+            )}
           </li>
         ))}
       </ol>

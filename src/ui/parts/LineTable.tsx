@@ -3,7 +3,7 @@ import { useEffect, useMemo, useRef } from 'react';
 import { choose, useChosenRow } from '../desk/chosen.ts';
 import { type DeskRow, thinGasOf } from '../desk/deskRows.ts';
 import { setDesk, useDesk } from '../desk/deskStore.ts';
-import { TABLE_COLUMNS, type TableColumn } from '../table/columns.ts';
+import { shownColumns, type TableColumn } from '../table/columns.ts';
 import { sortedBy } from '../table/sortRows.ts';
 import { tableRows } from '../table/tableRows.ts';
 import { words } from '../words.ts';
@@ -15,16 +15,21 @@ const ROW_PX = 26;
 const VERDICT_PX = 56;
 const GROWING: Record<string, string> = { name: '320px', note: '1fr' };
 const trackOf = ({ key, width }: TableColumn) => (GROWING[key] ? `minmax(${width}px, ${GROWING[key]})` : `${width}px`);
-const GRID = { gridTemplateColumns: [...TABLE_COLUMNS.map(trackOf), `${VERDICT_PX}px`].join(' ') };
-const LEAST_WIDTH = TABLE_COLUMNS.reduce((sum, { width }) => sum + width, VERDICT_PX);
+const gridOf = (columns: readonly TableColumn[]) => ({
+  gridTemplateColumns: [...columns.map(trackOf), `${VERDICT_PX}px`].join(' '),
+});
+const leastWidth = (columns: readonly TableColumn[]) => columns.reduce((sum, { width }) => sum + width, VERDICT_PX);
 
 /** Every feature as a row: sorted, filtered, only what is in sight drawn. */
 export function LineTable() {
   const rows = useDesk((state) => state.rows);
   const filter = useDesk((state) => state.filter);
   const sorting = useDesk((state) => state.sorting);
+  const hidden = useDesk((state) => state.hiddenColumns);
   const chosen = useChosenRow()?.index;
   const shown = useMemo(() => tableRows(rows, filter, sorting), [rows, filter, sorting]);
+  const columns = useMemo(() => shownColumns(hidden), [hidden]);
+  const grid = useMemo(() => gridOf(columns), [columns]);
   const scroller = useRef<HTMLDivElement>(null);
   const virtual = useVirtualizer({
     count: shown.length,
@@ -43,10 +48,10 @@ export function LineTable() {
     <section className="table" aria-label={words.table.label}>
       <FilterBar shown={shown} all={rows.length} />
       <div ref={scroller} className="table-scroll">
-        <table className="lines" style={{ minWidth: LEAST_WIDTH }} aria-label={words.table.label} aria-rowcount={shown.length + 1}>
+        <table className="lines" style={{ minWidth: leastWidth(columns) }} aria-label={words.table.label} aria-rowcount={shown.length + 1}>
           <thead>
-            <tr style={GRID} aria-rowindex={1}>
-              {TABLE_COLUMNS.map((column) => (
+            <tr style={grid} aria-rowindex={1}>
+              {columns.map((column) => (
                 <Head key={column.key} column={column} />
               ))}
               <td />
@@ -57,6 +62,8 @@ export function LineTable() {
               <Row
                 key={shown[item.index].index}
                 row={shown[item.index]}
+                columns={columns}
+                grid={grid}
                 place={item.index}
                 start={item.start - ROW_PX}
                 isChosen={item.index === place}
@@ -92,6 +99,8 @@ function Head({ column }: { column: TableColumn }) {
 
 interface RowProps {
   readonly row: DeskRow;
+  readonly columns: readonly TableColumn[];
+  readonly grid: { readonly gridTemplateColumns: string };
   /** Among the rows shown. */
   readonly place: number;
   /** Pixels below the head. */
@@ -99,19 +108,19 @@ interface RowProps {
   readonly isChosen: boolean;
 }
 
-function Row({ row, place, start, isChosen }: RowProps) {
+function Row({ row, columns, grid, place, start, isChosen }: RowProps) {
   return (
     // the keys of the desk walk the rows: a click is the mouse's way to the same thing
     <tr
       id={rowId(row)}
       className={`body-row standing-${row.standing}`}
-      style={{ ...GRID, height: ROW_PX, transform: `translateY(${start}px)` }}
+      style={{ ...grid, height: ROW_PX, transform: `translateY(${start}px)` }}
       aria-rowindex={place + 2}
       aria-current={isChosen || undefined}
       onClick={() => choose(row.index)}
       onKeyDown={(event) => event.key === ' ' && choose(row.index)}
     >
-      {TABLE_COLUMNS.map((column) => (
+      {columns.map((column) => (
         <td
           key={column.key}
           className={column.numeric ? 'cell right number' : 'cell'}

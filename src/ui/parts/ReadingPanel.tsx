@@ -3,12 +3,9 @@ import { useDesk } from '../desk/deskStore.ts';
 import { chooseReading } from '../desk/readingChoices.ts';
 import { fixed } from '../figures.ts';
 import { words } from '../words.ts';
+import { ReadingForm } from './ReadingForm.tsx';
 import { ShelfBox } from './ShelfBox.tsx';
-import { TextSetting } from './TextSetting.tsx';
 
-const UNITS = ['Angstrom', 'nm', 'um'] as const;
-const MEDIA = ['air', 'vacuum'] as const;
-const COLUMNS = ['wavelengthColumn', 'fluxColumn', 'errorColumn'] as const;
 const { reading: label } = words;
 
 /** How the file was read, what was assumed, and what can be read differently. */
@@ -17,7 +14,6 @@ export function ReadingPanel() {
   const choices = useDesk((state) => state.history.document.settings.reading);
   if (!analysis) return null;
   const { reading, remarks, missing } = analysis;
-  const take = (change: typeof choices, what: string) => chooseReading({ ...choices, ...change }, label.changed(what));
   return (
     <section className="reading">
       <ShelfBox />
@@ -79,42 +75,7 @@ export function ReadingPanel() {
         </>
       )}
       <h3>{label.changeable}</h3>
-      <label className="field">
-        <span>{label.medium}</span>
-        <select
-          value={choices.medium ?? ''}
-          onChange={(e) => take({ medium: MEDIA.find((m) => m === e.target.value) }, e.target.value || label.asFound)}
-        >
-          <option value="">{`${label.asFound} (${words.medium[reading.medium]})`}</option>
-          {MEDIA.map((medium) => (
-            <option key={medium} value={medium}>
-              {words.medium[medium]}
-            </option>
-          ))}
-        </select>
-      </label>
-      <label className="field">
-        <span>{label.unit}</span>
-        <select
-          value={choices.wavelengthUnit ?? ''}
-          onChange={(e) => take({ wavelengthUnit: UNITS.find((u) => u === e.target.value) }, e.target.value || label.asFound)}
-        >
-          <option value="">{label.asFound}</option>
-          {UNITS.map((unit) => (
-            <option key={unit}>{unit}</option>
-          ))}
-        </select>
-      </label>
-      {COLUMNS.map((column) => (
-        <TextSetting
-          key={`${column} ${choices[column] ?? ''}`}
-          label={label[column]}
-          value={choices[column] ?? ''}
-          placeholder={reading.choices[column] ?? label.asFound}
-          commit={(text) => take({ [column]: text || undefined }, `${label[column].toLowerCase()} ${text || label.asFound}`)}
-        />
-      ))}
-      <p className="hint">{label.columnHint}</p>
+      <ReadingForm reading={reading} choices={choices} />
     </section>
   );
 }
