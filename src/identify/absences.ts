@@ -39,10 +39,7 @@ export function absencesOf(
 ): Absence[][] {
   const { lines } = data;
   const facts = factsOf(data);
-  const places = marks
-    .filter((m) => !m.artefact)
-    .map((m) => m.wavelength)
-    .sort((a, b) => a - b);
+  const places = placesOf(marks);
   return strongest.map((list) =>
     list.flatMap((line): Absence[] => {
       const at = lines.wavelengthVac[line] * (facts.local[line] === 1 ? 1 : 1 + model.z);
@@ -75,10 +72,7 @@ export function leftOutShare(
   settings: NamingSettings,
 ): number {
   const facts = factsOf(data);
-  const places = marks
-    .filter((m) => !m.artefact)
-    .map((m) => m.wavelength)
-    .sort((a, b) => a - b);
+  const places = placesOf(marks);
   let missing = 0;
   let expected = 0;
   strongest.forEach((list, ion) => {
@@ -94,13 +88,31 @@ export function leftOutShare(
   return (missing + USUAL_LEFT_OUT * USUAL_WEIGHT) / (expected + USUAL_WEIGHT);
 }
 
-function hasWithin(sorted: readonly number[], at: number, reach: number): boolean {
+/** Where marks stand, ascending, and how far from its centre a mark can hide an unresolved line. */
+interface Places {
+  readonly at: readonly number[];
+  readonly hides: readonly number[];
+  readonly widest: number;
+}
+
+/** A line this far from the centre of a feature, in FWHM, is a part of it. */
+const HIDES_FWHM = 0.7;
+
+function placesOf(marks: readonly Mark[]): Places {
+  const sorted = marks.filter((m) => !m.artefact).sort((a, b) => a.wavelength - b.wavelength);
+  const hides = sorted.map((m) => HIDES_FWHM * (m.fwhm ?? 0));
+  return { at: sorted.map((m) => m.wavelength), hides, widest: Math.max(0, ...hides) };
+}
+
+function hasWithin({ at: places, hides, widest }: Places, at: number, reach: number): boolean {
+  const far = Math.max(reach, widest);
   let low = 0;
-  let high = sorted.length;
+  let high = places.length;
   while (low < high) {
     const mid = (low + high) >> 1;
-    if (sorted[mid] < at - reach) low = mid + 1;
+    if (places[mid] < at - far) low = mid + 1;
     else high = mid;
   }
-  return low < sorted.length && sorted[low] <= at + reach;
+  for (let k = low; k < places.length && places[k] <= at + far; k++) if (Math.abs(places[k] - at) <= Math.max(reach, hides[k])) return true;
+  return false;
 }

@@ -29,6 +29,10 @@ const SIGNIFICANT = 2;
 const START_LOG_STRENGTH = 0;
 const START_REACH_KMS = 150;
 const START_ERR_KMS = 20;
+/** Bright marks are better placed than the errors of a crowded fit say. */
+const START_TRUST = 0.3;
+/** Likely names may move the drift no further than this from what the strong lines say, km/s: wrong names confirm each other. */
+const FARTHEST_KMS = 15;
 
 export const NO_DRIFT: Drift = { low: 0, step: 1, kms: [0] };
 
@@ -38,6 +42,18 @@ export function driftAt({ low, step, kms }: Drift, wavelength: number): number {
   const k = Math.min(kms.length - 1, Math.floor(place));
   const next = Math.min(kms.length - 1, k + 1);
   return kms[k] + (place - k) * (kms[next] - kms[k]);
+}
+
+/** The drift that strong lines tell by their place, refined by the likely names. */
+export function refineDrift(coarse: Drift, fine: Drift): Drift {
+  const low = coarse === NO_DRIFT ? fine : coarse;
+  return {
+    ...low,
+    kms: low.kms.map((_, k) => {
+      const wavelength = Math.exp(low.low + k * low.step);
+      return driftAt(coarse, wavelength) + Math.min(FARTHEST_KMS, Math.max(-FARTHEST_KMS, driftAt(fine, wavelength)));
+    }),
+  };
 }
 
 /** Where a drift is not negligible: its values at the nodes of the observed range, or undefined. */
@@ -81,6 +97,7 @@ export function startPoints(marks: readonly Mark[], data: AtomicData, z: number)
   const { lines } = data;
   const { local } = factsOf(data);
   const bright = marks.filter((m) => !m.artefact && m.flux > 0).sort((a, b) => b.flux - a.flux);
+  const taken = new Set<number>();
   return bright.slice(0, Math.max(12, bright.length >> 1)).flatMap((mark): DriftPoint[] => {
     const reach = START_REACH_KMS / SPEED_OF_LIGHT_KMS;
     const [first, end] = linesBetween(lines, (mark.wavelength * (1 - reach)) / (1 + z), (mark.wavelength * (1 + reach)) / (1 + z));
@@ -89,10 +106,16 @@ export function startPoints(marks: readonly Mark[], data: AtomicData, z: number)
       if (local[line] === 1 || !(lines.logStrength[line] > START_LOG_STRENGTH)) continue;
       if (best < 0 || lines.logStrength[line] > lines.logStrength[best]) best = line;
     }
-    if (best < 0) return [];
+    // the wings of a bright line are measured as marks of their own: only the brightest mark is the line
+    if (best < 0 || taken.has(best)) return [];
+    taken.add(best);
     const kms = (mark.wavelength / (lines.wavelengthVac[best] * (1 + z)) - 1) * SPEED_OF_LIGHT_KMS;
     return [
-      { wavelength: mark.wavelength, kms, errKms: Math.hypot(START_ERR_KMS, (mark.wavelengthErr / mark.wavelength) * SPEED_OF_LIGHT_KMS) },
+      {
+        wavelength: mark.wavelength,
+        kms,
+        errKms: Math.hypot(START_ERR_KMS, START_TRUST * (mark.wavelengthErr / mark.wavelength) * SPEED_OF_LIGHT_KMS),
+      },
     ];
   });
 }

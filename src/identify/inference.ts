@@ -2,7 +2,7 @@ import type { AtomicData } from '../atomic/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import { absencesOf, leftOutShare, strongestLines } from './absences.ts';
 import { claimsOf } from './claims.ts';
-import { type Drift, type DriftPoint, fitDrift, startPoints, withoutDrift } from './drift.ts';
+import { type Drift, type DriftPoint, fitDrift, refineDrift, startPoints, withoutDrift } from './drift.ts';
 import { estimateKind } from './estimateKind.ts';
 import { fitScale, type IonScale, priorMeans } from './ionScales.ts';
 import { factsOf } from './lineFacts.ts';
@@ -60,7 +60,9 @@ export function infer(
   for (let round = 0; round < MOST_ROUNDS; round++) {
     if (round > 0) {
       model = updateModel(model, placed, weighings, data, settings.z !== undefined);
-      drift = fitDrift(driftPoints(marks, weighings, data, model), survey.low, survey.high);
+      const coarse = fitDrift(startPoints(marks, data, model.z), survey.low, survey.high);
+      const fine = fitDrift(driftPoints(withoutDrift(marks, coarse), weighings, data, model), survey.low, survey.high);
+      drift = refineDrift(coarse, fine);
       placed = withoutDrift(marks, drift);
     }
     const sightings = sightingsOf(weighings, placed, data, model);

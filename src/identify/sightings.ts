@@ -22,6 +22,7 @@ export function sightingsOf(weighings: readonly Weighing[], marks: readonly Mark
   const byIon = new Map<number, Sighting[]>();
   const ionsOfMark = marks.map(() => new Set<number>());
   weighings.forEach(({ candidates }, mark) => {
+    const placing = placingOf(marks[mark]);
     for (const candidate of candidates) {
       if (candidate.probability < LEAST_TELLING) continue;
       candidate.lines.forEach((line, k) => {
@@ -38,7 +39,7 @@ export function sightingsOf(weighings: readonly Weighing[], marks: readonly Mark
         list.push({
           mark,
           line,
-          weight: candidate.probability * Math.sqrt(candidate.shares[k]),
+          weight: candidate.probability * Math.sqrt(candidate.shares[k]) * placing,
           excess: logFlux - predictedLog(facts, line, model),
           err,
         });
@@ -48,6 +49,12 @@ export function sightingsOf(weighings: readonly Weighing[], marks: readonly Mark
   });
   return { byIon, ionsOfMark };
 }
+
+/** A centroid worse than this share of the width is vague: wings and fillings of a crowded fit. */
+const VAGUE_FWHM = 0.2;
+
+/** How much a mark's place can tell of an ion, 0 to 1. */
+const placingOf = ({ fwhm, wavelengthErr }: Mark) => (fwhm === undefined ? 1 : Math.min(1, ((VAGUE_FWHM * fwhm) / wavelengthErr) ** 2));
 
 /** One sigma of log10 flux. */
 export const logFluxErr = (mark: Mark) =>

@@ -33,7 +33,9 @@ export function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
     ...single,
     owed: owedBy(mark, j, single, context),
   }));
-  const names = [...singles.map((s) => [s]), ...blendsOf(mark, singles)].filter((parts) => !rule.not.some((not) => sameLines(not, parts)));
+  const names = [...singles.filter((s) => s.within).map((s) => [s]), ...blendsOf(mark, singles)].filter(
+    (parts) => !rule.not.some((not) => sameLines(not, parts)),
+  );
   const forced = rule.lines;
   if (forced) {
     const parts = forced.map((line) => singles.find((s) => s.line === line) ?? farSingle(mark, line, context, scaleWithout));
@@ -72,7 +74,7 @@ function likelyOnes(mark: Mark, options: readonly Option[], context: WeighContex
     const errDex = facts.errDex[option.line];
     const variance = errDex * errDex + scale.variance;
     const excess = (logFlux - logPredicted) ** 2;
-    const pull = option.off / option.sigma;
+    const pull = option.within ? option.off / option.sigma : 0;
     rough[k] = -0.5 * pull * pull - Math.min((0.5 * excess) / variance, WIDE_NATS + (0.5 * excess) / (variance + WIDE_DEX * WIDE_DEX));
     return { ...option, logPredicted, err: Math.sqrt(variance), seen: scale.seen, owed: 0 };
   });
@@ -107,6 +109,7 @@ function farSingle(mark: Mark, line: number, context: WeighContext, scaleOf: (io
   const scale = scaleOf(data.lines.ion[line]);
   return {
     line,
+    within: false,
     off: mark.wavelength - data.lines.wavelengthVac[line] * shift,
     sigma: Math.hypot(mark.wavelengthErr, data.lines.wavelengthErr[line], (model.dispersionKms / SPEED_OF_LIGHT_KMS) * mark.wavelength),
     logPredicted: predictedLog(facts, line, model) + scale.mean,
