@@ -15,7 +15,7 @@ export function marksOf(features: readonly Feature[], medium: Medium): Mark[] {
       wavelengthErr: (known ? feature.centroidErr : UNKNOWN_CENTROID_ERR_PER_FWHM * feature.fwhm) * perAngstrom,
       flux: feature.flux,
       fluxErr: feature.fluxErr,
-      fwhm: feature.fwhm * perAngstrom,
+      ...(Number.isFinite(feature.fwhm) ? { fwhm: feature.fwhm * perAngstrom } : {}),
       artefact: feature.artefact !== undefined,
     };
   });

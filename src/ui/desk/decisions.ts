@@ -70,12 +70,20 @@ function chosenOnly<T extends object>(choices: T): T {
 }
 
 /** Puts a spectrum of the shelf back on the desk. */
-export const goTo = (source: Source) => commit(openSource(present(), source));
+export const goToSpectrum = (source: Source) => commit(openSource(present(), source));
 /** Closes a spectrum of the shelf. */
-export const close = (source: Source) => commit(dropShelved(present(), source));
+export const closeSpectrum = (source: Source) => commit(dropShelved(present(), source));
 
 export const undoLast = () => step(undo, desk().history.past.at(-1), (sentence) => `took back: ${sentence}`);
 export const redoNext = () => step(redo, desk().history.future.at(-1), (sentence) => `did again: ${sentence}`);
+
+/** Takes back or does again until `count` changes stand: one analysis for all. */
+export function goTo(count: number): void {
+  let { history } = desk();
+  while (history.past.length > count) history = undo(history);
+  while (history.past.length < count && history.future.length > 0) history = redo(history);
+  follow(history, `went back to: ${history.past.at(-1)?.sentence ?? 'the beginning'}`);
+}
 
 function commit(change: Change): void {
   if (change.steps.length === 0) return;

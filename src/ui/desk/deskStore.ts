@@ -55,6 +55,8 @@ export interface DeskFields {
   readonly singleKeys: boolean;
   /** Exports hold all lines, not only those decided on. */
   readonly exportAll: boolean;
+  /** Keys of columns the table leaves out. */
+  readonly hiddenColumns: readonly string[];
 }
 
 const START: DeskFields = {
@@ -73,6 +75,7 @@ const START: DeskFields = {
   theme: 'system',
   singleKeys: true,
   exportAll: false,
+  hiddenColumns: [],
 };
 
 export const useDesk = create<DeskFields>()(() => START);

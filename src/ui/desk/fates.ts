@@ -17,6 +17,7 @@ export const FATES = {
   theme: 'browser',
   singleKeys: 'browser',
   exportAll: 'browser',
+  hiddenColumns: 'browser',
   stage: 'gone',
   analysis: 'gone',
   samples: 'gone',

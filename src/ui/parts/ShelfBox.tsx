@@ -1,4 +1,4 @@
-import { close, goTo } from '../desk/decisions.ts';
+import { closeSpectrum, goToSpectrum } from '../desk/decisions.ts';
 import { useDesk } from '../desk/deskStore.ts';
 import { words } from '../words.ts';
 
@@ -22,10 +22,10 @@ export function ShelfBox() {
             <span>
               {other.source.name}, {label.verdicts(other.verdicts.length)}
             </span>
-            <button type="button" className="small" onClick={() => goTo(other.source)}>
+            <button type="button" className="small" onClick={() => goToSpectrum(other.source)}>
               {label.goTo(other.source.name)}
             </button>
-            <button type="button" className="small" onClick={() => close(other.source)}>
+            <button type="button" className="small" onClick={() => closeSpectrum(other.source)}>
               {label.close(other.source.name)}
             </button>
           </li>

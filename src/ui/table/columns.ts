@@ -106,6 +106,12 @@ const nCritText = (row: DeskRow) => {
   return thinGas ? powerText(thinGas.nCrit, 2) : '';
 };
 
+/** Number, wavelength and name say what a row is: they stay. */
+export const isAlwaysShown = ({ key }: TableColumn) => ['number', 'wavelength', 'name'].includes(key);
+
+/** The columns left when those of `hidden` are not wanted. */
+export const shownColumns = (hidden: readonly string[]) => TABLE_COLUMNS.filter(({ key }) => !hidden.includes(key));
+
 function velocityText(row: DeskRow): string {
   return row.name && Number.isFinite(row.name.velocityKms) ? signed(row.name.velocityKms, finite(row.name.velocityErrKms), 1) : '';
 }
