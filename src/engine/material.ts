@@ -3,6 +3,7 @@ import { type ByteSource, type ReadingChoices, type ReadingControl, readLineList
 import { countUsable, type Medium, type Spectrum } from '../spectrum/index.ts';
 import { kmsFromWidth } from '../units/index.ts';
 import type { ReadingView } from './analysis.ts';
+import { UNKNOWN_CENTROID_ERR_KMS } from './marksOf.ts';
 
 export type SourceKind = 'spectrum' | 'line-list';
 
@@ -98,7 +99,17 @@ async function readList(source: ByteSource, choices: ReadingChoices): Promise<Ma
       how: list.how,
       offers: [],
       choices: list.choices,
-      remarks: list.remarks,
+      remarks: list.wavelengthErr
+        ? list.remarks
+        : [
+            ...list.remarks,
+            {
+              code: 'no-wavelength-errors',
+              weight: 'note',
+              where: { file: source.name },
+              found: `the list has no wavelength errors; a quarter of the line width is taken, or ${UNKNOWN_CENTROID_ERR_KMS} km/s where that is not known either`,
+            },
+          ],
     },
   };
 }

@@ -159,6 +159,25 @@ describe('an already measured list', () => {
     expect(named.table.rows[0]).toMatchObject({ ew: undefined, fwhm: undefined });
   });
 
+  test('without errors and widths is named all the same, and says what was assumed', async () => {
+    await engine.open(
+      text('bare.csv', list.replace('wavelength,flux,wavelength_err,flux_err', 'wavelength,flux').replaceAll(/,0\.05,[\d.]+$/gm, '')),
+      'line-list',
+    );
+    const named = await analyse(EMPTY_DOCUMENT);
+    expect(named.features.map((f) => f.name?.transitions[0].ion)).toEqual([
+      'H I',
+      'H I',
+      '[O III]',
+      '[O III]',
+      'He I',
+      '[N II]',
+      'H I',
+      '[N II]',
+    ]);
+    expect(named.remarks.map((r) => r.code)).toContain('no-wavelength-errors');
+  });
+
   test('is written with every column of the table', async () => {
     await engine.open(text('mine.csv', list), 'line-list');
     const csv = TABLE_FORMATS.csv.write(withoutArtefacts((await analyse(EMPTY_DOCUMENT)).table));
