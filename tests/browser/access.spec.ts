@@ -23,7 +23,7 @@ for (const colorScheme of ['light', 'dark'] as const) {
       await tab.click();
       await check((await tab.textContent()) ?? '');
     }
-    await page.locator('.menu > summary').click();
+    await page.getByRole('button', { name: 'Export and sessions' }).click();
     await check('menu');
   });
 }

@@ -66,7 +66,7 @@ export class Desk {
 
   /** Saves by the export menu and returns what was saved. */
   async save(label: RegExp): Promise<{ name: string; text: string }> {
-    await this.page.locator('.menu > summary').click();
+    await this.page.getByRole('button', { name: 'Export and sessions' }).click();
     const download = this.page.waitForEvent('download');
     await this.page.getByRole('button', { name: label }).click();
     const file = await download;

@@ -78,7 +78,7 @@ export const undoLast = () => step(undo, desk().history.past.at(-1), (sentence) 
 export const redoNext = () => step(redo, desk().history.future.at(-1), (sentence) => `did again: ${sentence}`);
 
 /** Takes back or does again until `count` changes stand: one analysis for all. */
-export function goTo(count: number): void {
+export function goBackTo(count: number): void {
   let { history } = desk();
   while (history.past.length > count) history = undo(history);
   while (history.past.length < count && history.future.length > 0) history = redo(history);

@@ -1,4 +1,4 @@
-import { goTo } from '../desk/decisions.ts';
+import { goBackTo } from '../desk/decisions.ts';
 import { useDesk } from '../desk/deskStore.ts';
 import { fixed } from '../figures.ts';
 import { words } from '../words.ts';
@@ -26,7 +26,7 @@ export function HistoryPanel() {
                 type="button"
                 className="small go-back"
                 aria-label={`${words.history.goBack}: ${sentence}`}
-                onClick={() => goTo(number)}
+                onClick={() => goBackTo(number)}
               >
                 {words.history.goBack}
               </button>

@@ -44,8 +44,8 @@ export function ReadingPanel() {
       </ul>
       {missing.length > 0 && (
         <>
-          <h3>{label.missing}</h3>
-          <p className="hint">{label.missingHint}</p>
+          <h3>{label.expected}</h3>
+          <p className="hint">{label.expectedHint}</p>
           <ul className="remarks">
             {missing.map((line) => (
               <li key={`${line.label} ${line.expectedAt}`}>
