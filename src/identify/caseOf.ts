@@ -1,6 +1,7 @@
 import type { AtomicData } from '../atomic/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import { findCompanions, type Kin } from './companions.ts';
+import { asMeasured } from './drift.ts';
 import { evidenceOf } from './evidence.ts';
 import type { Inferred } from './inference.ts';
 import type { Candidate, CompanionFinding, Evidence, FeatureNaming, Mark, NamingSettings } from './naming.ts';
@@ -57,7 +58,12 @@ export function caseOf(
       const looked = !isLocal(data, weighed.lines[0]) && mark.flux > 0;
       const companions = looked ? findCompanions(mark, weighed.lines[0], weighed.shares[0], marks, kin, data, survey, model, settings) : [];
       const evidence = evidenceOf(mark, weighed, companions, data, survey);
-      return { weighed, companions: companions.map((c) => c.finding), evidence, odds: evidence.reduce((sum, e) => sum + e.nats, 0) };
+      return {
+        weighed,
+        companions: companions.map(({ finding }) => ({ ...finding, expectedAt: asMeasured(inferred.drift, finding.expectedAt) })),
+        evidence,
+        odds: evidence.reduce((sum, e) => sum + e.nats, 0),
+      };
     })
     .sort((a, b) => b.odds - a.odds);
   if (forced) {

@@ -66,6 +66,9 @@ export function shownDrift(drift: Drift, leastKms: number): { wavelength: number
 export const withoutDrift = (marks: readonly Mark[], drift: Drift): Mark[] =>
   marks.map((mark) => ({ ...mark, wavelength: mark.wavelength / (1 + driftAt(drift, mark.wavelength) / SPEED_OF_LIGHT_KMS) }));
 
+/** Where a line without drift at `wavelength` stands in the measured spectrum. */
+export const asMeasured = (drift: Drift, wavelength: number): number => wavelength * (1 + driftAt(drift, wavelength) / SPEED_OF_LIGHT_KMS);
+
 /** Local robust regression of degree 0 (Cleveland 1979, J. Am. Stat. Assoc. 74, 829, with medians): kept where it is significant. */
 export function fitDrift(points: readonly DriftPoint[], low: number, high: number): Drift {
   if (points.length < LEAST_POINTS) return NO_DRIFT;

@@ -2,7 +2,7 @@ import type { AtomicData } from '../atomic/index.ts';
 import type { Remark } from '../problems/index.ts';
 import { caseOf } from './caseOf.ts';
 import { kinOf, missingLines } from './companions.ts';
-import { shownDrift } from './drift.ts';
+import { asMeasured, shownDrift } from './drift.ts';
 import { infer } from './inference.ts';
 import { factsOf } from './lineFacts.ts';
 import { predictedLog } from './model.ts';
@@ -82,7 +82,7 @@ export function nameMarks(
       (ion) => scales[ion],
       (line) => predictedLog(factsOf(data), line, model),
       settings.toleranceKms,
-    ),
+    ).map((m) => ({ ...m, expectedAt: asMeasured(inferred.drift, m.expectedAt) })),
   };
 }
 

@@ -99,7 +99,10 @@ export interface Naming {
   readonly zErr: number;
   /** Extra scatter of centroids about the model, km/s. */
   readonly dispersionKms: number;
+  /** As set; with 'unknown', the kind whose ion strengths fit what was found, if one stands out. */
   readonly kind: ObjectKind;
+  /** Trend of velocity with ionisation found on the way, km/s per e-fold of (creation energy + 8 eV); absent = none is significant. */
+  readonly trendKms?: number;
   /**
    * Smooth drift of the wavelength calibration found on the way, at some wavelengths (observed, vacuum Angstrom); the names allow for it, the velocities
    * of the candidates do not. Absent = none is significant.
