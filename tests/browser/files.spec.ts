@@ -100,7 +100,7 @@ test('a list of measured lines is named without a spectrum', async ({ page }) =>
   await expect(desk.row('[O III] 5006.84')).toBeVisible();
 });
 
-test('a changed setting is measured anew, a run can be stopped, and both can be undone', async ({ page }) => {
+test('a changed setting is measured anew and can be undone; nonsense is refused in words', async ({ page }) => {
   const desk = new Desk(page);
   await desk.openSample();
   const count = page.locator('.fact-count b').first();
@@ -138,5 +138,20 @@ test('several files opened at once form a list, and each comes back as it was le
   await page.getByRole('tab', { name: 'Reading' }).click();
   await page.getByRole('button', { name: 'Close third.csv' }).click();
   await expect(page.locator('.facts')).toContainText('+ 1 more');
+  expect(desk.faults).toEqual([]);
+});
+
+test('opening a long spectrum can be stopped, and what was on the desk is still there and can be worked on', async ({ page }) => {
+  const desk = new Desk(page);
+  await desk.openSample();
+  const rows = Array.from({ length: 500_000 }, (_, i) => `${(3700 + i * 0.01).toFixed(2)},${1 + ((i * 7919) % 101) / 1000}`);
+  await desk.openText('long.csv', `# wavelengths in air\nwavelength,flux\n${rows.join('\n')}\n`);
+  await page.getByRole('button', { name: 'Cancel' }).click();
+  await expect(desk.status()).toHaveText(/Stopped/);
+  await expect(page.locator('.facts')).toContainText('lantern-nebula.csv');
+  await desk.chooseRow('[O III] 5006.84');
+  await page.keyboard.press('Enter');
+  await expect(page.locator('.facts')).toContainText('1 accepted');
+  await desk.isIdle();
   expect(desk.faults).toEqual([]);
 });

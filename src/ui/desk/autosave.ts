@@ -2,7 +2,7 @@ import { keepDesk, keptDesk, pruneFiles } from '../storage.ts';
 import { words } from '../words.ts';
 import { type DeskFields, desk, raiseAlert, setDesk, useDesk } from './deskStore.ts';
 import { analyse } from './engineRuns.ts';
-import { KEPT_FIELDS, type KeptView } from './fates.ts';
+import { KEPT_FIELDS, keptOf } from './fates.ts';
 
 let isWriting = false;
 let dirty = false;
@@ -36,7 +36,7 @@ async function write(): Promise<void> {
   while (dirty) {
     dirty = false;
     const state = desk();
-    const view = Object.fromEntries(KEPT_FIELDS.map((field) => [field, state[field]])) as unknown as KeptView;
+    const view = keptOf(state);
     try {
       await keepDesk({ history: state.history, view });
     } catch {

@@ -34,3 +34,13 @@ type BrowserField = { [Key in keyof DeskFields]-?: (typeof FATES)[Key] extends '
 export type KeptView = Pick<DeskFields, BrowserField>;
 
 export const KEPT_FIELDS = (Object.keys(FATES) as (keyof typeof FATES)[]).filter((key): key is BrowserField => FATES[key] === 'browser');
+
+/** The part of the state that is kept. */
+export function keptOf(state: DeskFields): KeptView {
+  const kept: Partial<KeptView> = {};
+  const keep = <Key extends BrowserField>(key: Key) => {
+    kept[key] = state[key];
+  };
+  KEPT_FIELDS.forEach(keep);
+  return kept as KeptView;
+}
