@@ -68,22 +68,36 @@ function likelyOnes(mark: Mark, options: readonly Option[], context: WeighContex
   const { ion } = data.lines;
   const logFlux = Math.log10(Math.abs(mark.flux));
   const rough = new Float64Array(options.length);
-  const singles = options.map((option, k): Single => {
+  let best = Number.NEGATIVE_INFINITY;
+  options.forEach((option, k) => {
     const scale = scaleOf(ion[option.line]);
-    const logPredicted = predictedLog(facts, option.line, model) + scale.mean;
-    const errDex = facts.errDex[option.line];
-    const variance = errDex * errDex + scale.variance;
-    const excess = (logFlux - logPredicted) ** 2;
-    const pull = option.within ? option.off / option.sigma : 0;
+    const excess = (logFlux - predictedLog(facts, option.line, model) - scale.mean) ** 2;
+    const variance = facts.errDex[option.line] ** 2 + scale.variance;
+    const pull = option.off / option.sigma;
     rough[k] = -0.5 * pull * pull - Math.min((0.5 * excess) / variance, WIDE_NATS + (0.5 * excess) / (variance + WIDE_DEX * WIDE_DEX));
-    return { ...option, logPredicted, err: Math.sqrt(variance), seen: scale.seen, owed: 0 };
+    if (rough[k] > best) best = rough[k];
   });
-  const best = rough.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY);
   const wanted = context.rule.lines;
   // a referee wants to see what was turned down: the first few stay even when they cannot win
   const few = rough.slice().sort((a, b) => b - a)[ALWAYS_KEPT - 1] ?? Number.NEGATIVE_INFINITY;
   const least = Math.min(best - OUT_OF_REACH, few);
-  return singles.filter((s, k) => rough[k] >= least || wanted?.includes(s.line));
+  const singles: Single[] = [];
+  options.forEach(({ line, off, sigma, within }, k) => {
+    if (rough[k] < least && !wanted?.includes(line)) return;
+    const scale = scaleOf(ion[line]);
+    const logPredicted = predictedLog(facts, line, model) + scale.mean;
+    singles.push({
+      line,
+      off,
+      sigma,
+      within,
+      logPredicted,
+      err: Math.sqrt(facts.errDex[line] ** 2 + scale.variance),
+      seen: scale.seen,
+      owed: 0,
+    });
+  });
+  return singles;
 }
 
 /** A line may hide as a part of a feature when it carries less than this share. */
