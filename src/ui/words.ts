@@ -186,6 +186,7 @@ export const words = {
       ring: 'needs thin gas',
     },
   },
+  sky: 'sky',
   standing: { open: 'open', accepted: 'accepted', rejected: 'rejected', unidentified: 'unidentified', artefact: 'artefact' },
   case: {
     none: 'Click a peak, a mark or a row, or press → to look at a feature.',

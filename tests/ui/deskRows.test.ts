@@ -44,6 +44,7 @@ describe('rows of the desk', () => {
 
   it('names are shortened as figures print them', () => {
     expect(shortName(oIII)).toBe('[O III] 5007');
+    expect(shortName(candidate('O I 5577.34', 1, 'sky'))).toBe('O I 5577 sky');
     expect(shortName(candidate('H I 3889.05 + He I 3888.65', 1))).toBe('H I + He I 3889+');
   });
 });

@@ -1,6 +1,7 @@
 import type { Analysis, CandidateView, FeatureView } from '../../engine/index.ts';
 import type { LineRow } from '../../report/index.ts';
 import { type Decision, matchVerdicts, sameKeys, type Verdict } from '../../session/index.ts';
+import { words } from '../words.ts';
 
 export type Standing = Decision | 'open';
 
@@ -54,8 +55,12 @@ function nameInForce(feature: FeatureView, standing: Standing, candidates: reado
 /** "[O III] + O II" short names with rounded wavelengths, as figures print them: "[O III] 5007". */
 export function shortName(name: CandidateView): string {
   const ions = [...new Set(name.transitions.map((t) => t.ion))];
-  return `${ions.join(' + ')} ${Math.round(name.transitions[0].wavelengthLab)}${name.transitions.length > 1 ? '+' : ''}`;
+  const more = `${name.transitions.length > 1 ? '+' : ''}${isOfTheAir(name) ? ` ${words.sky}` : ''}`;
+  return `${ions.join(' + ')} ${Math.round(name.transitions[0].wavelengthLab)}${more}`;
 }
+
+/** Light or absorption of the Earth's atmosphere, not of the object. */
+export const isOfTheAir = (name: CandidateView) => name.transitions.every((t) => t.nature === 'sky' || t.nature === 'telluric');
 
 /** Thin-gas facts of the first part of a name that has them. */
 export const thinGasOf = (name: CandidateView | undefined) => name?.transitions.find((t) => t.thinGas)?.thinGas;

@@ -43,7 +43,7 @@ function Transition({ transition, share }: { transition: TransitionView; share?:
       <p>
         <strong>{`${transition.ion} ${withError(transition.wavelengthLab, transition.wavelengthLabErr || undefined, 3)} Å`}</strong>
         {share !== undefined && <span className="number">{` ${label.shares} ${fixed(share, 2)}`}</span>}
-        <span className="levels">{`${transition.lower} – ${transition.upper}, ${transition.nature}`}</span>
+        <span className="levels">{levelsText(transition)}</span>
       </p>
       {thinGas && (
         <div className="thin-gas">
@@ -68,4 +68,9 @@ function Transition({ transition, share }: { transition: TransitionView; share?:
       )}
     </section>
   );
+}
+
+/** "2p2 3P 2 – 2p2 1D 2, forbidden"; only the nature where the levels are not known. */
+function levelsText({ lower, upper, nature }: TransitionView): string {
+  return lower || upper ? `${lower} – ${upper}, ${nature}` : nature;
 }

@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import type { CandidateView } from '../../engine/index.ts';
 import { acceptCandidate, rejectCandidate } from '../desk/decisions.ts';
-import { type DeskRow, thinGasOf } from '../desk/deskRows.ts';
+import { type DeskRow, isOfTheAir, thinGasOf } from '../desk/deskRows.ts';
 import { fixed, probabilityText, signed } from '../figures.ts';
 import { words } from '../words.ts';
 import { CandidateCase } from './CandidateCase.tsx';
@@ -66,6 +66,7 @@ function CandidateCard({ row, candidate, digit, isOpen, toggle }: CardProps) {
         <button type="button" className="candidate-name" aria-expanded={isOpen} onClick={toggle}>
           {candidate.label}
           {thinGasOf(candidate) && <Ring title={label.thinGas} />}
+          {isOfTheAir(candidate) && <span className="tag">{words.sky}</span>}
         </button>
         <Probability value={candidate.probability} />
         <button

@@ -1,7 +1,7 @@
 import { useVirtualizer } from '@tanstack/react-virtual';
 import { useEffect, useMemo, useRef } from 'react';
 import { choose, useChosenRow } from '../desk/chosen.ts';
-import { type DeskRow, thinGasOf } from '../desk/deskRows.ts';
+import { type DeskRow, isOfTheAir, thinGasOf } from '../desk/deskRows.ts';
 import { setDesk, useDesk } from '../desk/deskStore.ts';
 import { shownColumns, type TableColumn } from '../table/columns.ts';
 import { sortedBy } from '../table/sortRows.ts';
@@ -129,6 +129,7 @@ function Row({ row, columns, grid, place, start, isChosen }: RowProps) {
           {column.key === 'standing' && <Mark standing={row.standing} />}
           {column.text(row)}
           {column.key === 'name' && thinGasOf(row.name) && <Ring title={words.case.thinGas} />}
+          {column.key === 'name' && row.name && isOfTheAir(row.name) && <span className="tag">{words.sky}</span>}
         </td>
       ))}
       <RowVerdict row={row} />
