@@ -18,6 +18,8 @@ const WIDE_DEX = 1.2;
 const OUTLIER_SHARE = 0.02;
 const OUTLIER_SIGMAS = 3;
 const MOST_OWED = 5;
+/** Two marks may be named in each other’s stead: a claim by another mark is trusted no further than this. */
+const CLAIM_TRUST = 0.85;
 /** Share of features that belong to no line of the list: missing entries, artefacts. Common practice, no source (deep spectra leave a few percent without a name). */
 const STRANGERS = 0.06;
 /** Strangers are faint: their number falls by e for so many dex above the limit; a few are of any flux within three dex. */
@@ -61,7 +63,7 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
     if (isLocal(data, part.line)) priorNats += LOCAL_PRIOR;
     const elsewhere = claimedElsewhere(claims, part.line, j);
     const share = parts.length > 1 ? sortedShares[sorted.indexOf(part)] : 1;
-    claimNats += share * Math.log(Math.max(0.02, 1 - 0.95 * elsewhere));
+    claimNats += share * Math.log(1 - CLAIM_TRUST * elsewhere);
   }
   return {
     lines: sorted.map((p) => p.line),
