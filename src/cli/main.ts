@@ -13,6 +13,12 @@ const COMMANDS: Readonly<Record<string, (args: readonly string[]) => Promise<num
   limits,
 };
 
+// a reader that has seen enough (`| head`) closes the pipe: that is no error
+process.stdout.on('error', (error: NodeJS.ErrnoException) => {
+  if (error.code !== 'EPIPE') throw error;
+  process.exit(0);
+});
+
 const [word, ...args] = process.argv.slice(2);
 const command = word === undefined ? undefined : COMMANDS[word];
 if (command) {
