@@ -73,9 +73,10 @@ function likelyOnes(mark: Mark, options: readonly Option[], context: WeighContex
     const scale = scaleOf(ion[option.line]);
     const excess = (logFlux - predictedLog(facts, option.line, model) - scale.mean) ** 2;
     const variance = facts.errDex[option.line] ** 2 + scale.variance;
-    const pull = option.off / option.sigma;
+    // a line outside the tolerance can only be a part of a blend: its own place says nothing
+    const pull = option.within ? option.off / option.sigma : 0;
     rough[k] = -0.5 * pull * pull - Math.min((0.5 * excess) / variance, WIDE_NATS + (0.5 * excess) / (variance + WIDE_DEX * WIDE_DEX));
-    if (rough[k] > best) best = rough[k];
+    if (option.within && rough[k] > best) best = rough[k];
   });
   const wanted = context.rule.lines;
   // a referee wants to see what was turned down: the first few stay even when they cannot win

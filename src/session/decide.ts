@@ -85,7 +85,7 @@ export function changeSettings(document: SessionDocument, after: Settings, sente
 
 /**
  * Puts `source` on the desk. What was there goes onto the shelf with its settings and verdicts; a source that was on the shelf comes back as it was left, a new
- * one starts with the settings of the desk but its own way of reading. Opening what is already on the desk changes nothing.
+ * one starts with the settings of the desk but its own way of reading, its own redshift and its own resolving power. Opening what is already on the desk changes nothing.
  */
 export function openSource(document: SessionDocument, source: Source): Change {
   const shelf = document.shelf ?? [];
@@ -95,7 +95,7 @@ export function openSource(document: SessionDocument, source: Source): Change {
   const staying = shelf.filter((s) => !sameSource(s.source, source));
   const gone = left ? [{ source: left, settings: document.settings, verdicts: document.verdicts }] : [];
   const after = [...staying, ...gone];
-  const settings = returning?.settings ?? { ...document.settings, reading: {} };
+  const settings = returning?.settings ?? forAnotherSource(document.settings);
   const steps: Step[] = [
     ...document.verdicts.map((before) => ({ on: 'verdict', before }) as const),
     { on: 'settings', before: document.settings, after: settings },
@@ -106,6 +106,13 @@ export function openSource(document: SessionDocument, source: Source): Change {
     ...(returning?.verdicts ?? []).map((verdict) => ({ on: 'verdict', after: verdict }) as const),
   ];
   return { sentence: `${returning ? 'went back to' : 'opened'} ${source.name}`, steps };
+}
+
+/** Settings without what belongs to one source alone. */
+function forAnotherSource({ measure, naming, ...rest }: Settings): Settings {
+  const { resolvingPower: _power, ...measureKept } = measure;
+  const { z: _z, ...namingKept } = naming;
+  return { ...rest, reading: {}, measure: measureKept, naming: namingKept };
 }
 
 /** Takes a source off the shelf; its verdicts go with it, undo brings both back. */

@@ -47,6 +47,20 @@ describe('a nebula of fifty lines', () => {
   });
 });
 
+describe('an unresolved doublet', () => {
+  test('is named by both its lines although neither stands within the tolerance', () => {
+    const list =
+      '[O II] 3727.5 250;[Ne III] 3868.76 12;H I 4340.46 46;H I 4861.33 100;[O III] 4958.91 60;[O III] 5006.84 180;[O I] 6300.3 10;[N II] 6548.05 30;H I 6562.8 290;[N II] 6583.45 90;[S II] 6716.44 50;[S II] 6730.82 40';
+    const marks = nebula({ seed: 9, z: 0.032, scatter: 0.25, list }).map((m) => ({ ...m, fwhm: 5.2 }));
+    const { lines } = name(marks).features[0].candidates[0];
+    expect(
+      lines
+        .map((line) => `${data.lines.ions[data.lines.ion[line]].name} ${Math.round(airFromVacuum(data.lines.wavelengthVac[line]))}`)
+        .sort(),
+    ).toEqual(['O II 3726', 'O II 3729']);
+  });
+});
+
 describe('the case of a candidate', () => {
   const marks = nebula({ seed: 7 });
   const naming = name(marks);

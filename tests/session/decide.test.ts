@@ -97,6 +97,16 @@ describe('verdicts', () => {
     expect(applyChange(applyChange(both, change), inverseOf(change))).toEqual(both);
   });
 
+  test('a typed redshift and resolving power stay with their spectrum', () => {
+    const document = {
+      ...EMPTY_DOCUMENT,
+      source: { kind: 'spectrum', name: 'a', size: 1 } as const,
+      settings: { reading: { hdu: 2 }, measure: { resolvingPower: 900, thresholdSigma: 6 }, naming: { z: 0.1, te: 9000 } },
+    };
+    const opened = applyChange(document, openSource(document, { kind: 'spectrum', name: 'b', size: 2 }));
+    expect(opened.settings).toEqual({ reading: {}, measure: { thresholdSigma: 6 }, naming: { te: 9000 } });
+  });
+
   test('opening what is already on the desk keeps everything', () => {
     const first = { kind: 'spectrum', name: 'lantern.csv', size: 10 } as const;
     let document = applyChange(EMPTY_DOCUMENT, openSource(EMPTY_DOCUMENT, first));

@@ -54,7 +54,7 @@ export function lanternNebula(data: AtomicData): string {
   });
   const head = [
     '# Lantern Nebula: an invented object, made from the line list by a seeded script; for trying the desk only',
-    '# wavelengths in air; flux in 1e-15 erg/s/cm2/A; one-sigma errors',
+    '# wavelengths in air',
     'wavelength [Angstrom],flux [1e-15 erg/s/cm2/A],flux_err [1e-15 erg/s/cm2/A]',
   ];
   return `${[...head, ...rows].join('\n')}\n`;
