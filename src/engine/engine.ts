@@ -83,7 +83,7 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
         verdicts,
         marks.map((mark, k) => ({ at: mark.wavelength, atErr: features[k].centroidErr })),
       );
-      const namingSettings: NamingSettings = { ...DEFAULT_NAMING_SETTINGS, ...settings.naming };
+      const namingSettings: NamingSettings = { ...DEFAULT_NAMING_SETTINGS, ...settings.naming, medium: what.reading.medium };
       const fixed = fixedNames(byFeature, list);
       const naming = await named.of([material.stamp(), measured.stamp(), namingSettings, fixed, settings.ownLines], () =>
         run('naming', () => nameMarks(marks, list, namingSettings, fixed)),

@@ -57,7 +57,7 @@ export function caseOf(
     .map((weighed): Version => {
       const looked = !isLocal(data, weighed.lines[0]) && mark.flux > 0;
       const companions = looked ? findCompanions(mark, weighed.lines[0], weighed.shares[0], marks, kin, data, survey, model, settings) : [];
-      const evidence = evidenceOf(mark, weighed, companions, data, survey);
+      const evidence = evidenceOf(mark, weighed, companions, data, survey, settings.medium);
       return {
         weighed,
         companions: companions.map(({ finding }) => ({ ...finding, expectedAt: asMeasured(inferred.drift, finding.expectedAt) })),

@@ -1,5 +1,5 @@
 import type { AtomicData } from '../atomic/index.ts';
-import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
+import { airFromVacuum, SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import type { WeighedCompanion } from './companions.ts';
 import type { Evidence, Mark } from './naming.ts';
 import { isLocal } from './options.ts';
@@ -14,6 +14,7 @@ export function evidenceOf(
   companions: readonly WeighedCompanion[],
   data: AtomicData,
   survey: Survey,
+  medium: 'air' | 'vacuum' = 'vacuum',
 ): Evidence[] {
   const evidence: Evidence[] = [
     { kind: 'wavelength', nats: weighed.wavelengthNats, sentence: wavelengthSentence(mark, weighed, data) },
@@ -21,7 +22,7 @@ export function evidenceOf(
   ];
   for (const { finding, nats, sameUpper } of companions) {
     if (finding.outcome === 'outside' || finding.outcome === 'too-faint') continue;
-    evidence.push({ kind: 'companion', nats, sentence: companionSentence(mark, finding, sameUpper, data) });
+    evidence.push({ kind: 'companion', nats, sentence: companionSentence(mark, finding, sameUpper, data, medium) });
   }
   const further: Evidence[] = [
     { kind: 'ion', nats: weighed.owedNats, sentence: owedSentence(mark, weighed, data) },
@@ -60,8 +61,10 @@ function companionSentence(
   { line, predictedFlux, outcome, expectedAt }: WeighedCompanion['finding'],
   sameUpper: boolean,
   data: AtomicData,
+  medium: 'air' | 'vacuum',
 ): string {
-  const name = `${ionName(data, line)} ${data.lines.wavelengthVac[line].toFixed(1)} (vacuum)`;
+  const shown = (vacuum: number) => (medium === 'air' ? airFromVacuum(vacuum) : vacuum).toFixed(1);
+  const name = `${ionName(data, line)} ${shown(data.lines.wavelengthVac[line])}`;
   const kin = sameUpper ? 'from the same upper level' : 'of the same multiplet';
   const share = (predictedFlux / mark.flux).toPrecision(2);
   switch (outcome) {
@@ -70,7 +73,7 @@ function companionSentence(
     case 'wrong-ratio':
       return `${name}, ${kin}, should have ${share} of this feature’s flux; what stands there is fainter.`;
     case 'absent':
-      return `${name}, ${kin}, should have ${share} of this feature’s flux, above the detection limit at ${expectedAt.toFixed(1)} Å, and is not there.`;
+      return `${name}, ${kin}, should have ${share} of this feature’s flux, above the detection limit at ${shown(expectedAt)} Å, and is not there.`;
     default:
       return `${name}, ${kin}, may hide in a stronger feature at its place.`;
   }

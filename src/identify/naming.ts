@@ -23,13 +23,12 @@ export interface NamingSettings {
   readonly toleranceKms: number;
   /** ... or this many times the feature's own error, whichever is larger. */
   readonly toleranceSigma: number;
-  /** As set; with 'unknown', the kind whose ion strengths fit what was found, if one stands out. */
   readonly kind: ObjectKind;
-  /** Trend of velocity with ionisation found on the way, km/s per e-fold of (creation energy + 8 eV); absent = none is significant. */
-  readonly trendKms?: number;
   /** Electron temperature (K) and density (cm^-3) at which lifetimes and critical densities are stated and companions are predicted. */
   readonly te: number;
   readonly ne: number;
+  /** Medium in which sentences give wavelengths; absent = vacuum. */
+  readonly medium?: 'air' | 'vacuum';
 }
 
 export const DEFAULT_NAMING_SETTINGS: NamingSettings = { toleranceKms: 60, toleranceSigma: 4, kind: 'unknown', te: 10_000, ne: 1_000 };

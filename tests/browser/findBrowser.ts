@@ -45,11 +45,16 @@ export function findBrowser(): string {
   if (isDebian() && process.getuid?.() === 0) {
     process.stderr.write('no browser found: installing Debian’s chromium\n');
     spawnSync('apt-get', ['update'], { stdio: 'ignore' });
-    spawnSync('apt-get', ['install', '-y', '--no-install-recommends', 'chromium'], { stdio: 'ignore', env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' } });
+    spawnSync('apt-get', ['install', '-y', '--no-install-recommends', 'chromium'], {
+      stdio: 'ignore',
+      env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' },
+    });
     const packaged = installed();
     if (packaged) return packaged;
   }
-  throw new Error('The browser tests need Chrome or Chromium: install one, or set CHROME_PATH to it, or run `npx playwright install chromium`.');
+  throw new Error(
+    'The browser tests need Chrome or Chromium: install one, or set CHROME_PATH to it, or run `npx playwright install chromium`.',
+  );
 }
 
 const isDebian = () => existsSync('/etc/os-release') && /^ID(_LIKE)?=.*debian|^ID=ubuntu/m.test(readFileSync('/etc/os-release', 'utf8'));
