@@ -119,7 +119,11 @@ export default {
       comment: 'Code that no entry reaches is dead.',
       severity: 'error',
       from: { path: '^src/(ui/main\\.tsx|cli/main\\.ts|engine/worker\\.ts|atomic/build/main\\.ts)$' },
-      to: { path: '^src/', pathNot: ['\\.d\\.ts$', '^src/(ui/main\\.tsx|cli/main\\.ts|engine/worker\\.ts|atomic/build/main\\.ts)$'], reachable: false },
+      to: {
+        path: '^src/',
+        pathNot: ['\\.d\\.ts$', '^src/(ui/main\\.tsx|cli/main\\.ts|engine/worker\\.ts|atomic/build/main\\.ts)$'],
+        reachable: false,
+      },
     },
   ],
   options: {
