@@ -1,8 +1,9 @@
 import { FWHM_PER_SIGMA } from '../units/index.ts';
-import { addProfiles, type Component, type FitSamples, firstAtLeast, type GroupFit, type WidthPrior } from './fitGroup.ts';
+import { addProfiles, type Component, type FitSamples, firstAtLeast, fitGroup, type GroupFit, type WidthPrior } from './fitGroup.ts';
 import { groupPeaks, type Window } from './groups.ts';
 import { growGroup } from './growGroup.ts';
 import { matchedFilter } from './matchedFilter.ts';
+import { addMisfit, misfitOf } from './misfit.ts';
 import { findPeaks, type Peak } from './peaks.ts';
 import { withoutPlateaus } from './plateau.ts';
 
@@ -22,6 +23,8 @@ interface Seed extends Peak {
 
 /** Later passes find what a neighbour's wing hid; one more finds next to nothing. */
 const PASSES = 3;
+/** Less than this share of a strong line's peak left over is not told from noise. */
+const LEAST_MISFIT = 0.0005;
 /** A residual peak this near to a component, in FWHM, is that component's misfit, not another line. */
 const OWN_FWHM = 0.7;
 
@@ -30,24 +33,21 @@ const OWN_FWHM = 0.7;
  * neighbour are fitted anew.
  *
  * @param spikes found on the way are added; their samples are marked unusable
+ * @param misfit told the share of strong lines that Gaussians leave over, when that is more than noise: it has then been added to `samples.noise`
  */
-export function fitPasses(samples: FitSamples, settings: PassSettings, spikes: number[]): GroupFit[] {
-  const { width, threshold, absorption } = settings;
+export function fitPasses(samples: FitSamples, settings: PassSettings, spikes: number[], misfit: (share: number) => void): GroupFit[] {
+  const { width, threshold } = settings;
   const sigma = samples.x.map((w, i) => width.sigmaAt(w) / samples.sampleWidth[i]);
   const fwhmAt = (i: number) => FWHM_PER_SIGMA * sigma[i];
   let fits: GroupFit[] = [];
   let known = new Map<string, GroupFit>();
   let residual = samples.y;
   let seeds: Seed[] = [];
+  forgiveMisfit(samples, groupPeaks(seedsIn(samples, residual, settings, sigma, []), fwhmAt, samples.x.length), width, misfit);
   for (let pass = 0; pass < PASSES; pass++) {
-    const snr = matchedFilter(residual, samples.noise, samples.usable, sigma, threshold);
-    const found = findPeaks(snr, threshold, absorption).filter((peak) =>
-      seeds.every((s) => Math.abs(s.at - peak.at) > OWN_FWHM * fwhmAt(peak.at)),
-    );
+    const found = seedsIn(samples, residual, settings, sigma, seeds);
     if (pass > 0 && found.length === 0) break;
-    seeds = [...seeds, ...found.map((peak) => ({ ...peak, start: startOf(samples, residual, peak, width) }))].sort(
-      (a, b) => a.start.centre - b.start.centre,
-    );
+    seeds = [...seeds, ...found].sort((a, b) => a.start.centre - b.start.centre);
     const windows = groupPeaks(seeds, fwhmAt, samples.x.length);
     const next = new Map<string, GroupFit>();
     fits = windows.map((window, k) => {
@@ -68,6 +68,37 @@ export function fitPasses(samples: FitSamples, settings: PassSettings, spikes: n
     residual = residualOf(samples, fits);
   }
   return fits.map((fit) => withoutPlateaus(samples, fit, width)).filter((fit) => fit.components.length > 0);
+}
+
+/** Peaks of the S/N map of a residual that no seed stands for yet. */
+function seedsIn(
+  samples: FitSamples,
+  residual: Float64Array,
+  { width, threshold, absorption }: PassSettings,
+  sigma: Float64Array,
+  known: readonly Seed[],
+): Seed[] {
+  const snr = matchedFilter(residual, samples.noise, samples.usable, sigma, threshold);
+  return findPeaks(snr, threshold, absorption)
+    .filter((peak) => known.every((s) => Math.abs(s.at - peak.at) > OWN_FWHM * FWHM_PER_SIGMA * sigma[peak.at]))
+    .map((peak) => ({ ...peak, start: startOf(samples, residual, peak, width) }));
+}
+
+/** Another peak of a window below this share of the strongest one's S/N may be its wing. */
+const WING_SHARE = 0.08;
+
+/** Fits the lines that stand alone, but for what may be their own wings, by one Gaussian each, and takes into the noise what that leaves over. */
+function forgiveMisfit(samples: FitSamples, windows: readonly Window<Seed>[], width: WidthPrior, misfit: (share: number) => void): void {
+  const strongest = ({ peaks }: Window<Seed>) => peaks.reduce((a, b) => (Math.abs(b.snr) > Math.abs(a.snr) ? b : a));
+  const isAlone = (window: Window<Seed>) =>
+    window.peaks.every((p) => p === strongest(window) || Math.abs(p.snr) < WING_SHARE * Math.abs(strongest(window).snr));
+  const fitOf = (window: Window<Seed>, starts: readonly Component[]) => fitGroup(samples, window.first, window.last, starts, width);
+  const alone = windows.filter(isAlone).map((window) => fitOf(window, [strongest(window).start]));
+  const left = misfitOf(samples, alone);
+  if (Math.max(left.core, left.wing) <= LEAST_MISFIT) return;
+  const crowds = windows.filter((window) => !isAlone(window)).map((window) => fitOf(window, startsOf(window)));
+  addMisfit(samples, [...alone, ...crowds], left);
+  misfit(Math.max(left.core, left.wing));
 }
 
 const startsOf = (window: Window<Seed>) => window.peaks.map((peak) => peak.start);

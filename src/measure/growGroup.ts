@@ -45,7 +45,22 @@ export function growGroup(
     fit = trial;
   }
   const grown = fit.components.length > starts.length ? pruned(samples, fit, width, price) : fit;
-  return withoutHiddenSpike(samples, grown, width, price, spikes);
+  return withoutHiddenSpike(samples, withoutCancelling(samples, grown, width), width, price, spikes);
+}
+
+/** An emission and an absorption component on top of each other, of like size, only cancel: both are artefacts of the fit. */
+const CANCELLING_FWHM = 0.8;
+const CANCELLING_SHARE = 0.5;
+
+/** The fit without the absorption half of such pairs. */
+function withoutCancelling(samples: FitSamples, fit: GroupFit, width: WidthPrior): GroupFit {
+  const cancels = (a: Component, b: Component) =>
+    a.flux < 0 &&
+    b.flux > 0 &&
+    Math.abs(a.centre - b.centre) < CANCELLING_FWHM * Math.max(a.sigma, b.sigma) * FWHM_PER_SIGMA &&
+    Math.min(-a.flux, b.flux) > CANCELLING_SHARE * Math.max(-a.flux, b.flux);
+  const kept = fit.components.filter((a) => !fit.components.some((b) => cancels(a, b)));
+  return kept.length === fit.components.length || kept.length === 0 ? fit : fitGroup(samples, fit.first, fit.last, kept, width);
 }
 
 /** A component is not tried without when the square of its S/N is this many times its price. */

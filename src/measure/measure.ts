@@ -67,6 +67,13 @@ export function measure(spectrum: Spectrum, settings: MeasureSettings, control: 
       },
     },
     spikes,
+    (share) =>
+      remarks.push({
+        code: 'not-gaussian',
+        weight: 'note',
+        where: { file: spectrum.name },
+        found: `strong lines are not Gaussian: ${(100 * share).toFixed(1)} % of them is left over by the fits, and was added to the noise near them`,
+      }),
   );
   const groups = fits.map((fit): Group => ({ first: fit.first, last: fit.last, chi2: fit.chi2, dof: fit.dof }));
   const model = Float64Array.from(state.continuum);

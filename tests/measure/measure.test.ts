@@ -36,6 +36,13 @@ describe('measuring', () => {
     for (const seed of [1, 2, 3, 4, 5]) expect(found(`R 4000; from 4000; to 7000; noise 2; wave 6; seed ${seed}`).real).toEqual([]);
   });
 
+  test('the wings of very strong lines breed no features, and the remark says by how much lines are no Gaussians', () => {
+    const strong = Array.from({ length: 6 }, (_, k) => `${4920 + 28 * k} 4000`).join('; ');
+    const { real, measurement } = found(`R 8000; ${strong}; noise 1; wings 0.03`);
+    expect(real.map((f) => Math.round(f.centroid))).toEqual([4920, 4948, 4976, 5004, 5032, 5060]);
+    expect(measurement.remarks.map((r) => r.code)).toContain('not-gaussian');
+  });
+
   test('calls a lone sample a spike, not a line', () => {
     const { real, features } = found('R 8000; 4950 80; 5000 100; 5050 90; spike 5020; noise 1');
     expect(real.map((f) => Math.round(f.centroid))).toEqual([4950, 5000, 5050]);

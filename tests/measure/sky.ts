@@ -7,7 +7,7 @@ export interface TrueLine {
   readonly flux: number;
 }
 
-/** A spectrum with its truth, from a line of words: `R 8000; 4959 33; 5007 100; noise 1; seed 3; from 4900; to 5100`. Continuum 100 unless said; no errors with `bare`. */
+/** A spectrum with its truth, from a line of words: `R 8000; 4959 33; 5007 100; noise 1; seed 3; from 4900; to 5100`. Continuum 100 unless said; no errors with `bare`; `wings 0.03` puts Lorentzian wings under every line. */
 export function sky(words: string): { spectrum: Spectrum; lines: TrueLine[]; fwhmAt: (w: number) => number } {
   const said = new Map<string, number>();
   const lines: TrueLine[] = [];
@@ -25,7 +25,10 @@ export function sky(words: string): { spectrum: Spectrum; lines: TrueLine[]; fwh
     let f = word('continuum', 100) + word('wave', 0) * Math.sin(w / 37);
     for (const { centre, flux: total } of lines) {
       const sigma = centre / r / 2.3548;
-      f += (total / (sigma * Math.sqrt(2 * Math.PI))) * Math.exp(-0.5 * ((w - centre) / sigma) ** 2);
+      const peak = total / (sigma * Math.sqrt(2 * Math.PI));
+      f += peak * Math.exp(-0.5 * ((w - centre) / sigma) ** 2);
+      // scattered light: Lorentzian wings of this share of the peak
+      f += (peak * word('wings', 0)) / (1 + ((w - centre) / (2 * sigma)) ** 2);
     }
     return f + noise * random.normal();
   });
