@@ -14,6 +14,9 @@ const FIRST_STRETCH_FWHM = 40;
 const FIRST_QUANTILE = 0.4;
 /** Period that the continuum follows by half, in FWHM: slower than any line, faster than dust bands and wiggles of the flat field. */
 const HALF_PERIOD_FWHM = 35;
+/** ... but at low resolution the wiggles of continua and flat fields set the pace, down to a few lines' width. */
+const MOST_HALF_PERIOD_A = 110;
+const LEAST_HALF_PERIOD_FWHM = 14;
 
 /**
  * Continuum under emission and absorption lines: penalised least squares over the samples that are not taken for lines, which are found anew in every pass.
@@ -22,14 +25,22 @@ const HALF_PERIOD_FWHM = 35;
  * @param noise  n, one sigma
  * @param usable n, 1 = may be used
  * @param fwhm   line width in samples at each sample, n
+ * @param sampleWidth Angstrom, n
  * @returns n values
  */
-export function fitContinuum(flux: Float64Array, noise: Float64Array, usable: Uint8Array, fwhm: Float64Array): Float64Array {
+export function fitContinuum(
+  flux: Float64Array,
+  noise: Float64Array,
+  usable: Uint8Array,
+  fwhm: Float64Array,
+  sampleWidth: Float64Array,
+): Float64Array {
   const n = flux.length;
   let continuum = firstEstimate(flux, usable, fwhm);
   const weight = new Float64Array(n);
   // one stiffness in a frame stretched to constant line width: sample spacing varies slowly against it
-  const period = HALF_PERIOD_FWHM * typical(fwhm);
+  const width = typical(fwhm);
+  const period = Math.max(LEAST_HALF_PERIOD_FWHM * width, Math.min(HALF_PERIOD_FWHM * width, MOST_HALF_PERIOD_A / typical(sampleWidth)));
   const stiffness = (period / (2 * Math.PI)) ** 4;
   const unit = typical(noise);
   for (const clip of CLIP_SIGMA) {

@@ -141,11 +141,11 @@ function prepare(spectrum: Spectrum, settings: MeasureSettings, remarks: Remark[
   );
   const resolvingPower = told ?? first.resolvingPower;
   const fwhm = Float64Array.from(x, (w, i) => Math.max(1.5, w / resolvingPower / sampleWidth[i]));
-  let continuum = fitContinuum(flux, noise, usable, fwhm);
+  let continuum = fitContinuum(flux, noise, usable, fwhm, sampleWidth);
   const noiseFactor = spectrum.fluxErr ? scatterOverNoise(flux, continuum, noise, usable) : undefined;
   if (noiseFactor !== undefined && Math.abs(noiseFactor - 1) > NOISE_AGREES) {
     for (let i = 0; i < n; i++) noise[i] *= noiseFactor;
-    continuum = fitContinuum(flux, noise, usable, fwhm);
+    continuum = fitContinuum(flux, noise, usable, fwhm, sampleWidth);
     remarks.push({
       code: 'errors-rescaled',
       weight: noiseFactor > 2 || noiseFactor < 0.5 ? 'warning' : 'note',
