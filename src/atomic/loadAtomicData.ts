@@ -15,7 +15,7 @@ const GROUND_TERM_CM1 = 1100;
  *
  * @param bytes `public/atomic.bin` as it stands on disk (not compressed); kept as the ground of the arrays, so leave it unchanged
  * @throws RangeError when the bytes are no bundle of this program's schema
- * Speed: tests/bench/atomicBench.ts. Checked in tests/atomic/loadAtomicData.test.ts.
+ * Speed: tests/bench/atomicBench.ts. Checked in tests/atomic/bundle.test.ts.
  */
 export function loadAtomicData(bytes: Uint8Array): AtomicData {
   const bundle = openBundle(bytes);

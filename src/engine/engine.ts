@@ -86,7 +86,7 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
       const namingSettings: NamingSettings = { ...DEFAULT_NAMING_SETTINGS, ...settings.naming, medium: what.reading.medium };
       const fixed = fixedNames(byFeature, list);
       const naming = await named.of([material.stamp(), measured.stamp(), namingSettings, fixed, settings.ownLines], () =>
-        run('naming', () => nameMarks(marks, list, namingSettings, fixed)),
+        run('naming', (progress) => nameMarks(marks, list, namingSettings, fixed, { progress, signal: control.signal })),
       );
       return assemble({
         data: list,

@@ -12,6 +12,7 @@ import { surveyOf } from './survey.ts';
 
 export interface NamingControl {
   readonly progress?: (share: number) => void;
+  /** Looked at between the stages: search for the redshift, inference, cases. */
   readonly signal?: AbortSignal;
 }
 
@@ -38,6 +39,7 @@ export function nameMarks(
   const survey = surveyOf(sorted);
   const given = settings.z !== undefined;
   const redshifts = given ? [{ z: settings.z ?? 0, zErr: 0, probability: 1, reason: 'given' }] : findRedshift(sorted, data, survey);
+  control.signal?.throwIfAborted();
   control.progress?.(0.3);
   if (!given && redshifts[0].probability < 0.9) {
     remarks.push({
@@ -53,6 +55,7 @@ export function nameMarks(
   }
   const fixedSorted = fixed.map((f) => ({ ...f, mark: place.get(f.mark) ?? f.mark }));
   const inferred = infer(sorted, data, settings, survey, redshifts[0].z, redshifts[0].zErr, fixedSorted);
+  control.signal?.throwIfAborted();
   control.progress?.(0.8);
   const kin = kinOf(data);
   const forced = new Set(fixedSorted.filter((f) => 'lines' in f).map((f) => f.mark));

@@ -49,13 +49,9 @@ export function fitPasses(samples: FitSamples, settings: PassSettings, spikes: n
     if (pass > 0 && found.length === 0) break;
     seeds = [...seeds, ...found].sort((a, b) => a.start.centre - b.start.centre);
     const windows = groupPeaks(seeds, fwhmAt, samples.x.length);
-    const next = new Map<string, GroupFit>();
     fits = windows.map((window, k) => {
       if (k % 16 === 0) settings.between((pass + k / windows.length) / PASSES);
-      const key = keyOf(window);
-      const fit = known.get(key) ?? growGroup(samples, window.first, window.last, startsOf(window), width, threshold, spikes);
-      next.set(key, fit);
-      return fit;
+      return known.get(keyOf(window)) ?? growGroup(samples, window.first, window.last, startsOf(window), width, threshold, spikes);
     });
     // what was fitted under a key may have gained components: the next pass knows it by them
     seeds = fits.flatMap((fit) => fit.components.map((c) => seedOf(samples, c)));

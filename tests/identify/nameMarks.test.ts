@@ -141,6 +141,12 @@ describe('little to go by', () => {
     expect(name([]).features).toEqual([]);
   });
 
+  test('an aborted run ends before the names are weighed', () => {
+    const stop = new AbortController();
+    stop.abort();
+    expect(() => nameMarks(nebula(), data, DEFAULT_NAMING_SETTINGS, [], { signal: stop.signal })).toThrow(/abort/i);
+  });
+
   test('spikes are never named', () => {
     const marks = nebula().map((m, k) => ({ ...m, artefact: k === 5 }));
     expect(name(marks).features[5].candidates).toEqual([]);

@@ -50,7 +50,7 @@ export function lineRatio(
  * @param upper index of the level both come from
  * @param over, under indices of their lower levels
  * @returns NaN when an A value is not known
- * [O III] and [N II] carry the relativistic A values of Storey & Zeippen 2000, MNRAS 312, 813. Checked in tests/reference/branchingRatios.test.ts.
+ * [O III] and [N II] carry the relativistic A values of Storey & Zeippen 2000, MNRAS 312, 813. Checked in tests/reference/lineRatios.test.ts.
  */
 export function branchingRatio(model: LevelModel, upper: number, over: number, under: number): number {
   const part = (lower: number) => decayRate(model, upper, lower) * photonErg(model, upper, lower);
