@@ -39,8 +39,10 @@ export const words = {
   shelf: {
     title: 'Spectra of this session',
     here: 'on the desk',
-    goTo: (name: string) => `Go to ${name}`,
-    close: (name: string) => `Close ${name}`,
+    goTo: 'Go to',
+    goToNamed: (name: string) => `Go to ${name}`,
+    close: 'Close',
+    closeNamed: (name: string) => `Close ${name}`,
     verdicts: (n: number) => (n === 1 ? '1 verdict' : `${n} verdicts`),
     more: (n: number) => `+ ${n} more`,
   },

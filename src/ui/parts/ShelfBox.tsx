@@ -22,11 +22,21 @@ export function ShelfBox() {
             <span>
               {other.source.name}, {label.verdicts(other.verdicts.length)}
             </span>
-            <button type="button" className="small" onClick={() => goToSpectrum(other.source)}>
-              {label.goTo(other.source.name)}
+            <button
+              type="button"
+              className="small"
+              aria-label={label.goToNamed(other.source.name)}
+              onClick={() => goToSpectrum(other.source)}
+            >
+              {label.goTo}
             </button>
-            <button type="button" className="small" onClick={() => closeSpectrum(other.source)}>
-              {label.close(other.source.name)}
+            <button
+              type="button"
+              className="small"
+              aria-label={label.closeNamed(other.source.name)}
+              onClick={() => closeSpectrum(other.source)}
+            >
+              {label.close}
             </button>
           </li>
         ))}
