@@ -35,6 +35,7 @@ export function featuresOfFit(samples: FitSamples, fit: GroupFit, facts: FitFact
     const fwhm = FWHM_PER_SIGMA * sigma;
     const fwhmErr = fwhm * err(3 * k + 2);
     const fluxErr = err(3 * k);
+    // the error of the continuum is that of the fit's offset: the noise under the line's own peak has no part in it
     const ew = continuum > 0 ? flux / continuum : Number.NaN;
     const narrow = isTooNarrow(fwhm, fwhmErr, centre, facts.spread);
     return [
@@ -50,9 +51,7 @@ export function featuresOfFit(samples: FitSamples, fit: GroupFit, facts: FitFact
         fwhmErr,
         ...intrinsicWidth(centre, fwhm, fwhmErr, facts.spread),
         ew,
-        ewErr: Number.isFinite(ew)
-          ? Math.hypot(fluxErr / continuum, (ew * samples.noise[at]) / continuum / Math.sqrt(Math.max(1, fit.last - fit.first)))
-          : Number.NaN,
+        ewErr: Math.abs(ew) * Math.hypot(fluxErr / flux, err(size - 2) / continuum),
         snr,
         continuum,
         group: facts.group,

@@ -91,6 +91,16 @@ describe('measuring', () => {
     expect(feature?.ew).toBeLessThan(2.1);
   });
 
+  test('the error of an equivalent width does not take the photons of a bright line for noise of the continuum', () => {
+    const { spectrum } = sky('R 8000; 5000 4000; 4950 60; 5050 80; noise 1');
+    const photons = { ...spectrum, fluxErr: spectrum.flux.map((f) => Math.sqrt(1 + 0.2 * Math.max(0, f - 100))) };
+    const feature = measure(photons, DEFAULT_MEASURE_SETTINGS).features.find((f) => Math.abs(f.centroid - 5000) < 0.5);
+    // 4000 over 100; the continuum is known to about 1 in 100 samples of noise 1
+    expect(feature?.ew).toBeCloseTo(40, 0);
+    expect((feature?.ewErr ?? 1) / (feature?.ew ?? 1)).toBeGreaterThan(0.0005);
+    expect((feature?.ewErr ?? 1) / (feature?.ew ?? 1)).toBeLessThan(0.02);
+  });
+
   test('refuses a spectrum of too few samples in words', () => {
     const { spectrum } = sky('R 8000; noise 1; from 5000; to 5002');
     expect(() => measure(spectrum, DEFAULT_MEASURE_SETTINGS)).toThrow(ProblemError);
