@@ -1,8 +1,9 @@
 import { FWHM_PER_SIGMA, SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import type { Feature, FitEnd, Group } from './feature.ts';
-import { type FitSamples, firstAtLeast, type GroupFit } from './fitGroup.ts';
+import type { GroupFit } from './fitGroup.ts';
+import type { FitSamples } from './fitSamples.ts';
 import type { LineSpread } from './lineSpread.ts';
-import { gaussianInto } from './profile.ts';
+import { firstAtLeast, gaussianInto, isUnderSampled, PROFILE_REACH } from './profile.ts';
 
 /** A fitted line narrower than this share of the usual width is no line of the instrument ... */
 const TOO_NARROW = 0.5;
@@ -71,9 +72,14 @@ function isTooNarrow(fwhm: number, fwhmErr: number, centre: number, spread: Line
 function amplitudeErr(samples: FitSamples, fit: GroupFit, centre: number, sigma: number): number {
   const profile = { value: 0, byCentre: 0, bySigma: 0 };
   let information = 0;
-  for (let i = fit.first; i <= fit.last; i++) {
+  const to = centre + (PROFILE_REACH + 1) * sigma;
+  for (
+    let i = firstAtLeast(samples.x, centre - (PROFILE_REACH + 1) * sigma, fit.first, fit.last + 1);
+    i <= fit.last && samples.x[i] <= to;
+    i++
+  ) {
     if (!samples.usable[i]) continue;
-    gaussianInto(profile, samples.x[i], FWHM_PER_SIGMA * sigma < 4 * samples.sampleWidth[i] ? samples.sampleWidth[i] : 0, centre, sigma);
+    gaussianInto(profile, samples.x[i], isUnderSampled(sigma, samples.sampleWidth[i]) ? samples.sampleWidth[i] : 0, centre, sigma);
     information += (profile.value / samples.noise[i]) ** 2;
   }
   return 1 / Math.sqrt(information);

@@ -1,11 +1,15 @@
 import { FWHM_PER_SIGMA } from '../units/index.ts';
-import { addProfiles, type Component, type FitSamples, firstAtLeast, fitGroup, type GroupFit, type WidthPrior } from './fitGroup.ts';
+import { addLocalContinuum, addProfiles } from './addProfiles.ts';
+import { fitGroup, type GroupFit } from './fitGroup.ts';
+import type { Component, FitSamples, Stretch, WidthPrior } from './fitSamples.ts';
 import { groupPeaks, type Window } from './groups.ts';
 import { growGroup } from './growGroup.ts';
+import { sigmaInSamples } from './lineSpread.ts';
 import { matchedFilter } from './matchedFilter.ts';
 import { addMisfit, misfitOf } from './misfit.ts';
 import { findPeaks, type Peak } from './peaks.ts';
 import { withoutPlateaus } from './plateau.ts';
+import { firstAtLeast } from './profile.ts';
 
 /** What the passes need beside the samples. */
 export interface PassSettings {
@@ -37,65 +41,101 @@ const OWN_FWHM = 0.7;
  */
 export function fitPasses(samples: FitSamples, settings: PassSettings, spikes: number[], misfit: (share: number) => void): GroupFit[] {
   const { width, threshold } = settings;
-  const sigma = samples.x.map((w, i) => width.sigmaAt(w) / samples.sampleWidth[i]);
+  const sigma = sigmaInSamples(samples, width);
   const fwhmAt = (i: number) => FWHM_PER_SIGMA * sigma[i];
+  const n = samples.x.length;
+  let found = seedsIn(samples, samples.y, settings, sigma, []);
+  const alone = forgiveMisfit(samples, groupPeaks(found, fwhmAt, n), width, misfit);
+  if (alone) found = found.map((seed) => alone.get(seed) ?? seed);
+  else found = seedsIn(samples, samples.y, settings, sigma, []);
   let fits: GroupFit[] = [];
   let known = new Map<string, GroupFit>();
-  let residual = samples.y;
   let seeds: Seed[] = [];
-  forgiveMisfit(samples, groupPeaks(seedsIn(samples, residual, settings, sigma, []), fwhmAt, samples.x.length), width, misfit);
   for (let pass = 0; pass < PASSES; pass++) {
-    const found = seedsIn(samples, residual, settings, sigma, seeds);
-    if (pass > 0 && found.length === 0) break;
+    if (pass > 0) {
+      found = seedsIn(samples, residualOf(samples, fits), settings, sigma, seeds, fits);
+      if (found.length === 0) break;
+    }
     seeds = [...seeds, ...found].sort((a, b) => a.start.centre - b.start.centre);
-    const windows = groupPeaks(seeds, fwhmAt, samples.x.length);
+    const windows = groupPeaks(seeds, fwhmAt, n);
     fits = windows.map((window, k) => {
       if (k % 16 === 0) settings.between((pass + k / windows.length) / PASSES);
       return known.get(keyOf(window)) ?? growGroup(samples, window.first, window.last, startsOf(window), width, threshold, spikes);
     });
     // what was fitted under a key may have gained components: the next pass knows it by them
     seeds = fits.flatMap((fit) => fit.components.map((c) => seedOf(samples, c)));
+    const byStretch = new Map(fits.map((fit) => [stretchKey(fit), fit]));
     known = new Map(
-      groupPeaks(seeds, fwhmAt, samples.x.length).flatMap((window): [string, GroupFit][] => {
-        const fit = fits.find((f) => f.first === window.first && f.last === window.last && f.components.length === window.peaks.length);
-        return fit ? [[keyOf(window), fit]] : [];
+      groupPeaks(seeds, fwhmAt, n).flatMap((window): [string, GroupFit][] => {
+        const fit = byStretch.get(stretchKey(window));
+        return fit && fit.components.length === window.peaks.length ? [[keyOf(window), fit]] : [];
       }),
     );
-    residual = residualOf(samples, fits);
   }
   return fits.map((fit) => withoutPlateaus(samples, fit, width)).filter((fit) => fit.components.length > 0);
 }
 
-/** Peaks of the S/N map of a residual that no seed stands for yet. */
+/**
+ * Peaks of the S/N map of a residual that no seed stands for yet.
+ *
+ * @param where only there has anything changed since the last search; absent = everywhere
+ */
 function seedsIn(
   samples: FitSamples,
   residual: Float64Array,
   { width, threshold, absorption }: PassSettings,
   sigma: Float64Array,
   known: readonly Seed[],
+  where?: readonly Stretch[],
 ): Seed[] {
-  const snr = matchedFilter(residual, samples.noise, samples.usable, sigma, threshold);
+  const snr = matchedFilter(residual, samples.noise, samples.usable, sigma, threshold, where);
   return findPeaks(snr, threshold, absorption)
-    .filter((peak) => known.every((s) => Math.abs(s.at - peak.at) > OWN_FWHM * FWHM_PER_SIGMA * sigma[peak.at]))
+    .filter((peak) => isFree(known, samples.x[peak.at], OWN_FWHM * FWHM_PER_SIGMA * width.sigmaAt(samples.x[peak.at])))
     .map((peak) => ({ ...peak, start: startOf(samples, residual, peak, width) }));
+}
+
+/** Whether no seed (ascending) stands nearer than `reach`, Angstrom. */
+function isFree(seeds: readonly Seed[], at: number, reach: number): boolean {
+  let low = 0;
+  let high = seeds.length;
+  while (low < high) {
+    const mid = (low + high) >> 1;
+    if (seeds[mid].start.centre < at - reach) low = mid + 1;
+    else high = mid;
+  }
+  return low === seeds.length || seeds[low].start.centre > at + reach;
 }
 
 /** Another peak of a window below this share of the strongest one's S/N may be its wing. */
 const WING_SHARE = 0.08;
 
-/** Fits the lines that stand alone, but for what may be their own wings, by one Gaussian each, and takes into the noise what that leaves over. */
-function forgiveMisfit(samples: FitSamples, windows: readonly Window<Seed>[], width: WidthPrior, misfit: (share: number) => void): void {
+/**
+ * Fits the lines that stand alone, but for what may be their own wings, by one Gaussian each, and takes into the noise what that leaves over.
+ *
+ * @returns when nothing is left over: seeds improved by these fits; absent when the noise has changed
+ */
+function forgiveMisfit(
+  samples: FitSamples,
+  windows: readonly Window<Seed>[],
+  width: WidthPrior,
+  misfit: (share: number) => void,
+): Map<Seed, Seed> | undefined {
   const strongest = ({ peaks }: Window<Seed>) => peaks.reduce((a, b) => (Math.abs(b.snr) > Math.abs(a.snr) ? b : a));
   const isAlone = (window: Window<Seed>) =>
     window.peaks.every((p) => p === strongest(window) || Math.abs(p.snr) < WING_SHARE * Math.abs(strongest(window).snr));
   const fitOf = (window: Window<Seed>, starts: readonly Component[]) => fitGroup(samples, window.first, window.last, starts, width);
-  const alone = windows.filter(isAlone).map((window) => fitOf(window, [strongest(window).start]));
+  const windowsAlone = windows.filter(isAlone);
+  const alone = windowsAlone.map((window) => fitOf(window, [strongest(window).start]));
   const left = misfitOf(samples, alone);
-  if (Math.max(left.core, left.wing) <= LEAST_MISFIT) return;
+  if (Math.max(left.core, left.wing) <= LEAST_MISFIT)
+    return new Map(windowsAlone.map((window, k) => [strongest(window), { ...strongest(window), start: alone[k].components[0] }]));
   const crowds = windows.filter((window) => !isAlone(window)).map((window) => fitOf(window, startsOf(window)));
   addMisfit(samples, [...alone, ...crowds], left);
   misfit(Math.max(left.core, left.wing));
+  return undefined;
 }
+
+const stretchKey = ({ first, last }: Stretch) => `${first} ${last}`;
 
 const startsOf = (window: Window<Seed>) => window.peaks.map((peak) => peak.start);
 
@@ -120,7 +160,11 @@ function startOf(samples: FitSamples, residual: Float64Array, peak: Peak, width:
 }
 
 function residualOf(samples: FitSamples, fits: readonly GroupFit[]): Float64Array {
-  const model = new Float64Array(samples.x.length);
-  for (const fit of fits) addProfiles(samples, fit.components, model, { fit, into: model });
-  return samples.y.map((y, i) => y - model[i]);
+  const residual = new Float64Array(samples.x.length);
+  for (const fit of fits) {
+    addProfiles(samples, fit.components, residual);
+    addLocalContinuum(samples, fit, residual);
+  }
+  for (let i = 0; i < residual.length; i++) residual[i] = samples.y[i] - residual[i];
+  return residual;
 }

@@ -1,5 +1,8 @@
 import { FWHM_PER_SIGMA } from '../units/index.ts';
-import { addProfiles, type Component, type FitSamples, fitGroup, type GroupFit, type WidthPrior } from './fitGroup.ts';
+import { addLocalContinuum, addProfiles } from './addProfiles.ts';
+import { fitGroup, type GroupFit } from './fitGroup.ts';
+import type { Component, FitSamples, WidthPrior } from './fitSamples.ts';
+import { sigmaInSamples } from './lineSpread.ts';
 import { matchedFilter } from './matchedFilter.ts';
 
 /** Components that one group may gain beyond its peaks. */
@@ -145,11 +148,11 @@ function mergeClose(starts: readonly Component[], width: WidthPrior): Component[
 
 /** Residual of the window, one value a sample of it. */
 function residualOf(samples: FitSamples, fit: GroupFit): Float64Array {
-  const model = new Float64Array(fit.last - fit.first + 1);
   const window = windowOf(samples, fit);
-  const offset = new Float64Array(model.length);
-  addProfiles(window, fit.components, model, { fit: { ...fit, first: 0, last: model.length - 1 }, into: offset });
-  for (let i = 0; i < model.length; i++) model[i] = window.y[i] - model[i] - offset[i];
+  const model = new Float64Array(window.x.length);
+  addProfiles(window, fit.components, model);
+  addLocalContinuum(window, { ...fit, first: 0, last: model.length - 1 }, model);
+  for (let i = 0; i < model.length; i++) model[i] = window.y[i] - model[i];
   return model;
 }
 
@@ -194,6 +197,9 @@ function loneSpike(samples: FitSamples, fit: GroupFit, residual: Float64Array): 
   return worst === undefined ? undefined : fit.first + worst;
 }
 
+/** The residual of a blend taken for one line is smaller than the second line itself: less than the threshold, by this share, is tried. */
+const TRIED_SHARE = 0.6;
+
 function bestAddition(
   samples: FitSamples,
   fit: GroupFit,
@@ -202,16 +208,15 @@ function bestAddition(
   threshold: number,
 ): Component | undefined {
   const window = windowOf(samples, fit);
-  const sigma = window.x.map((w, i) => width.sigmaAt(w) / window.sampleWidth[i]);
-  const snr = matchedFilter(residual, window.noise, window.usable, sigma);
+  const sigma = sigmaInSamples(window, width);
+  const snr = matchedFilter(residual, window.noise, window.usable, sigma, TRIED_SHARE * threshold);
   let best = -1;
   const margin = Math.ceil(MARGIN_SIGMA * sigma[0]);
   for (let i = margin; i < snr.length - margin; i++) {
     const peak = snr[i] >= snr[i - 1] && snr[i] >= snr[i + 1];
     if (peak && window.usable[i] && (best < 0 || snr[i] > snr[best])) best = i;
   }
-  // the residual of a blend taken for one line is smaller than the second line itself: look at less than the threshold
-  if (best < 0 || snr[best] < 0.6 * threshold) return undefined;
+  if (best < 0 || snr[best] < TRIED_SHARE * threshold) return undefined;
   const s = width.sigmaAt(window.x[best]);
   return { flux: Math.max(residual[best], window.noise[best]) * s * Math.sqrt(2 * Math.PI), centre: window.x[best], sigma: s };
 }

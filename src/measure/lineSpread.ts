@@ -1,5 +1,6 @@
 import { quantile, robustSigma } from '../numeric/index.ts';
 import { FWHM_PER_SIGMA } from '../units/index.ts';
+import type { FitSamples, WidthPrior } from './fitSamples.ts';
 
 /** Line width as the fits expect it: constant resolving power, with the scatter of ln(width) seen on isolated lines. */
 export interface LineSpread {
@@ -11,6 +12,13 @@ export interface LineSpread {
 }
 
 export const sigmaAt = (resolvingPower: number, wavelength: number) => wavelength / (resolvingPower * FWHM_PER_SIGMA);
+
+/** The expected width of a line in samples, one value a sample. */
+export function sigmaInSamples({ x, sampleWidth }: FitSamples, width: WidthPrior): Float64Array {
+  const sigma = new Float64Array(x.length);
+  for (let i = 0; i < x.length; i++) sigma[i] = width.sigmaAt(x[i]) / sampleWidth[i];
+  return sigma;
+}
 
 /** Peaks must stand out this far, in units of the noise, to show their width by their half height. */
 const TALL_SIGMA = 12;

@@ -1,3 +1,5 @@
+import type { Stretch } from './fitSamples.ts';
+
 /** Profiles are cut at three sigma, and never wider than this, samples. */
 const CUT_SIGMA = 3;
 const MOST_REACH = 400;
@@ -15,6 +17,7 @@ const BOX_HALF_SIGMA = 1.4;
  * @param usable    n, 1 = may be used
  * @param sigma     n, of the profile, in samples
  * @param threshold places that cannot reach this S/N may be left at 0; 0 = compute every place
+ * @param where     places to compute; absent = all
  * @returns n; positive for emission; 0 where less than two fifths of the profile's information is usable
  */
 export function matchedFilter(
@@ -23,31 +26,53 @@ export function matchedFilter(
   usable: Uint8Array,
   sigma: Float64Array,
   threshold = 0,
+  where: readonly Stretch[] = [{ first: 0, last: residual.length - 1 }],
 ): Float64Array {
-  const n = residual.length;
-  const snr = new Float64Array(n);
-  // weights and weighted residuals once, with nothing where a sample cannot be used
+  const snr = new Float64Array(residual.length);
+  for (const { first, last } of where) filterStretch(residual, noise, usable, sigma, threshold, first, last, snr);
+  return snr;
+}
+
+function filterStretch(
+  residual: Float64Array,
+  noise: Float64Array,
+  usable: Uint8Array,
+  sigma: Float64Array,
+  threshold: number,
+  first: number,
+  last: number,
+  into: Float64Array,
+): void {
+  // with the surroundings that the profile reaches into
+  const widest = Math.min(MOST_REACH, Math.ceil(CUT_SIGMA * Math.max(sigma[first], sigma[last]))) + 1;
+  const from = Math.max(0, first - widest);
+  const n = Math.min(residual.length - 1, last + widest) - from + 1;
+  // weights and weighted residuals once, with nothing where a sample cannot be used; their running sums for the boxcar
   const ivar = new Float64Array(n);
   const pull = new Float64Array(n);
+  const ivars = new Float64Array(n + 1);
+  const pulls = new Float64Array(n + 1);
   for (let j = 0; j < n; j++) {
-    if (!usable[j]) continue;
-    const w = 1 / (noise[j] * noise[j]);
-    ivar[j] = w;
-    pull[j] = w * residual[j];
-  }
-  const worth = threshold > 0 ? placesWorth(pull, ivar, sigma, WORTH * threshold) : undefined;
-  let kernel = new Float64Array(0);
-  let squares = new Float64Array(0);
-  let kernelSigma = 0;
-  let whole = 0;
-  for (let i = 0; i < n; i++) {
-    if (worth && !worth[i]) continue;
-    if (Math.abs(sigma[i] - kernelSigma) > 0.02 * kernelSigma) {
-      kernelSigma = sigma[i];
-      kernel = halfKernel(kernelSigma);
-      squares = kernel.map((g) => g * g);
-      whole = squares.reduce((sum, g, k) => sum + (k === 0 ? g : 2 * g), 0);
+    if (usable[from + j]) {
+      const w = 1 / (noise[from + j] * noise[from + j]);
+      ivar[j] = w;
+      pull[j] = w * residual[from + j];
     }
+    ivars[j + 1] = ivars[j] + ivar[j];
+    pulls[j + 1] = pulls[j] + pull[j];
+  }
+  const least = (WORTH * threshold) ** 2;
+  let { step, kernel, squares, whole } = kernelOf(kernelStep(sigma[first]));
+  for (let i = first - from; i <= last - from; i++) {
+    const s = sigma[from + i];
+    if (least > 0) {
+      const half = Math.floor(BOX_HALF_SIGMA * s);
+      const low = Math.max(0, i - half);
+      const high = Math.min(n, i + half + 1);
+      const boxed = pulls[high] - pulls[low];
+      if (!(boxed * boxed > least * (ivars[high] - ivars[low]))) continue;
+    }
+    if (Math.abs(kernelStep(s) - step) > 1) ({ step, kernel, squares, whole } = kernelOf(kernelStep(s)));
     let signal = pull[i];
     let weight = ivar[i];
     const left = Math.min(kernel.length - 1, i);
@@ -65,31 +90,32 @@ export function matchedFilter(
       signal += kernel[k] * pull[i + k];
       weight += squares[k] * ivar[i + k];
     }
-    snr[i] = weight * noise[i] * noise[i] > LEAST_INFORMATION * whole ? signal / Math.sqrt(weight) : 0;
+    into[from + i] = weight * noise[from + i] * noise[from + i] > LEAST_INFORMATION * whole ? signal / Math.sqrt(weight) : 0;
   }
-  return snr;
 }
 
-/** The profile from its centre outwards, 1 at the centre. */
-const halfKernel = (sigma: number) =>
-  Float64Array.from({ length: Math.min(MOST_REACH, Math.ceil(CUT_SIGMA * sigma)) + 1 }, (_, k) => Math.exp((-0.5 * k * k) / sigma ** 2));
+/** The profile from its centre outwards, 1 at the centre; its squares; the sum of all of these. */
+interface Kernel {
+  readonly step: number;
+  readonly kernel: Float64Array;
+  readonly squares: Float64Array;
+  readonly whole: number;
+}
 
-/** 1 where a boxcar about as wide as the profile shows at least `least` S/N, from running sums. */
-function placesWorth(pull: Float64Array, ivar: Float64Array, sigma: Float64Array, least: number): Uint8Array {
-  const n = pull.length;
-  const pulls = new Float64Array(n + 1);
-  const ivars = new Float64Array(n + 1);
-  for (let i = 0; i < n; i++) {
-    pulls[i + 1] = pulls[i] + pull[i];
-    ivars[i + 1] = ivars[i] + ivar[i];
-  }
-  const worth = new Uint8Array(n);
-  for (let i = 0; i < n; i++) {
-    const half = Math.floor(BOX_HALF_SIGMA * sigma[i]);
-    const from = Math.max(0, i - half);
-    const to = Math.min(n, i + half + 1);
-    const weight = ivars[to] - ivars[from];
-    if (weight > 0 && Math.abs(pulls[to] - pulls[from]) >= least * Math.sqrt(weight)) worth[i] = 1;
-  }
-  return worth;
+/** Widths are rounded to this share: a filter wrong by it loses nothing. */
+const KERNEL_STEP = 0.02;
+const kernelStep = (sigma: number) => Math.round(Math.log(sigma) / KERNEL_STEP);
+/** Every width is computed once. */
+const kernels = new Map<number, Kernel>();
+
+function kernelOf(step: number): Kernel {
+  const known = kernels.get(step);
+  if (known) return known;
+  const sigma = Math.exp(step * KERNEL_STEP);
+  const kernel = new Float64Array(Math.min(MOST_REACH, Math.ceil(CUT_SIGMA * sigma)) + 1);
+  for (let k = 0; k < kernel.length; k++) kernel[k] = Math.exp((-0.5 * k * k) / sigma ** 2);
+  const squares = kernel.map((g) => g * g);
+  const made = { step, kernel, squares, whole: squares.reduce((sum, g, k) => sum + (k === 0 ? g : 2 * g), 0) };
+  kernels.set(step, made);
+  return made;
 }

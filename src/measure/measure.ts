@@ -2,11 +2,13 @@ import { median, normalTail, robustSigma } from '../numeric/index.ts';
 import { ProblemError, type Remark } from '../problems/index.ts';
 import { countUsable, type Spectrum } from '../spectrum/index.ts';
 import { FWHM_PER_SIGMA } from '../units/index.ts';
+import { addLocalContinuum, addProfiles } from './addProfiles.ts';
 import { fitContinuum } from './continuum.ts';
 import type { Feature, Group, Measurement, MeasureSettings } from './feature.ts';
 import { artefactFeature, featuresOfFit } from './featuresOfFit.ts';
-import { addProfiles, type Component, type FitSamples, fitGroup, type WidthPrior } from './fitGroup.ts';
+import { fitGroup } from './fitGroup.ts';
 import { fitPasses } from './fitPasses.ts';
+import type { Component, FitSamples, WidthPrior } from './fitSamples.ts';
 import { groupPeaks } from './groups.ts';
 import { type LineSpread, sigmaAt, spreadOfLines, widthOfTallPeaks } from './lineSpread.ts';
 import { matchedFilter } from './matchedFilter.ts';
@@ -77,7 +79,10 @@ export function measure(spectrum: Spectrum, settings: MeasureSettings, control: 
   );
   const groups = fits.map((fit): Group => ({ first: fit.first, last: fit.last, chi2: fit.chi2, dof: fit.dof }));
   const model = Float64Array.from(state.continuum);
-  for (const fit of fits) addProfiles(state.samples, fit.components, model, { fit, into: model });
+  for (const fit of fits) {
+    addProfiles(state.samples, fit.components, model);
+    addLocalContinuum(state.samples, fit, model);
+  }
   const features = fits.flatMap((fit, group): Feature[] =>
     featuresOfFit(state.samples, fit, {
       continuum: state.continuum,

@@ -1,6 +1,9 @@
 import { quantile } from '../numeric/index.ts';
 import { FWHM_PER_SIGMA } from '../units/index.ts';
-import { addProfiles, type FitSamples, firstAtLeast, type GroupFit } from './fitGroup.ts';
+import { addLocalContinuum, addProfiles } from './addProfiles.ts';
+import type { GroupFit } from './fitGroup.ts';
+import type { FitSamples } from './fitSamples.ts';
+import { firstAtLeast } from './profile.ts';
 
 /** How far the instrument's profile is from a Gaussian, as shares of a line's peak. */
 export interface Misfit {
@@ -37,7 +40,10 @@ export function misfitOf(samples: FitSamples, fits: readonly GroupFit[]): Misfit
     .slice(0, MOST_TELLING);
   if (lines.length < FEWEST_TELLING) return { core: 0, wing: 0 };
   const model = new Float64Array(x.length);
-  for (const fit of new Set(lines.map((l) => l.fit))) addProfiles(samples, fit.components, model, { fit, into: model });
+  for (const fit of new Set(lines.map((l) => l.fit))) {
+    addProfiles(samples, fit.components, model);
+    addLocalContinuum(samples, fit, model);
+  }
   const rms = (low: number, high: number) =>
     lines.map(({ centre, sigma, peak }) => {
       const fwhm = FWHM_PER_SIGMA * sigma;

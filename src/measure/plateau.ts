@@ -1,6 +1,10 @@
 import { erfc, solveLinear } from '../numeric/index.ts';
 import { FWHM_PER_SIGMA } from '../units/index.ts';
-import { addProfiles, type Component, type FitSamples, firstAtLeast, fitGroup, type GroupFit, type WidthPrior } from './fitGroup.ts';
+import { addProfiles } from './addProfiles.ts';
+import { fitGroup, type GroupFit } from './fitGroup.ts';
+import type { Component, FitSamples, WidthPrior } from './fitSamples.ts';
+import { spanOf } from './groupEquations.ts';
+import { firstAtLeast } from './profile.ts';
 
 /** Components of a plateau differ by no more than this in flux ... */
 const ALIKE = 3;
@@ -13,7 +17,7 @@ const SURROUNDINGS_FWHM = 4;
 /** Edges are sought this far beyond the outermost components, on a grid of so many places. */
 const EDGE_REACH_FWHM = 1.6;
 const EDGES = 16;
-/** Height and slope of the box, offset and slope of the line below. */
+/** Heights of the two edges, offset and slope of the line below. */
 const BOX_UNKNOWNS = 4;
 
 /**
@@ -86,55 +90,102 @@ function isPlateau(samples: FitSamples, fit: GroupFit, row: readonly Component[]
   for (let i = 0; i < others.length; i++) window.y[i] -= others[i];
   const price = Math.log(others.length);
   const n = others.length - 1;
-  const box = bestBoxChi2(window, { first: 0, last: n }, row[0].centre, row[row.length - 1].centre, width.sigmaAt(row[0].centre), fwhm);
+  const box = bestBoxChi2(window, row[0].centre, row[row.length - 1].centre, width.sigmaAt(row[0].centre), fwhm);
   const asLines = fitGroup(window, 0, n, row, width).chi2;
   return box + BOX_UNKNOWNS * price < asLines + 3 * row.length * price;
 }
 
 /** chi2 of the best box: its edges on a grid outside the outermost components, everything else by linear least squares. */
-function bestBoxChi2(
-  samples: FitSamples,
-  { first, last }: { first: number; last: number },
-  left: number,
-  right: number,
-  sigma: number,
-  fwhm: number,
-): number {
+function bestBoxChi2(samples: FitSamples, left: number, right: number, sigma: number, fwhm: number): number {
   const step = (EDGE_REACH_FWHM * fwhm) / EDGES;
   const places = Array.from({ length: EDGES + 1 }, (_, k) => k * step);
-  const rising = places.map((p) => edge(samples.x, first, last, left - p, sigma));
-  const falling = places.map((p) => edge(samples.x, first, last, right + p, sigma));
+  const weighed = weigh(samples);
+  const rising = places.map((p) => edgeSums(weighed, edge(samples.x, left - p, sigma)));
+  const falling = places.map((p) => edgeSums(weighed, edge(samples.x, right + p, sigma)));
   let best = Number.POSITIVE_INFINITY;
-  for (const up of rising) for (const down of falling) best = Math.min(best, boxChi2(samples, first, last, up, down));
+  for (const up of rising) for (const down of falling) best = Math.min(best, boxChi2(weighed, up, down));
   return best;
 }
 
-/** A step from 0 to 1 as soft as the instrument, one value a sample of the window. */
-const edge = (x: Float64Array, first: number, last: number, at: number, sigma: number) =>
-  x.subarray(first, last + 1).map((w) => 0.5 * erfc((at - w) / (sigma * Math.SQRT2)));
-
-/** chi2 of a box with a sloping top on a straight line: linear least squares in four unknowns. */
-function boxChi2({ x, y, noise, usable }: FitSamples, first: number, last: number, up: Float64Array, down: Float64Array): number {
-  const middle = 0.5 * (x[first] + x[last]);
-  const half = 0.5 * (x[last] - x[first]);
-  const m = new Float64Array(BOX_UNKNOWNS * BOX_UNKNOWNS);
-  const v = new Float64Array(BOX_UNKNOWNS);
-  const row = new Float64Array(BOX_UNKNOWNS);
-  let total = 0;
-  for (let i = first; i <= last; i++) {
-    if (!usable[i]) continue;
-    const w = 1 / (noise[i] * noise[i]);
-    row[0] = up[i - first] - down[i - first];
-    row[1] = 1;
-    row[2] = (x[i] - middle) / half;
-    row[3] = row[0] * row[2];
-    for (let a = 0; a < BOX_UNKNOWNS; a++) {
-      v[a] += w * row[a] * y[i];
-      for (let b = 0; b < BOX_UNKNOWNS; b++) m[BOX_UNKNOWNS * a + b] += w * row[a] * row[b];
-    }
-    total += w * y[i] * y[i];
+/** A step from 0 to 1 as soft as the instrument, one value a sample. */
+function edge(x: Float64Array, at: number, sigma: number): Float64Array {
+  const values = new Float64Array(x.length);
+  for (let i = 0; i < x.length; i++) {
+    const z = (at - x[i]) / (sigma * Math.SQRT2);
+    // beyond four sigma and a bit an edge is 0 or 1 to the last digit that matters
+    values[i] = z > 3 ? 0 : z < -3 ? 1 : 0.5 * erfc(z);
   }
-  const before = Float64Array.from(v);
+  return values;
+}
+
+/** Weights of the samples and what boxes have in common. */
+interface Weighed {
+  readonly y: Float64Array;
+  /** 1 / variance; 0 where a sample may not be used. */
+  readonly w: Float64Array;
+  /** -1 ... 1 along the window. */
+  readonly u: Float64Array;
+  /** Sums of w u^k, k = 0, 1, 2; of w y, w y u; of w y y. */
+  readonly sums: readonly number[];
+}
+
+function weigh({ x, y, noise, usable }: FitSamples): Weighed {
+  const n = x.length;
+  const w = new Float64Array(n);
+  const u = new Float64Array(n);
+  const sums = [0, 0, 0, 0, 0, 0];
+  const { middle, half } = spanOf(x, 0, n - 1);
+  for (let i = 0; i < n; i++) {
+    u[i] = (x[i] - middle) / half;
+    if (!usable[i]) continue;
+    w[i] = 1 / (noise[i] * noise[i]);
+    sums[0] += w[i];
+    sums[1] += w[i] * u[i];
+    sums[2] += w[i] * u[i] * u[i];
+    sums[3] += w[i] * y[i];
+    sums[4] += w[i] * y[i] * u[i];
+    sums[5] += w[i] * y[i] * y[i];
+  }
+  return { y, w, u, sums };
+}
+
+/** An edge e with the sums of w e, w e u, w e e and w e y. */
+interface Edge {
+  readonly e: Float64Array;
+  readonly sum: number;
+  readonly slope: number;
+  readonly square: number;
+  readonly data: number;
+}
+
+function edgeSums({ y, w, u }: Weighed, e: Float64Array): Edge {
+  let sum = 0;
+  let slope = 0;
+  let square = 0;
+  let data = 0;
+  for (let i = 0; i < e.length; i++) {
+    const we = w[i] * e[i];
+    if (we === 0) continue;
+    sum += we;
+    slope += we * u[i];
+    square += we * e[i];
+    data += we * y[i];
+  }
+  return { e, sum, slope, square, data };
+}
+
+/** chi2 of a step up and a step down, each with its own height, on a straight line: linear least squares. */
+function boxChi2({ w, sums }: Weighed, up: Edge, down: Edge): number {
+  let cross = 0;
+  for (let i = 0; i < w.length; i++) cross += w[i] * up.e[i] * down.e[i];
+  const m = Float64Array.from([
+    ...[up.square, cross, up.sum, up.slope],
+    ...[cross, down.square, down.sum, down.slope],
+    ...[up.sum, down.sum, sums[0], sums[1]],
+    ...[up.slope, down.slope, sums[1], sums[2]],
+  ]);
+  const before = [up.data, down.data, sums[3], sums[4]];
+  const v = Float64Array.from(before);
   if (!solveLinear(m, v)) return Number.POSITIVE_INFINITY;
-  return v.reduce((chi2, value, k) => chi2 - value * before[k], total);
+  return v.reduce((chi2, value, k) => chi2 - value * before[k], sums[5]);
 }

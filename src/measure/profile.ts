@@ -1,6 +1,9 @@
-import { erfc } from '../numeric/index.ts';
+import { erfc, expOfNegative } from '../numeric/index.ts';
+import { FWHM_PER_SIGMA } from '../units/index.ts';
 
-const ROOT_2PI = Math.sqrt(2 * Math.PI);
+export const ROOT_2PI = Math.sqrt(2 * Math.PI);
+/** Lines narrower than this (FWHM in samples) are fitted with the profile averaged over each sample. */
+export const UNDERSAMPLED_FWHM = 4;
 /** Beyond this many sigma a profile is nothing. */
 export const PROFILE_REACH = 6;
 
@@ -26,7 +29,7 @@ export function gaussianInto(into: ProfileValue, x: number, width: number, centr
     return;
   }
   if (width === 0) {
-    const value = Math.exp(-0.5 * z * z) / (sigma * ROOT_2PI);
+    const value = expOfNegative(0.5 * z * z) / (sigma * ROOT_2PI);
     into.value = value;
     into.byCentre = (value * z) / sigma;
     into.bySigma = (value * (z * z - 1)) / sigma;
@@ -35,9 +38,24 @@ export function gaussianInto(into: ProfileValue, x: number, width: number, centr
   const half = width / 2 / sigma;
   const low = z - half;
   const high = z + half;
-  const densityLow = Math.exp(-0.5 * low * low) / ROOT_2PI;
-  const densityHigh = Math.exp(-0.5 * high * high) / ROOT_2PI;
+  const densityLow = expOfNegative(0.5 * low * low) / ROOT_2PI;
+  const densityHigh = expOfNegative(0.5 * high * high) / ROOT_2PI;
   into.value = (0.5 * (erfc(low / Math.SQRT2) - erfc(high / Math.SQRT2))) / width;
   into.byCentre = (densityLow - densityHigh) / (sigma * width);
   into.bySigma = (low * densityLow - high * densityHigh) / (sigma * width);
+}
+
+/** Whether a line must be averaged over each sample of this width, Angstrom. */
+export const isUnderSampled = (sigma: number, sampleWidth: number) => sigma * FWHM_PER_SIGMA < UNDERSAMPLED_FWHM * sampleWidth;
+
+/** Index of the first value >= `at` in an ascending array, sought in [from, to); `to` when there is none. */
+export function firstAtLeast(x: Float64Array, at: number, from = 0, to = x.length): number {
+  let low = from;
+  let high = to;
+  while (low < high) {
+    const mid = (low + high) >> 1;
+    if (x[mid] < at) low = mid + 1;
+    else high = mid;
+  }
+  return low;
 }

@@ -1,19 +1,15 @@
 import { choleskyFactor, choleskySolve } from './cholesky.ts';
 
-/** The least-squares problem as sums over its data: the callback adds them up at `p`. */
+/** The least-squares problem as sums over its data. */
 export interface NormalEquations {
   /** Number of parameters. */
   readonly size: number;
-  /**
-   * Fills `jtj` (size x size, row by row, both halves or the lower one) with J'WJ and `jtr` with J'W(data - model); both come zeroed.
-   *
-   * @returns chi2 = sum w (data - model)^2
-   */
-  accumulate(p: Float64Array, jtj: Float64Array, jtr: Float64Array): number;
-  /** chi2 alone. */
-  chi2(p: Float64Array): number;
-  /** Puts parameters that left their bounds back onto them; returns whether it had to. */
-  bound?(p: Float64Array): boolean;
+  /** chi2 = sum w (data - model)^2 at `p`; keeps what `accumulate` needs. */
+  evaluate(p: Float64Array): number;
+  /** At the point of the last `evaluate`, fills `jtj` (size x size, row by row, lower half) with J'WJ and `jtr` with J'W(data - model); both come zeroed. */
+  accumulate(jtj: Float64Array, jtr: Float64Array): void;
+  /** Puts parameters that left their bounds back onto them. */
+  bound?(p: Float64Array): void;
 }
 
 /** How the iteration ended, with what then exists. */
@@ -28,6 +24,13 @@ export type LeastSquaresEnd =
 const CHI2_SHARE = 1e-10;
 /** ... and damping above this means that no step helps any more. */
 const HOPELESS_DAMPING = 1e12;
+const FIRST_DAMPING = 1e-3;
+
+export interface LeastSquaresOptions {
+  readonly maxSteps?: number;
+  /** A step that lowers chi2 by no more than this is the last; 0 = go on to working precision. With absolute weights 1e-4 is a hundredth of a sigma. */
+  readonly closeEnough?: number;
+}
 
 /**
  * Levenberg-Marquardt least squares with Marquardt's scaling (Marquardt 1963, J. SIAM 11, 431; damping as in Nielsen 1999, IMM-REP-1999-05).
@@ -36,16 +39,18 @@ const HOPELESS_DAMPING = 1e12;
  * @returns the covariance (size x size) is (J'WJ)^-1: multiply by chi2/dof where the weights are not absolute
  * Checked in tests/reference/nistStrd.test.ts.
  */
-export function levenbergMarquardt(problem: NormalEquations, p: Float64Array, maxSteps = 100): LeastSquaresEnd {
+export function levenbergMarquardt(problem: NormalEquations, p: Float64Array, options: LeastSquaresOptions = {}): LeastSquaresEnd {
+  const { maxSteps = 100, closeEnough = 0 } = options;
   const n = problem.size;
   const jtj = new Float64Array(n * n);
   const jtr = new Float64Array(n);
   const damped = new Float64Array(n * n);
   const step = new Float64Array(n);
   const trial = new Float64Array(n);
-  let damping = 1e-3;
+  let damping = FIRST_DAMPING;
   let growth = 2;
-  let chi2 = problem.accumulate(p, jtj, jtr);
+  let chi2 = problem.evaluate(p);
+  problem.accumulate(jtj, jtr);
   for (let k = 1; k <= maxSteps; k++) {
     damped.set(jtj);
     for (let i = 0; i < n; i++) damped[i * n + i] += damping * Math.max(jtj[i * n + i], 1e-300);
@@ -58,7 +63,8 @@ export function levenbergMarquardt(problem: NormalEquations, p: Float64Array, ma
     choleskySolve(damped, n, step);
     for (let i = 0; i < n; i++) trial[i] = p[i] + step[i];
     problem.bound?.(trial);
-    const next = problem.chi2(trial);
+    const next = problem.evaluate(trial);
+    const small = Math.max(closeEnough, CHI2_SHARE * Math.min(chi2, next));
     if (next <= chi2) {
       const gained = chi2 - next;
       let predicted = 0;
@@ -69,10 +75,11 @@ export function levenbergMarquardt(problem: NormalEquations, p: Float64Array, ma
       p.set(trial);
       jtj.fill(0);
       jtr.fill(0);
-      chi2 = problem.accumulate(p, jtj, jtr);
-      if (gained <= CHI2_SHARE * next) return finish(jtj, n, chi2, k);
+      chi2 = next;
+      problem.accumulate(jtj, jtr);
+      if (gained <= small) return finish(jtj, n, chi2, k);
     } else {
-      if (next - chi2 <= CHI2_SHARE * chi2 && damping < 1) return finish(jtj, n, chi2, k);
+      if (next - chi2 <= small && damping < 1) return finish(jtj, n, chi2, k);
       damping *= growth;
       growth *= 2;
       if (damping > HOPELESS_DAMPING) return finish(jtj, n, chi2, k);
@@ -86,11 +93,15 @@ function finish(jtj: Float64Array, n: number, chi2: number, steps: number): Leas
   return covariance ? { ended: 'converged', chi2, covariance, steps } : { ended: 'singular', chi2, steps };
 }
 
-/** Inverse of a symmetric positive matrix, scaled to a unit diagonal first so that parameters of very different size do no harm. */
+/** Inverse of a symmetric positive matrix (lower half read), scaled to a unit diagonal first so that parameters of very different size do no harm. */
 function invertPositive(matrix: Float64Array, n: number): Float64Array | undefined {
-  const scale = Float64Array.from({ length: n }, (_, i) => 1 / Math.sqrt(matrix[i * n + i]));
-  if (scale.some((s) => !Number.isFinite(s))) return undefined;
-  const factor = Float64Array.from(matrix, (v, k) => v * scale[Math.floor(k / n)] * scale[k % n]);
+  const scale = new Float64Array(n);
+  for (let i = 0; i < n; i++) {
+    scale[i] = 1 / Math.sqrt(matrix[i * n + i]);
+    if (!Number.isFinite(scale[i])) return undefined;
+  }
+  const factor = new Float64Array(n * n);
+  for (let i = 0; i < n; i++) for (let j = 0; j <= i; j++) factor[i * n + j] = matrix[i * n + j] * scale[i] * scale[j];
   if (!choleskyFactor(factor, n)) return undefined;
   const inverse = new Float64Array(n * n);
   const column = new Float64Array(n);
