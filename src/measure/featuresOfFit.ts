@@ -2,7 +2,7 @@ import { FWHM_PER_SIGMA, SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import type { Feature, FitEnd, Group } from './feature.ts';
 import type { GroupFit } from './fitGroup.ts';
 import type { FitSamples } from './fitSamples.ts';
-import type { LineSpread } from './lineSpread.ts';
+import { fwhmAt, type LineSpread } from './lineSpread.ts';
 import { firstAtLeast, gaussianInto, isUnderSampled, PROFILE_REACH } from './profile.ts';
 
 /** A fitted line narrower than this share of the usual width is no line of the instrument ... */
@@ -64,7 +64,7 @@ export function featuresOfFit(samples: FitSamples, fit: GroupFit, facts: FitFact
 }
 
 function isTooNarrow(fwhm: number, fwhmErr: number, centre: number, spread: LineSpread): boolean {
-  const share = (fwhm * spread.resolvingPower) / centre;
+  const share = fwhm / fwhmAt(spread.usual, centre);
   return share < TOO_NARROW || (share < RATHER_NARROW && -Math.log(share) > NARROW_SIGMA * Math.hypot(fwhmErr / fwhm, spread.spread));
 }
 
@@ -94,8 +94,8 @@ function offsetAt(samples: FitSamples, fit: GroupFit, wavelength: number): numbe
 
 /** km/s with the instrument removed, where the instrument is known apart from the lines. */
 function intrinsicWidth(centre: number, fwhm: number, fwhmErr: number, spread: LineSpread): { intrinsicFwhmKms?: number } {
-  if (spread.from !== 'user' && spread.from !== 'file') return {};
-  const instrument = centre / spread.resolvingPower;
+  if (!spread.instrument) return {};
+  const instrument = fwhmAt(spread.instrument, centre);
   const square = fwhm * fwhm - instrument * instrument;
   const resolved = fwhm - instrument > RESOLVED_SIGMA * fwhmErr;
   return { intrinsicFwhmKms: square > 0 && resolved ? (Math.sqrt(square) / centre) * SPEED_OF_LIGHT_KMS : 0 };

@@ -4,6 +4,7 @@ import { fitGroup, type GroupFit } from './fitGroup.ts';
 import type { Component, FitSamples, Stretch, WidthPrior } from './fitSamples.ts';
 import { groupPeaks, type Window } from './groups.ts';
 import { growGroup } from './growGroup.ts';
+import { startOfPeak } from './learnLineSpread.ts';
 import { sigmaInSamples } from './lineSpread.ts';
 import { matchedFilter } from './matchedFilter.ts';
 import { addMisfit, misfitOf } from './misfit.ts';
@@ -91,7 +92,7 @@ function seedsIn(
   const snr = matchedFilter(residual, samples.noise, samples.usable, sigma, threshold, where);
   return findPeaks(snr, threshold, absorption)
     .filter((peak) => isFree(known, samples.x[peak.at], OWN_FWHM * FWHM_PER_SIGMA * width.sigmaAt(samples.x[peak.at])))
-    .map((peak) => ({ ...peak, start: startOf(samples, residual, peak, width) }));
+    .map((peak) => ({ ...peak, start: startOfPeak(samples, residual, peak, width) }));
 }
 
 /** Whether no seed (ascending) stands nearer than `reach`, Angstrom. */
@@ -150,14 +151,6 @@ const seedOf = (samples: FitSamples, component: Component): Seed => ({
   snr: Math.sign(component.flux) || 1,
   start: component,
 });
-
-function startOf(samples: FitSamples, residual: Float64Array, peak: Peak, width: WidthPrior): Component {
-  const centre = samples.x[peak.at];
-  const sigma = width.sigmaAt(centre);
-  const height = residual[peak.at];
-  const sure = samples.usable[peak.at] && Math.sign(height) === Math.sign(peak.snr) ? height : Math.sign(peak.snr) * samples.noise[peak.at];
-  return { flux: sure * sigma * Math.sqrt(2 * Math.PI), centre, sigma };
-}
 
 function residualOf(samples: FitSamples, fits: readonly GroupFit[]): Float64Array {
   const residual = new Float64Array(samples.x.length);

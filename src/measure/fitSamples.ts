@@ -1,3 +1,5 @@
+import type { WidthLaw } from './feature.ts';
+
 /** The samples of a spectrum as the fits see them; all arrays one value a sample. */
 export interface FitSamples {
   /** Angstrom, ascending. */
@@ -19,7 +21,8 @@ export interface Stretch {
 
 /** What is expected of a width before a line is fitted. */
 export interface WidthPrior {
-  /** Gaussian sigma, Angstrom, at a wavelength. */
+  readonly law: WidthLaw;
+  /** Gaussian sigma, Angstrom, at a wavelength, by the law. */
   readonly sigmaAt: (wavelength: number) => number;
   /** One sigma of ln(sigma) about it. */
   readonly spread: number;

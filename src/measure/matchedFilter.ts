@@ -29,8 +29,22 @@ export function matchedFilter(
   where: readonly Stretch[] = [{ first: 0, last: residual.length - 1 }],
 ): Float64Array {
   const snr = new Float64Array(residual.length);
-  for (const { first, last } of where) filterStretch(residual, noise, usable, sigma, threshold, first, last, snr);
+  for (const { first, last } of where)
+    for (let from = first; from <= last; from += BLOCK)
+      filterStretch(residual, noise, usable, sigma, threshold, from, Math.min(last, from + BLOCK - 1), snr);
   return snr;
+}
+
+/** Samples filtered at a time: their sums stay in the processor's cache. */
+const BLOCK = 8192;
+
+/** Working arrays, grown as needed and used anew by every call. */
+let room = { ivar: new Float64Array(0), pull: new Float64Array(0), ivars: new Float64Array(1), pulls: new Float64Array(1) };
+
+function roomFor(n: number): typeof room {
+  if (room.ivar.length < n)
+    room = { ivar: new Float64Array(n), pull: new Float64Array(n), ivars: new Float64Array(n + 1), pulls: new Float64Array(n + 1) };
+  return room;
 }
 
 function filterStretch(
@@ -48,16 +62,11 @@ function filterStretch(
   const from = Math.max(0, first - widest);
   const n = Math.min(residual.length - 1, last + widest) - from + 1;
   // weights and weighted residuals once, with nothing where a sample cannot be used; their running sums for the boxcar
-  const ivar = new Float64Array(n);
-  const pull = new Float64Array(n);
-  const ivars = new Float64Array(n + 1);
-  const pulls = new Float64Array(n + 1);
+  const { ivar, pull, ivars, pulls } = roomFor(n);
   for (let j = 0; j < n; j++) {
-    if (usable[from + j]) {
-      const w = 1 / (noise[from + j] * noise[from + j]);
-      ivar[j] = w;
-      pull[j] = w * residual[from + j];
-    }
+    const w = usable[from + j] ? 1 / (noise[from + j] * noise[from + j]) : 0;
+    ivar[j] = w;
+    pull[j] = w > 0 ? w * residual[from + j] : 0;
     ivars[j + 1] = ivars[j] + ivar[j];
     pulls[j + 1] = pulls[j] + pull[j];
   }

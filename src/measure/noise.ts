@@ -1,4 +1,4 @@
-import { median } from '../numeric/index.ts';
+import { median, robustSigma } from '../numeric/index.ts';
 import type { Spectrum } from '../spectrum/index.ts';
 
 /** Scale of |2 f(i) - f(i-2) - f(i+2)| to one sigma: 1.482602 / sqrt 6 (Stoehr et al. 2008, ASP Conf. 394, 505). */
@@ -30,6 +30,22 @@ export function scatterNoise(spectrum: Spectrum): Float64Array {
     if (from + window >= n) break;
   }
   return linearBetween(centres, levels, n);
+}
+
+/** Fewer samples than this say nothing of the noise. */
+const FEWEST_SAMPLES = 20;
+const MOST_SAMPLES = 50_000;
+
+/** Robust scatter of the residuals in units of the errors; the bulk of the samples holds no line. 1 when there are too few. */
+export function scatterOverNoise(flux: Float64Array, continuum: Float64Array, noise: Float64Array, usable: Uint8Array): number {
+  const residuals: number[] = [];
+  const step = Math.max(1, Math.floor(flux.length / MOST_SAMPLES));
+  for (let i = 0; i < flux.length; i += step) {
+    const r = (flux[i] - continuum[i]) / noise[i];
+    // only the lower half: emission lines push the upper one
+    if (usable[i] && r < 0) residuals.push(r, -r);
+  }
+  return residuals.length < FEWEST_SAMPLES ? 1 : robustSigma(residuals);
 }
 
 /** Values at the whole numbers 0 ... n-1 from nodes; held outside; NaN without nodes. */

@@ -5,7 +5,7 @@ export const ROOT_2PI = Math.sqrt(2 * Math.PI);
 /** Lines narrower than this (FWHM in samples) are fitted with the profile averaged over each sample. */
 export const UNDERSAMPLED_FWHM = 4;
 /** Beyond this many sigma a profile is nothing. */
-export const PROFILE_REACH = 6;
+export const PROFILE_REACH = 5.5;
 
 /** A Gaussian of unit flux averaged over one sample, with its derivatives. */
 export interface ProfileValue {

@@ -11,16 +11,11 @@ const AGREES = 0.55;
  * @returns the linear or log-linear axis that the printed one agrees with to its last place; undefined when it agrees with neither or is printed finely
  */
 export function regularAxis(x: Float64Array): Float64Array | undefined {
+  if (x.length < 20) return undefined;
   const place = lastPlace(x);
-  if (place === undefined || x.length < 20) return undefined;
-  return (
-    agreeing(
-      x,
-      place,
-      (v) => v,
-      (v) => v,
-    ) ?? agreeing(x, place, Math.log, Math.exp)
-  );
+  if (place === undefined) return undefined;
+  const tolerance = AGREES * place;
+  return linearAxis(x, tolerance) ?? logLinearAxis(x, tolerance);
 }
 
 /** Size of the last printed decimal place that any sample uses; undefined when more than six are used. */
@@ -40,30 +35,50 @@ function lastPlace(x: Float64Array): number | undefined {
 /** The slope is found from about this many samples: the rounding of their mean is nothing beside that of one. */
 const TELLING_SAMPLES = 4000;
 
-function agreeing(x: Float64Array, place: number, to: (v: number) => number, from: (v: number) => number): Float64Array | undefined {
+function linearAxis(x: Float64Array, tolerance: number): Float64Array | undefined {
+  const { start, step } = lineThrough(x, (v) => v);
   const n = x.length;
-  const middle = (n - 1) / 2;
-  const stride = Math.max(1, Math.floor(n / TELLING_SAMPLES));
-  const used = Math.floor((n - 1) / stride) + 1;
+  if (!(Math.abs(start - x[0]) <= tolerance) || !(Math.abs(start + step * (n - 1) - x[n - 1]) <= tolerance)) return undefined;
+  const axis = new Float64Array(n);
+  for (let i = 0; i < n; i++) {
+    axis[i] = start + step * i;
+    if (!(Math.abs(axis[i] - x[i]) <= tolerance)) return undefined;
+  }
+  return axis;
+}
+
+/** A product of ratios is taken up anew from the exponential after so many samples: its rounding stays in the last digits. */
+const ANEW = 256;
+
+function logLinearAxis(x: Float64Array, tolerance: number): Float64Array | undefined {
+  if (!(x[0] > 0)) return undefined;
+  const { start, step } = lineThrough(x, Math.log);
+  const n = x.length;
+  const ratio = Math.exp(step);
+  const axis = new Float64Array(n);
+  let value = 0;
+  for (let i = 0; i < n; i++) {
+    value = i % ANEW === 0 ? Math.exp(start + step * i) : value * ratio;
+    axis[i] = value;
+    if (!(Math.abs(value - x[i]) <= tolerance)) return undefined;
+  }
+  return axis;
+}
+
+/** Least-squares line through `to` of every few samples: value at sample 0 and growth a sample. */
+function lineThrough(x: Float64Array, to: (v: number) => number): { start: number; step: number } {
+  const stride = Math.max(1, Math.floor(x.length / TELLING_SAMPLES));
+  const used = Math.floor((x.length - 1) / stride) + 1;
   const centre = ((used - 1) * stride) / 2;
   let mean = 0;
-  let slope = 0;
+  let step = 0;
   let square = 0;
   for (let k = 0; k < used; k++) {
     const value = to(x[k * stride]);
     mean += value / used;
-    slope += (k * stride - centre) * value;
+    step += (k * stride - centre) * value;
     square += (k * stride - centre) ** 2;
   }
-  slope /= square;
-  const at = (i: number) => from(mean + slope * (i - centre));
-  const agrees = (i: number) => Math.abs(at(i) - x[i]) <= AGREES * place;
-  // most axes that do not agree show it here
-  if (!agrees(0) || !agrees(n - 1) || !agrees(Math.round(middle))) return undefined;
-  const axis = new Float64Array(n);
-  for (let i = 0; i < n; i++) {
-    axis[i] = at(i);
-    if (!(Math.abs(axis[i] - x[i]) <= AGREES * place)) return undefined;
-  }
-  return axis;
+  step /= square;
+  return { start: mean - step * centre, step };
 }

@@ -8,4 +8,4 @@ export { erfc, normalTail } from './normalDistribution.ts';
 export { median, quantile, robustSigma } from './robust.ts';
 export { type SeededRandom, seededRandom } from './seededRandom.ts';
 export { stationaryShares } from './stationaryShares.ts';
-export { whittaker } from './whittaker.ts';
+export { whittaker, whittakerVariance } from './whittaker.ts';

@@ -7,7 +7,7 @@ export interface TrueLine {
   readonly flux: number;
 }
 
-/** A spectrum with its truth, from a line of words: `R 8000; 4959 33; 5007 100; noise 1; seed 3; from 4900; to 5100`. Continuum 100 unless said; no errors with `bare`; `wings 0.03` puts Lorentzian wings under every line. */
+/** A spectrum with its truth, from a line of words: `R 8000; 4959 33; 5007 100; noise 1; seed 3; from 4900; to 5100`. Continuum 100 unless said; no errors with `bare`; `wings 0.03` puts Lorentzian wings under every line, `fwhm 1.2` gives all lines one width in Angstrom, `smooth 3` averages the noise over so many samples, `clip 900` cuts everything above. */
 export function sky(words: string): { spectrum: Spectrum; lines: TrueLine[]; fwhmAt: (w: number) => number } {
   const said = new Map<string, number>();
   const lines: TrueLine[] = [];
@@ -21,16 +21,20 @@ export function sky(words: string): { spectrum: Spectrum; lines: TrueLine[]; fwh
   const n = Math.floor((to - from) / step) + 1;
   const random = seededRandom(word('seed', 1));
   const wavelength = Float64Array.from({ length: n }, (_, i) => from + i * step);
-  const flux = Float64Array.from(wavelength, (w) => {
+  const smooth = word('smooth', 1);
+  const rough = Float64Array.from({ length: n + smooth }, () => noise * random.normal());
+  const flux = Float64Array.from(wavelength, (w, i) => {
     let f = word('continuum', 100) + word('wave', 0) * Math.sin(w / 37);
     for (const { centre, flux: total } of lines) {
-      const sigma = centre / r / 2.3548;
+      const sigma = word('fwhm', centre / r) / 2.3548;
       const peak = total / (sigma * Math.sqrt(2 * Math.PI));
       f += peak * Math.exp(-0.5 * ((w - centre) / sigma) ** 2);
       // scattered light: Lorentzian wings of this share of the peak
       f += (peak * word('wings', 0)) / (1 + ((w - centre) / (2 * sigma)) ** 2);
     }
-    return f + noise * random.normal();
+    let here = 0;
+    for (let k = 0; k < smooth; k++) here += rough[i + k] / smooth;
+    return Math.min(word('clip', Number.POSITIVE_INFINITY), f + here);
   });
   const spike = said.get('spike');
   if (spike !== undefined) flux[Math.round((spike - from) / step)] += 60 * noise;
