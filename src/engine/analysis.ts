@@ -99,11 +99,20 @@ export interface FeatureView {
   readonly name?: CandidateView;
 }
 
+/** What the observer's own surroundings put into a spectrum; Angstrom in the medium of the reading. */
+export interface SkyView {
+  /** Absorption bands of the Earth's atmosphere, ascending, apart from each other. */
+  readonly bands: readonly { readonly species: string; readonly low: number; readonly high: number }[];
+  /** Lines of the night sky and of lamps, ascending; `strength` only compares them with each other. */
+  readonly lines: readonly { readonly at: number; readonly strength: number }[];
+}
+
 /** Everything derived from source, settings and verdicts. */
 export interface Analysis {
   readonly reading: ReadingView;
   /** Absent for a list of lines. */
   readonly samples?: SamplesView;
+  readonly sky: SkyView;
   readonly groups: readonly Group[];
   readonly resolvingPower?: number;
   readonly resolvingPowerFrom?: 'user' | 'file' | 'lines' | 'sampling';

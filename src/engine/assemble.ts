@@ -8,6 +8,7 @@ import { candidateViewer } from './candidateView.ts';
 import { lineLabel } from './lineNames.ts';
 import { lineTableOf } from './lineTableOf.ts';
 import type { Material } from './material.ts';
+import { skyView } from './skyView.ts';
 
 /** The finished stages. */
 interface Parts {
@@ -52,6 +53,7 @@ export function assemble(parts: Parts): Analysis {
   return {
     reading: material.reading,
     ...(material.spectrum && measurement ? { samples: samplesOf(material.spectrum, measurement) } : {}),
+    sky: skyOf(parts),
     groups: measurement?.groups ?? [],
     resolvingPower: measurement?.resolvingPower,
     resolvingPowerFrom: measurement?.resolvingPowerFrom,
@@ -96,6 +98,13 @@ function nameInForce(
   if (verdict?.decision === 'accepted') return shown.find((candidate) => sameKeys(candidate.keys, verdict.accepted ?? []));
   if (verdict?.decision !== undefined || measured.artefact !== undefined) return undefined;
   return shown.length > 0 && shown[0].probability > noneProbability ? shown[0] : undefined;
+}
+
+function skyOf({ data, material, features }: Parts): Analysis['sky'] {
+  const { medium, choices } = material.reading;
+  const wavelengths = material.spectrum?.wavelength ?? features.map((feature) => feature.centroid);
+  const [from, to] = [wavelengths[0], wavelengths[wavelengths.length - 1]];
+  return from === undefined || to === undefined ? { bands: [], lines: [] } : skyView(data, medium, from, to, choices.velocityCorrectionKms);
 }
 
 function samplesOf(spectrum: NonNullable<Material['spectrum']>, measurement: Measurement): Analysis['samples'] {

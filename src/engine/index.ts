@@ -10,6 +10,7 @@ export type {
   Progress,
   ReadingView,
   SamplesView,
+  SkyView,
   ThinGasView,
   TransitionView,
 } from './analysis.ts';

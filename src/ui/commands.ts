@@ -3,7 +3,7 @@ import { acceptCandidate, declareRow, redoNext, rejectCandidate, reopenRow, undo
 import { desk, setDesk, type Tab } from './desk/deskStore.ts';
 import { saveTable } from './desk/files.ts';
 import { focusFilter, focusNote } from './desk/focus.ts';
-import { closeIn, nextScale, otherFrame, wholeSpectrum, zoomBy } from './desk/looking.ts';
+import { closeIn, nextScale, otherFrame, otherMedium, wholeSpectrum, zoomBy } from './desk/looking.ts';
 import { pickFile } from './desk/pickFile.ts';
 import { words } from './words.ts';
 
@@ -118,6 +118,7 @@ export const COMMANDS: readonly Command[] = [
   { name: 'centre', label: label.centre, group: 'look', keys: ['c'], canRun: withRow, run: closeIn },
   { name: 'scale', label: label.scale, group: 'look', keys: ['y'], canRun: atDesk, run: nextScale },
   { name: 'frame', label: label.frame, group: 'look', keys: ['f'], canRun: atDesk, run: otherFrame },
+  { name: 'axis-medium', label: label.axisMedium, group: 'look', keys: ['v'], canRun: atDesk, run: otherMedium },
   { name: 'filter', label: label.filter, group: 'desk', keys: ['/'], canRun: atDesk, run: focusFilter },
   show('case', 'd'),
   show('settings', 's'),

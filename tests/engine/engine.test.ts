@@ -36,6 +36,17 @@ describe('the sample, opened', () => {
     expect(analysis.table.sha256).toBe(createHash('sha256').update(sample).digest('hex'));
   });
 
+  test('carries the sky that was in the way, in the medium of the file', () => {
+    const { bands, lines } = analysis.sky;
+    expect(lines.some(({ at }) => Math.abs(at - 5577.338) < 0.01)).toBe(true);
+    // the A band of molecular oxygen: 7594-7700 A in air
+    expect(bands.some(({ species, low, high }) => species.includes('O2') && low < 7600 && high > 7650)).toBe(true);
+    bands.forEach((band, k) => {
+      expect(band.high).toBeGreaterThan(band.low);
+      if (k > 0) expect(band.low).toBeGreaterThan(bands[k - 1].high);
+    });
+  });
+
   test('shows its velocity of 31.2 km/s', () => {
     expect(analysis.z * 299_792.458).toBeGreaterThan(30.2);
     expect(analysis.z * 299_792.458).toBeLessThan(32.2);

@@ -30,7 +30,7 @@ describe('marks', () => {
 
   it('a ring stands about thin-gas lines and the sign tells the verdict', () => {
     const { marks } = marksOf(deskRows(desk, [verdict(5300, { decision: 'unidentified' })]), [3900, 7100], layout, width);
-    expect(marks.map((mark) => mark.ring)).toEqual([true, true, false, false]);
+    expect(marks.map((mark) => mark.ring)).toEqual(['whole', 'whole', undefined, undefined]);
     expect(marks.map((mark) => mark.standing)).toEqual(['open', 'open', 'unidentified', 'open']);
   });
 
@@ -41,6 +41,33 @@ describe('marks', () => {
       expect(x + width(text) / 2).toBeLessThanOrEqual(layout.width - layout.right);
     }
     expect(labels.map((label) => label.text)).toContain('[Ne III] 4000');
+  });
+});
+
+describe('labels', () => {
+  const crowd = Array.from({ length: 800 }, (_, k) => {
+    const at = 3500 + 7.3 * k + (k % 7);
+    return feature(k + 1, at, [candidate(`${k % 3 ? '[Fe III]' : 'He I'} ${at.toFixed(2)}`, 0.9, k % 3 ? 'forbidden' : 'permitted')]);
+  });
+  const rows = deskRows(analysed(...crowd), []);
+
+  it('do not touch at any zoom, and the chosen feature always has one', () => {
+    for (let zoom = 0; zoom < 40; zoom++) {
+      const half = 3000 * 0.85 ** zoom;
+      const { labels } = marksOf(rows, [5010 - half, 5010 + half], layout, width, 207);
+      expect(labels.filter((label) => label.isChosen)).toHaveLength(1);
+      for (const one of labels)
+        for (const other of labels)
+          if (one !== other && one.y === other.y)
+            expect(Math.abs(one.x - other.x)).toBeGreaterThan((width(one.text) + width(other.text)) / 2);
+    }
+  });
+
+  it('of intercombination lines stand by a broken ring', () => {
+    const thin = candidate('C III] 1908.73', 0.9, 'forbidden');
+    const name = { ...thin, transitions: thin.transitions.map((t) => ({ ...t, nature: 'intercombination' })) };
+    const { marks } = marksOf(deskRows(analysed(feature(1, 1909, [name])), []), [1800, 2000], layout, width);
+    expect(marks[0].ring).toBe('broken');
   });
 });
 

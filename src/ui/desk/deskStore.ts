@@ -3,12 +3,12 @@ import type { Analysis, SamplesView } from '../../engine/index.ts';
 import { EMPTY_DOCUMENT, type History, startHistory } from '../../session/index.ts';
 import type { ScaleKind } from '../plot/fluxScale.ts';
 import type { Range } from '../plot/viewRange.ts';
+import type { AxisMedium, Frame } from '../plot/waveAxis.ts';
 import type { RowFilter } from '../table/rowFilter.ts';
 import type { Sorting } from '../table/sortRows.ts';
 import type { DeskRow } from './deskRows.ts';
 
 export type Tab = 'case' | 'settings' | 'reading' | 'list' | 'history' | 'keys';
-export type Frame = 'observed' | 'rest';
 export type Theme = 'system' | 'light' | 'dark';
 export type ShownAnalysis = Omit<Analysis, 'samples'>;
 
@@ -48,6 +48,8 @@ export interface DeskFields {
   /** Height of the flux axis, 1 = all that is in view fits. */
   readonly gain: number;
   readonly frame: Frame;
+  /** What the wavelength axis shows; absent = as in the file. */
+  readonly axisMedium?: AxisMedium;
   readonly tab: Tab;
   readonly filter: RowFilter;
   readonly sorting: Sorting;

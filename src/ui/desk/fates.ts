@@ -11,6 +11,7 @@ export const FATES = {
   scale: 'browser',
   gain: 'browser',
   frame: 'browser',
+  axisMedium: 'browser',
   tab: 'browser',
   filter: 'browser',
   sorting: 'browser',

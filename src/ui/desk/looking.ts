@@ -2,6 +2,7 @@ import { SCALE_KINDS } from '../plot/fluxScale.ts';
 import { inside, type Range, zoomed } from '../plot/viewRange.ts';
 import { chosenRow, wholeRange } from './chosen.ts';
 import { desk, setDesk } from './deskStore.ts';
+import { waveAxis } from './waveAxis.ts';
 
 /** Width of the view that shows a feature with its surroundings, in FWHM. */
 const CLOSE_FWHM = 60;
@@ -36,6 +37,11 @@ export function closeIn(): void {
 export function nextScale(): void {
   const next = (SCALE_KINDS.indexOf(desk().scale) + 1) % SCALE_KINDS.length;
   setDesk({ scale: SCALE_KINDS[next], gain: 1 });
+}
+
+export function otherMedium(): void {
+  const axis = waveAxis();
+  if (axis) setDesk({ axisMedium: axis.shownMedium === 'air' ? 'vacuum' : 'air' });
 }
 
 export const otherFrame = () => setDesk({ frame: desk().frame === 'observed' ? 'rest' : 'observed' });

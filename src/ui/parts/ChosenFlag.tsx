@@ -26,7 +26,10 @@ export function ChosenFlag({ row, layout, view, top }: Props) {
   const left = Math.min(Math.max(x + 8, layout.left), layout.width - FLAG_WIDTH);
   return (
     <>
-      <div className="chosen-line" style={{ left: x, top: top + layout.top, height: layout.height - layout.top - layout.bottom }} />
+      <div
+        className="chosen-line"
+        style={{ left: x, top: top + layout.spectrumTop, height: layout.height - layout.spectrumTop - layout.bottom }}
+      />
       <div className="chosen-flag" style={{ left, top: top + layout.spectrumTop + 4 }}>
         <Mark standing={row.standing} />
         <span className="flag-name">{best ? shortName(best) : words.spectrum.unnamed}</span>

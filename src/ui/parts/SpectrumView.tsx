@@ -2,6 +2,7 @@ import { useRef } from 'react';
 import { useChosenRow } from '../desk/chosen.ts';
 import { setDesk, useDesk } from '../desk/deskStore.ts';
 import { look, shownRange } from '../desk/looking.ts';
+import { useWaveAxis } from '../desk/waveAxis.ts';
 import { fixed } from '../figures.ts';
 import { SCALE_KINDS } from '../plot/fluxScale.ts';
 import { plotSamplesOf } from '../plot/plotSamples.ts';
@@ -18,6 +19,7 @@ import { useSpectrumPlot } from './useSpectrumPlot.ts';
 
 const { spectrum: label } = words;
 const FRAMES = ['observed', 'rest'] as const;
+const MEDIA = ['air', 'vacuum'] as const;
 
 /** The spectrum with its marks: overview, lanes, data and fit, residuals. */
 export function SpectrumView() {
@@ -25,13 +27,15 @@ export function SpectrumView() {
   const rows = useDesk((state) => state.rows);
   const scale = useDesk((state) => state.scale);
   const frame = useDesk((state) => state.frame);
+  const axis = useWaveAxis();
   const chosen = useChosenRow();
   const shown = samples && plotSamplesOf(samples);
   const area = useRef<HTMLDivElement>(null);
   const canvas = useRef<HTMLDivElement>(null);
+  const ground = useRef<HTMLCanvasElement>(null);
   const marks = useRef<HTMLCanvasElement>(null);
   const size = useSize(area);
-  const { layout, state, view } = useSpectrumPlot(canvas, marks, shown, size);
+  const { layout, state, view } = useSpectrumPlot(canvas, ground, marks, shown, size);
   const pointer = usePointer(area, layout);
   return (
     <section className="spectrum" aria-label={label.label}>
@@ -44,6 +48,15 @@ export function SpectrumView() {
           choose={(kind) => setDesk({ scale: kind, gain: 1 })}
         />
         <Segments label={label.frame} options={FRAMES} value={frame} words={label.frames} choose={(kind) => setDesk({ frame: kind })} />
+        {axis && (
+          <Segments
+            label={label.medium}
+            options={MEDIA}
+            value={axis.shownMedium}
+            words={words.medium}
+            choose={(medium) => setDesk({ axisMedium: medium })}
+          />
+        )}
         <CommandButton name="zoom-in">
           <Icon name="plus" />
         </CommandButton>
@@ -64,6 +77,7 @@ export function SpectrumView() {
         aria-label={label.describe(rows.length, fixed(shownRange()[0], 0), fixed(shownRange()[1], 0))}
         {...pointer.handlers}
       >
+        <canvas ref={ground} className="plot-ground" />
         <div ref={canvas} className="plot-canvas" />
         <canvas ref={marks} className="plot-marks" />
         {state !== 'drawn' && <p className="plot-wait">{state === 'failed' ? label.plotFailed : label.drawing}</p>}

@@ -2,6 +2,7 @@ import { type PointerEvent, type RefObject, useEffect, useRef } from 'react';
 import { choose, wholeRange } from '../desk/chosen.ts';
 import { desk, setDesk } from '../desk/deskStore.ts';
 import { look, shownRange, wholeSpectrum } from '../desk/looking.ts';
+import { waveAxis } from '../desk/waveAxis.ts';
 import { fixed, round } from '../figures.ts';
 import { UNNAMED_LANE } from '../plot/lanes.ts';
 import type { PanelLayout } from '../plot/layoutOf.ts';
@@ -9,13 +10,15 @@ import { LANE_COUNT } from '../plot/layoutOf.ts';
 import { laneOfRow } from '../plot/marksOf.ts';
 import { nearestFeature } from '../plot/nearestFeature.ts';
 import { sampleAt } from '../plot/sampleAt.ts';
-import { inside, panned, type Range, zoomed } from '../plot/viewRange.ts';
+import { inside, panned, pinched, type Range, zoomed } from '../plot/viewRange.ts';
+import { shownWavelength } from '../plot/waveAxis.ts';
 
 /** A press that moves less than this is a click, pixels. */
 const CLICK_PX = 4;
 /** A click this near to a feature means it, pixels. */
 const REACH_PX = 9;
 const WHEEL_RATE = 0.0016;
+const PINCH_RATE = 0.01;
 const MOST_GAIN = 1e5;
 
 interface Press {
@@ -29,7 +32,7 @@ interface Press {
 export function usePointer(area: RefObject<HTMLDivElement | null>, layout: PanelLayout | undefined) {
   const presses = useRef(new Map<number, { x: number; y: number }>());
   const press = useRef<Press>(undefined);
-  const pinch = useRef<{ distance: number; at: number; range: Range }>(undefined);
+  const pinch = useRef<{ fingers: readonly [number, number]; range: Range }>(undefined);
   const readout = useRef<HTMLDivElement>(null);
 
   useEffect(() => {
@@ -43,7 +46,9 @@ export function usePointer(area: RefObject<HTMLDivElement | null>, layout: Panel
       } else if (Math.abs(event.deltaX) > Math.abs(event.deltaY) || event.shiftKey) {
         look(panned(shownRange(), (event.deltaX || event.deltaY) / innerWidthOf(layout), wholeRange()));
       } else {
-        look(zoomed(shownRange(), wavelengthAt(layout, x), Math.exp(event.deltaY * WHEEL_RATE), wholeRange()));
+        // a pinch on a touch pad arrives as small turns of the wheel with Ctrl
+        const rate = event.ctrlKey ? PINCH_RATE : WHEEL_RATE;
+        look(zoomed(shownRange(), wavelengthAt(layout, x), Math.exp(event.deltaY * rate), wholeRange()));
       }
     };
     element.addEventListener('wheel', wheel, { passive: false });
@@ -63,8 +68,7 @@ export function usePointer(area: RefObject<HTMLDivElement | null>, layout: Panel
       presses.current.set(event.pointerId, at);
       press.current = { ...at, range: shownRange(), moved: presses.current.size > 1 };
       const [a, b] = [...presses.current.values()];
-      if (a && b && layout)
-        pinch.current = { distance: Math.abs(a.x - b.x) || 1, at: wavelengthAt(layout, (a.x + b.x) / 2), range: shownRange() };
+      if (a && b && layout) pinch.current = { fingers: [shareOf(layout, a.x), shareOf(layout, b.x)], range: shownRange() };
     },
     onPointerMove(event: PointerEvent) {
       if (!layout) return;
@@ -72,7 +76,7 @@ export function usePointer(area: RefObject<HTMLDivElement | null>, layout: Panel
       if (presses.current.has(event.pointerId)) presses.current.set(event.pointerId, at);
       const [a, b] = [...presses.current.values()];
       if (a && b && pinch.current)
-        return look(zoomed(pinch.current.range, pinch.current.at, pinch.current.distance / (Math.abs(a.x - b.x) || 1), wholeRange()));
+        return look(pinched(pinch.current.range, pinch.current.fingers, [shareOf(layout, a.x), shareOf(layout, b.x)], wholeRange()));
       if (press.current) drag(press.current, at.x, layout);
       if (readout.current) readout.current.textContent = at.x > layout.left ? readoutAt(wavelengthAt(layout, at.x)) : '';
     },
@@ -98,10 +102,13 @@ export function usePointer(area: RefObject<HTMLDivElement | null>, layout: Panel
 
 const innerWidthOf = (layout: PanelLayout) => layout.width - layout.left - layout.right;
 
+/** Place of a pixel in the view: 0 at its left end, 1 at its right. */
+const shareOf = (layout: PanelLayout, x: number) => (x - layout.left) / innerWidthOf(layout);
+
 /** Observed wavelength under a pixel. */
 function wavelengthAt(layout: PanelLayout, x: number): number {
   const [low, high] = shownRange();
-  return low + ((x - layout.left) / innerWidthOf(layout)) * (high - low);
+  return low + shareOf(layout, x) * (high - low);
 }
 
 function drag(press: Press, x: number, layout: PanelLayout): void {
@@ -129,8 +136,9 @@ function click(layout: PanelLayout, at: { x: number; y: number }): void {
 }
 
 function readoutAt(wavelength: number): string {
-  const { samples, frame, analysis } = desk();
-  const shown = frame === 'rest' && analysis ? wavelength / (1 + analysis.z) : wavelength;
+  const { samples } = desk();
+  const axis = waveAxis();
+  const shown = axis ? shownWavelength(axis, wavelength) : wavelength;
   if (!samples) return `${fixed(shown, 2)} Å`;
   const k = Math.min(sampleAt(samples.wavelength, wavelength), samples.wavelength.length - 1);
   return `${fixed(shown, 2)} Å   ${round(samples.flux[k], 4)}`;

@@ -1,6 +1,7 @@
 import { type RefObject, useEffect, useMemo, useRef, useState } from 'react';
-import { rangeOf } from '../desk/chosen.ts';
+import { rangeOf, useChosenRow } from '../desk/chosen.ts';
 import { useDesk } from '../desk/deskStore.ts';
+import { useWaveAxis } from '../desk/waveAxis.ts';
 import { fluxScale } from '../plot/fluxScale.ts';
 import { inkOf } from '../plot/inkOf.ts';
 import { layoutOf } from '../plot/layoutOf.ts';
@@ -12,6 +13,7 @@ import { useDarkness } from './useDarkness.ts';
 /** Keeps the picture in step with the desk. */
 export function useSpectrumPlot(
   canvas: RefObject<HTMLDivElement | null>,
+  ground: RefObject<HTMLCanvasElement | null>,
   marks: RefObject<HTMLCanvasElement | null>,
   samples: PlotSamples | undefined,
   size: { width: number; height: number } | undefined,
@@ -23,17 +25,18 @@ export function useSpectrumPlot(
   const range = useDesk((desk) => desk.range);
   const scale = useDesk((desk) => desk.scale);
   const gain = useDesk((desk) => desk.gain);
-  const frame = useDesk((desk) => desk.frame);
+  const axis = useWaveAxis();
+  const chosen = useChosenRow()?.feature.number;
   const dark = useDarkness();
   const layout = useMemo(() => size && layoutOf(size.width, size.height, samples !== undefined), [size, samples]);
   const whole = useMemo(() => rangeOf(samples?.wavelength, rows), [samples, rows]);
   const view = range ?? whole;
 
   useEffect(() => {
-    if (!canvas.current || !marks.current) return;
+    if (!canvas.current || !ground.current || !marks.current) return;
     let gone = false;
     let made: SpectrumPlot | undefined;
-    createSpectrumPlot(canvas.current, marks.current, (ms) => {
+    createSpectrumPlot(canvas.current, ground.current, marks.current, (ms) => {
       setState('drawn');
       if (canvas.current) canvas.current.dataset.frameMs = ms.toFixed(2);
     }).then(
@@ -48,31 +51,30 @@ export function useSpectrumPlot(
       gone = true;
       made?.end();
     };
-  }, [canvas, marks]);
+  }, [canvas, ground, marks]);
 
   const scene = useMemo((): SpectrumScene | undefined => {
-    if (!analysis || !layout || !canvas.current) return undefined;
+    if (!analysis || !axis || !layout || !canvas.current) return undefined;
     return {
       samples,
       rows,
-      medium: analysis.reading.medium,
+      sky: analysis.sky,
       fluxUnit: analysis.reading.fluxUnit,
-      frame,
-      z: analysis.z,
+      axis,
       scale: fluxScale(scale, samples ? samples.typicalNoise : smallest(rows.map((row) => row.feature.measured.flux))),
       gain,
       ink: inkOf(canvas.current, dark),
       layout,
     };
-  }, [analysis, layout, canvas, samples, rows, frame, scale, gain, dark]);
+  }, [analysis, layout, canvas, samples, rows, axis, scale, gain, dark]);
 
   const shown = useRef<SpectrumScene>(undefined);
   useEffect(() => {
     if (!plot || !scene) return;
-    if (shown.current === scene) plot.move(view);
-    else plot.show(scene, view);
+    if (shown.current === scene) plot.move(view, chosen);
+    else plot.show(scene, view, chosen);
     shown.current = scene;
-  }, [plot, scene, view]);
+  }, [plot, scene, view, chosen]);
 
   return { layout, state, view };
 }

@@ -7,6 +7,9 @@ export interface Ink {
   readonly band: string;
   readonly fit: string;
   readonly accent: string;
+  /** Wash of absorption bands of the air. */
+  readonly airBand: string;
+  readonly surface: string;
   readonly font: string;
   /** Which set of tokens these are: a scene in other ink is drawn anew. */
   readonly isDark: boolean;
@@ -28,6 +31,8 @@ export function inkOf(element: HTMLElement, isDark: boolean): Ink {
     band: token('band'),
     fit: token('fit'),
     accent: token('accent'),
+    airBand: token('air-band'),
+    surface: token('surface'),
     font: getComputedStyle(element).fontFamily,
     isDark,
   };

@@ -1,6 +1,6 @@
 import { LANES } from './lanes.ts';
 
-/** Pixels of the panels of the spectrum view, top to bottom: lanes, spectrum, residuals, wavelength axis. */
+/** Pixels of the panels of the spectrum view, top to bottom: second wavelength axis (in the top margin), lanes, spectrum, residuals, wavelength axis. */
 export interface PanelLayout {
   readonly width: number;
   readonly height: number;
@@ -20,7 +20,7 @@ export const LANE_COUNT = LANES.length + 1;
 /** Height of a mark above the foot of its lane, in lanes. */
 export const LANE_FOOT = 0.28;
 
-const MARGIN = { left: 64, right: 16, top: 4, bottom: 40 };
+const MARGIN = { left: 64, right: 16, top: 20, bottom: 40 };
 const GAP = 8;
 const LANE = { least: 23, most: 30 };
 const RESIDUAL = { least: 36, most: 72 };

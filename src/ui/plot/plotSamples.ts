@@ -8,6 +8,8 @@ export interface PlotSamples {
   readonly continuum: Float64Array;
   /** Data minus fit over one sigma. */
   readonly residual: Float64Array;
+  /** Masked stretches, Angstrom, half a sample wider on both sides: low, high, low, high ... ascending. */
+  readonly masked: Float64Array;
   /** Median of the noise: the flux below which a logarithm means nothing. */
   readonly typicalNoise: number;
 }
@@ -32,7 +34,20 @@ function plotSamples(samples: SamplesView): PlotSamples {
     residual[i] = (flux[i] - samples.model[i]) / samples.noise[i];
   }
   const { wavelength, model, continuum } = samples;
-  return { wavelength, flux, model, continuum, residual, typicalNoise: typical(samples.noise) };
+  return { wavelength, flux, model, continuum, residual, masked: maskedStretches(samples), typicalNoise: typical(samples.noise) };
+}
+
+function maskedStretches({ wavelength, masked }: SamplesView): Float64Array {
+  const n = wavelength.length;
+  const between = (i: number) => (wavelength[Math.max(i - 1, 0)] + wavelength[Math.min(i, n - 1)]) / 2;
+  const ends: number[] = [];
+  for (let i = 0; i < n; i++) {
+    if (!masked[i]) continue;
+    const first = i;
+    while (i + 1 < n && masked[i + 1]) i++;
+    ends.push(between(first), between(i + 1));
+  }
+  return Float64Array.from(ends);
 }
 
 /** Median of at most some two thousand values, positive. */

@@ -1,6 +1,6 @@
 import type { Data, Layout } from 'plotly.js/lib/core';
+import type { SkyView } from '../../engine/index.ts';
 import type { DeskRow } from '../desk/deskRows.ts';
-import type { Frame } from '../desk/deskStore.ts';
 import { words } from '../words.ts';
 import { decimate, type Points } from './decimate.ts';
 import { fitCurve } from './fitCurve.ts';
@@ -13,15 +13,16 @@ import type { PlotSamples } from './plotSamples.ts';
 import { profileOf } from './profileOf.ts';
 import { extent } from './svgPath.ts';
 import type { Range } from './viewRange.ts';
+import { type AxisTicks, axisTicks, TICK_PX, type WaveAxis } from './waveAxis.ts';
 
 /** All that the picture shows. */
 export interface SpectrumScene {
   readonly samples?: PlotSamples;
   readonly rows: readonly DeskRow[];
-  readonly medium: 'air' | 'vacuum';
+  readonly sky: SkyView;
   readonly fluxUnit: string;
-  readonly frame: Frame;
-  readonly z: number;
+  /** What the wavelength axis counts; all places are Angstrom as the file has them. */
+  readonly axis: WaveAxis;
   readonly scale: FluxScale;
   readonly gain: number;
   readonly ink: Ink;
@@ -43,9 +44,6 @@ const STEPS_BELOW = 1;
 /** Residuals beyond this are cut, sigma. */
 const RESIDUAL_REACH = 6;
 
-/** Observed -> shown wavelength. */
-export const frameFactor = (scene: Pick<SpectrumScene, 'frame' | 'z'>) => (scene.frame === 'rest' ? 1 / (1 + scene.z) : 1);
-
 /** Curves of a window three views wide. */
 export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
   const viewWidth = view[1] - view[0];
@@ -62,7 +60,7 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
   const line = (points: Points, yaxis: 'y2' | 'y3', color: string, width: number, stroke: 'solid' | 'dot' | 'steps' = 'solid'): Data => ({
     type: 'scatter',
     mode: 'lines',
-    x: points.x.map((x) => x * frameFactor(scene)),
+    x: points.x,
     y: yaxis === 'y2' ? points.y.map(scene.scale.forward) : points.y,
     xaxis: 'x',
     yaxis,
@@ -106,6 +104,7 @@ function sticks(rows: readonly DeskRow[], window: Range): Points {
 /** Axes as the view needs them. */
 export interface Axes {
   readonly x: Range;
+  readonly waveTicks: AxisTicks;
   readonly y: Range;
   readonly ticks: { readonly at: number[]; readonly text: string[] };
   readonly fluxTitle: string;
@@ -113,7 +112,6 @@ export interface Axes {
 
 /** What depends on the view alone. */
 export function axesOf(scene: SpectrumScene, drawn: DrawnWindow, view: Range): Axes {
-  const factor = frameFactor(scene);
   const [low, high] = fluxRange(scene, drawn, view);
   const { scale } = scene;
   const ticks = fluxTicks(scale, low, high, Math.max(2, Math.floor(scene.layout.spectrumHeight / 44)));
@@ -121,7 +119,9 @@ export function axesOf(scene: SpectrumScene, drawn: DrawnWindow, view: Range): A
   const unit = scene.fluxUnit ? ` (${scene.fluxUnit})` : '';
   const tens = exponent ? ` × 10<sup>${exponent}</sup>` : '';
   return {
-    x: [view[0] * factor, view[1] * factor],
+    x: view,
+    // ticks for the whole window: moving inside it needs no new ones
+    waveTicks: axisTicks(scene.axis, drawn.window[0], drawn.window[1], (3 * (scene.layout.width - scene.layout.left)) / TICK_PX),
     y: [scale.forward(low), scale.forward(high)],
     ticks: { at: ticks.map(scale.forward), text: ticks.map((tick) => tickText(tick, exponent)) },
     fluxTitle: shorten(`${words.spectrum.flux}${tens}${unit}`, scene.layout.spectrumHeight),
@@ -129,9 +129,7 @@ export function axesOf(scene: SpectrumScene, drawn: DrawnWindow, view: Range): A
 }
 
 /** A move as a change of an existing picture: along the spectrum only, which is cheap and calm; the flux axis follows when the view rests. */
-export const moveTo = (scene: SpectrumScene, view: Range): object => ({
-  'xaxis.range': [view[0] * frameFactor(scene), view[1] * frameFactor(scene)],
-});
+export const moveTo = (view: Range): object => ({ 'xaxis.range': [...view] });
 
 /** Drops the unit when the title would be longer than its axis. */
 function shorten(title: string, height: number): string {
@@ -164,7 +162,6 @@ export function layoutFor(scene: SpectrumScene, axes: Axes): Partial<Layout> {
     tickfont: { size: 11, color: ink.muted, family: ink.font },
     title: { font: { size: 11, color: ink.muted, family: ink.font }, standoff: 4 },
   } as const;
-  const frame = words.spectrum.frames[scene.frame];
   return {
     width: layout.width,
     height: layout.height,
@@ -197,10 +194,13 @@ export function layoutFor(scene: SpectrumScene, axes: Axes): Partial<Layout> {
       showgrid: false,
       ticks: 'outside',
       ticklen: 4,
-      exponentformat: 'none',
-      separatethousands: false,
-      tickformat: '~f',
-      title: { ...plain.title, text: words.spectrum.wavelength(words.medium[scene.medium], frame) },
+      tickmode: 'array',
+      tickvals: [...axes.waveTicks.at],
+      ticktext: [...axes.waveTicks.text],
+      title: {
+        ...plain.title,
+        text: words.spectrum.wavelength(words.medium[scene.axis.shownMedium], words.spectrum.frames[scene.axis.frame]),
+      },
     },
     yaxis: {
       ...plain,

@@ -1,4 +1,5 @@
 import type * as Plotly from 'plotly.js/lib/core';
+import { paintGround } from './paintGround.ts';
 import { paintMarks } from './paintMarks.ts';
 import { axesOf, type DrawnWindow, drawWindow, layoutFor, moveTo, type SpectrumScene } from './spectrumFigure.ts';
 import type { Range } from './viewRange.ts';
@@ -6,12 +7,13 @@ import type { Range } from './viewRange.ts';
 /** The drawn spectrum: takes a scene and a view, draws at most once a frame. */
 export interface SpectrumPlot {
   /** Everything anew. */
-  show(scene: SpectrumScene, view: Range): void;
-  /** The same scene seen elsewhere. */
-  move(view: Range): void;
+  show(scene: SpectrumScene, view: Range, chosen?: number): void;
+  /** The same scene seen elsewhere; `chosen`: number of the feature whose label goes first. */
+  move(view: Range, chosen?: number): void;
   end(): void;
 }
 
+const NO_MASK = new Float64Array(0);
 /** A view that differs from the drawn one by more than this factor gets new curves and labels. */
 const SAME_ZOOM = 1.7;
 /** Milliseconds of rest after which a moved view gets a flux axis and labels of its own. */
@@ -35,17 +37,20 @@ function plotly(): Promise<Library> {
 
 /**
  * @param element takes the drawing
+ * @param ground  lies below it and takes the shadings
  * @param marks   lies over it and takes the marks
  * @param drawn   called after every frame that was drawn, with the milliseconds of work it took
  */
 export async function createSpectrumPlot(
   element: HTMLElement,
+  ground: HTMLCanvasElement,
   marks: HTMLCanvasElement,
   drawn: (ms: number) => void,
 ): Promise<SpectrumPlot> {
   const lib = await plotly();
   let scene: SpectrumScene | undefined;
   let view: Range = [0, 1];
+  let chosen: number | undefined;
   let window: DrawnWindow | undefined;
   let frame = 0;
   let rest: ReturnType<typeof setTimeout> | undefined;
@@ -66,11 +71,12 @@ export async function createSpectrumPlot(
     const began = performance.now();
     if (!window || !covers(window, view)) rebuild(scene);
     else {
-      void lib.relayout(element, moveTo(scene, view));
+      void lib.relayout(element, moveTo(view));
       clearTimeout(rest);
       rest = setTimeout(refresh, REST_MS);
     }
-    paintMarks(marks, scene, view);
+    paintGround(ground, { ...scene, masked: scene.samples?.masked ?? NO_MASK }, view);
+    paintMarks(marks, { ...scene, chosen }, view);
     drawn(performance.now() - began);
   };
   const refresh = () => {
@@ -82,12 +88,14 @@ export async function createSpectrumPlot(
   };
 
   return {
-    show(next, at) {
+    show(next, at, number) {
+      chosen = number;
       scene = next;
       view = at;
       refresh();
     },
-    move(at) {
+    move(at, number) {
+      chosen = number;
       view = at;
       schedule();
     },

@@ -20,6 +20,23 @@ export function zoomed(range: Range, at: number, factor: number, full: Range): R
   return inside([low, low + width], full);
 }
 
+/** Fingers nearer to each other than this share of the view would zoom without end. */
+const CLOSEST_FINGERS = 0.02;
+
+/**
+ * The range in which what two fingers took hold of lies under them again.
+ *
+ * @param before where they took hold, shares of the view
+ * @param after  where they are now
+ */
+export function pinched(range: Range, before: readonly [number, number], after: readonly [number, number], full: Range): Range {
+  const apart = (fingers: readonly [number, number]) => Math.max(Math.abs(fingers[0] - fingers[1]), CLOSEST_FINGERS);
+  const width = Math.max(((range[1] - range[0]) * apart(before)) / apart(after), NARROWEST);
+  const held = range[0] + ((before[0] + before[1]) / 2) * (range[1] - range[0]);
+  const low = held - ((after[0] + after[1]) / 2) * width;
+  return inside([low, low + width], full);
+}
+
 /** The range moved by a share of its width. */
 export function panned(range: Range, share: number, full: Range): Range {
   const by = (range[1] - range[0]) * share;
