@@ -1,9 +1,11 @@
 import { FWHM_PER_SIGMA, SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import type { Feature, FitEnd, Group } from './feature.ts';
 import type { GroupFit } from './fitGroup.ts';
-import type { FitSamples } from './fitSamples.ts';
+import type { Component, FitSamples } from './fitSamples.ts';
+import { isFlatTopped } from './flatTop.ts';
 import { fwhmAt, type LineSpread } from './lineSpread.ts';
 import { firstAtLeast, gaussianInto, isUnderSampled, PROFILE_REACH } from './profile.ts';
+import type { ShapeFit } from './shapes.ts';
 
 /** A fitted line narrower than this share of the usual width is no line of the instrument ... */
 const TOO_NARROW = 0.5;
@@ -19,6 +21,12 @@ interface FitFacts {
   readonly spread: LineSpread;
   readonly threshold: number;
   readonly masked: Uint8Array;
+  /** Sample numbers, ascending. */
+  readonly saturated: readonly number[];
+  /** n, flux minus model. */
+  readonly left: Float64Array;
+  /** The feature in another shape, where the user asked for one. */
+  readonly shapes: ReadonlyMap<Component, ShapeFit>;
 }
 
 /** The components of a fit that stand above the threshold, as features (their `index` is given later). */
@@ -30,7 +38,7 @@ export function featuresOfFit(samples: FitSamples, fit: GroupFit, facts: FitFact
   return fit.components.flatMap((component, k): Feature[] => {
     const { flux, centre, sigma } = component;
     const snr = Math.abs(flux) / amplitudeErr(samples, fit, centre, sigma);
-    if (flux === 0 || snr < facts.threshold) return [];
+    if (component.byHand === undefined && component.shape === undefined && (flux === 0 || snr < facts.threshold)) return [];
     const at = Math.min(samples.x.length - 1, firstAtLeast(samples.x, centre));
     const continuum = facts.continuum[at] + offsetAt(samples, fit, centre);
     const fwhm = FWHM_PER_SIGMA * sigma;
@@ -38,7 +46,8 @@ export function featuresOfFit(samples: FitSamples, fit: GroupFit, facts: FitFact
     const fluxErr = err(3 * k);
     // the error of the continuum is that of the fit's offset: the noise under the line's own peak has no part in it
     const ew = continuum > 0 ? flux / continuum : Number.NaN;
-    const narrow = isTooNarrow(fwhm, fwhmErr, centre, facts.spread);
+    const narrow = component.byHand === undefined && isTooNarrow(fwhm, fwhmErr, centre, facts.spread);
+    const shaped = facts.shapes.get(component);
     return [
       {
         index: 0,
@@ -56,11 +65,29 @@ export function featuresOfFit(samples: FitSamples, fit: GroupFit, facts: FitFact
         snr,
         continuum,
         group: facts.group,
-        fit: fitEnd(fit),
+        fit: fitEnd(fit, component),
+        ...(component.byHand ? { byHand: component.byHand } : {}),
         notes: notesOf(samples, fit, k, facts),
+        ...(shaped ? inShape(shaped, continuum, err(size - 2), facts.spread) : {}),
       },
     ];
   });
+}
+
+/** What another shape measures in place of the Gaussian. */
+function inShape(
+  { as, centroid, centroidErr, flux, fluxErr, fwhm, fwhmErr }: ShapeFit,
+  continuum: number,
+  continuumErr: number,
+  spread: LineSpread,
+) {
+  const ew = continuum > 0 ? flux / continuum : Number.NaN;
+  return {
+    ...{ centroid, centroidErr, flux, fluxErr, fwhm, fwhmErr, ew },
+    ewErr: Math.abs(ew) * Math.hypot(fluxErr / flux, continuumErr / continuum),
+    ...intrinsicWidth(centroid, fwhm, fwhmErr, spread),
+    byHand: as === 'voigt' ? 'measured as a Voigt profile' : 'measured as two Gaussians',
+  };
 }
 
 function isTooNarrow(fwhm: number, fwhmErr: number, centre: number, spread: LineSpread): boolean {
@@ -101,8 +128,8 @@ function intrinsicWidth(centre: number, fwhm: number, fwhmErr: number, spread: L
   return { intrinsicFwhmKms: square > 0 && resolved ? (Math.sqrt(square) / centre) * SPEED_OF_LIGHT_KMS : 0 };
 }
 
-function fitEnd(fit: GroupFit): FitEnd {
-  if (fit.end.ended === 'converged') return { ended: 'converged' };
+function fitEnd(fit: GroupFit, { atBound }: Component): FitEnd {
+  if (fit.end.ended === 'converged') return atBound ? { ended: 'at-bound', which: atBound } : { ended: 'converged' };
   if (fit.end.ended === 'singular') return { ended: 'no-uncertainty' };
   return { ended: 'failed', reason: `no convergence in ${fit.end.steps} steps` };
 }
@@ -120,6 +147,8 @@ function notesOf(samples: FitSamples, fit: GroupFit, k: number, facts: FitFacts)
   let missing = from === 0 || samples.x[samples.x.length - 1] < centre + fwhm;
   for (let i = from; i < samples.x.length && samples.x[i] <= centre + fwhm; i++) missing ||= facts.masked[i] === 1;
   if (missing) notes.push('cut by missing samples');
+  if (facts.saturated.some((i) => Math.abs(samples.x[i] - centre) < fwhm)) notes.push('saturated: measured by what is left of its flanks');
+  else if (isFlatTopped(samples, fit.components[k], facts.left)) notes.push('flat-topped: saturated, or an unresolved pair or shell');
   return notes;
 }
 

@@ -1,6 +1,6 @@
 import { type LeastSquaresEnd, levenbergMarquardt } from '../numeric/index.ts';
 import type { Component, FitSamples, WidthPrior } from './fitSamples.ts';
-import { groupEquations } from './groupEquations.ts';
+import { type GroupEquations, groupEquations } from './groupEquations.ts';
 
 /** A finished fit: parameters three a component (flux, centre, ln sigma), then offset and slope of the local continuum. */
 export interface GroupFit {
@@ -14,9 +14,9 @@ export interface GroupFit {
   readonly last: number;
 }
 
-const MOST_STEPS = 60;
+export const MOST_STEPS = 60;
 /** A step that gains less chi2 than this moves nothing by more than a few thousandths of its error. */
-const CLOSE_ENOUGH = 1e-4;
+export const CLOSE_ENOUGH = 1e-4;
 
 /**
  * Fits all components of a group at once, with a local linear correction of the continuum.
@@ -24,21 +24,42 @@ const CLOSE_ENOUGH = 1e-4;
  * @param first,last samples of the window, both included
  */
 export function fitGroup(samples: FitSamples, first: number, last: number, starts: readonly Component[], width: WidthPrior): GroupFit {
-  const p = new Float64Array(3 * starts.length + 2);
-  starts.forEach((start, k) => {
-    p[3 * k] = start.flux;
-    p[3 * k + 1] = start.centre;
-    p[3 * k + 2] = Math.log(start.sigma);
-  });
+  const p = startPoint(starts, 1);
   const equations = groupEquations(samples, [{ first, last }], starts, width);
   const end = levenbergMarquardt(equations, p, { maxSteps: MOST_STEPS, closeEnough: CLOSE_ENOUGH });
   return {
     parameters: p,
-    components: starts.map((_, k) => ({ flux: p[3 * k], centre: p[3 * k + 1], sigma: Math.exp(p[3 * k + 2]) })),
+    components: starts.map((start, k) => componentOf(start, p, k, equations)),
     end,
     chi2: equations.chi2OfSamples(),
     dof: Math.max(1, equations.count - p.length),
     first,
     last,
+  };
+}
+
+/** Parameters at the start: three a component, two a stretch. */
+export function startPoint(starts: readonly Component[], stretches: number): Float64Array {
+  const p = new Float64Array(3 * starts.length + 2 * stretches);
+  starts.forEach((start, k) => {
+    p[3 * k] = start.flux;
+    p[3 * k + 1] = start.centre;
+    p[3 * k + 2] = Math.log(start.sigma);
+  });
+  return p;
+}
+
+/** Line `k` at the point `p`, with the words of its start. */
+export function componentOf(start: Component, p: Float64Array, k: number, equations: GroupEquations): Component {
+  const { byHand, shape, isBroad } = start;
+  const atBound = equations.atBound(p, k);
+  return {
+    flux: p[3 * k],
+    centre: p[3 * k + 1],
+    sigma: Math.exp(p[3 * k + 2]),
+    ...(isBroad ? { isBroad } : {}),
+    ...(atBound ? { atBound } : {}),
+    ...(byHand ? { byHand } : {}),
+    ...(shape ? { shape } : {}),
   };
 }

@@ -146,10 +146,16 @@ const keyOf = (window: Window<Seed>) =>
     .map((s) => `${s.centre} ${s.flux} ${s.sigma}`)
     .join(' ')}`;
 
+/** Width in samples of a line that is broader than usual. */
+function broadWidth({ x, sampleWidth }: FitSamples, { isBroad, centre, sigma }: Component): Pick<Peak, 'fwhm'> {
+  return isBroad ? { fwhm: (FWHM_PER_SIGMA * sigma) / sampleWidth[Math.min(x.length - 1, firstAtLeast(x, centre))] } : {};
+}
+
 const seedOf = (samples: FitSamples, component: Component): Seed => ({
   at: Math.min(samples.x.length - 1, firstAtLeast(samples.x, component.centre)),
   snr: Math.sign(component.flux) || 1,
   start: component,
+  ...broadWidth(samples, component),
 });
 
 function residualOf(samples: FitSamples, fits: readonly GroupFit[]): Float64Array {

@@ -1,4 +1,4 @@
-import type { WidthLaw } from './feature.ts';
+import type { ProfileShape, WidthLaw } from './feature.ts';
 
 /** The samples of a spectrum as the fits see them; all arrays one value a sample. */
 export interface FitSamples {
@@ -34,4 +34,12 @@ export interface Component {
   readonly centre: number;
   /** Gaussian sigma, Angstrom. */
   readonly sigma: number;
+  /** Far wider than usual lines: its width is free. */
+  readonly isBroad?: true;
+  /** A parameter that ended on its bound. */
+  readonly atBound?: 'centroid' | 'width' | 'flux';
+  /** Words for what was done to it by hand. */
+  readonly byHand?: string;
+  /** Measured in the end with this shape, as the user asked. */
+  readonly shape?: ProfileShape;
 }

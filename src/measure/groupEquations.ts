@@ -7,6 +7,10 @@ import { firstAtLeast, PROFILE_REACH, ROOT_2PI, UNDERSAMPLED_FWHM } from './prof
 const CENTRE_REACH = 2.5;
 /** ln(sigma) may leave the expected one by this much: a factor 12 for lines far wider than the instrument. */
 const WIDTH_REACH = 2.5;
+/** This near to its bound a parameter rests on it. */
+const AT_BOUND = 1 - 1e-9;
+/** ln(width) of a broad line is known from its start to this only. */
+const BROAD_SPREAD = 0.7;
 /** Prior of the local continuum about the global one, in units of the noise: weak, but it keeps crowded windows determined. */
 const OFFSET_SIGMA = 2;
 
@@ -16,6 +20,8 @@ export interface GroupEquations extends NormalEquations {
   readonly chi2OfSamples: () => number;
   /** Samples that count. */
   readonly count: number;
+  /** Which parameter of line `k` rests on its bound at `p`, if one does. */
+  readonly atBound: (p: Float64Array, k: number) => Component['atBound'];
 }
 
 /** Columns of the Jacobian of the fit at hand, three a line: grown as needed and used anew by every fit, since fits never run inside one another. */
@@ -40,8 +46,8 @@ export function groupEquations(
   const window = gather(samples, stretches);
   const { x, y, root, u, from, length } = window;
   const home = Int32Array.from(starts, (start) => homeOf(samples, stretches, start.centre));
-  const expected = Float64Array.from(starts, (start) => Math.log(width.sigmaAt(start.centre)));
-  const widthWeight = 1 / width.spread ** 2;
+  const expected = Float64Array.from(starts, (start) => Math.log(start.isBroad ? start.sigma : width.sigmaAt(start.centre)));
+  const widthWeight = Float64Array.from(starts, (start) => 1 / (start.isBroad ? BROAD_SPREAD : width.spread) ** 2);
   const low = new Int32Array(lines);
   const high = new Int32Array(lines);
   const residual = new Float64Array(length);
@@ -130,7 +136,7 @@ export function groupEquations(
       let priors = 0;
       for (let s = 0; s < stretches.length; s++)
         priors += window.offsetWeight[s] * (p[3 * lines + 2 * s] ** 2 + p[3 * lines + 2 * s + 1] ** 2);
-      for (let k = 0; k < lines; k++) priors += widthWeight * (expected[k] - p[3 * k + 2]) ** 2;
+      for (let k = 0; k < lines; k++) priors += widthWeight[k] * (expected[k] - p[3 * k + 2]) ** 2;
       return chi2 + priors;
     },
     accumulate(jtj, jtr) {
@@ -139,8 +145,8 @@ export function groupEquations(
         lineSums(jtj, jtr, k);
         for (let l = 0; l < k; l++) if (home[l] === home[k]) pairSums(jtj, k, l);
         const off = expected[k] - point[3 * k + 2];
-        jtj[(3 * k + 2) * size + 3 * k + 2] += widthWeight;
-        jtr[3 * k + 2] += widthWeight * off;
+        jtj[(3 * k + 2) * size + 3 * k + 2] += widthWeight[k];
+        jtr[3 * k + 2] += widthWeight[k] * off;
       }
       for (let s = 0; s < stretches.length; s++) {
         const a = 3 * lines + 2 * s;
@@ -158,6 +164,12 @@ export function groupEquations(
         jtj[(a + 1) * size + a] += window.sums[3 * s + 1];
         jtj[(a + 1) * size + a + 1] += window.sums[3 * s + 2] + weight;
       }
+    },
+    atBound(p, k) {
+      if (p[3 * k] === 0) return 'flux';
+      const reach = CENTRE_REACH * Math.exp(expected[k]);
+      if (Math.abs(p[3 * k + 1] - starts[k].centre) >= AT_BOUND * reach) return 'centroid';
+      return Math.abs(p[3 * k + 2] - expected[k]) >= AT_BOUND * WIDTH_REACH ? 'width' : undefined;
     },
     bound(p) {
       for (let k = 0; k < lines; k++) {

@@ -13,6 +13,8 @@ const JOIN_FWHM = 5;
 const REACH_FWHM = 4;
 /** ... but not nearer than this to a peak of the next group. */
 const AWAY_FWHM = 2.5;
+/** A broad line is fitted this far beyond its centre, in its own FWHM, beside what a usual line needs. */
+const BROAD_REACH_FWHM = 1;
 /** A chain of more peaks is cut at its widest gap: the cost of a fit grows with the cube. */
 const MOST_PEAKS = 14;
 
@@ -26,16 +28,16 @@ export function groupPeaks<P extends Peak>(peaks: readonly P[], fwhm: (sample: n
   for (const peak of peaks) {
     const chain = chains.at(-1);
     const previous = chain?.at(-1);
-    if (chain && previous && peak.at - previous.at < JOIN_FWHM * fwhm(peak.at)) chain.push(peak);
+    if (chain && previous && peak.at - endOf(chain) < JOIN_FWHM * fwhm(peak.at)) chain.push(peak);
     else chains.push([peak]);
   }
   const cut = chains.flatMap(cutChain);
   return cut.map((chain, k) => {
-    const left = chain[0].at;
-    const right = chain[chain.length - 1].at;
+    const left = Math.min(...chain.map((peak) => peak.at - BROAD_REACH_FWHM * (peak.fwhm ?? 0)));
+    const right = endOf(chain);
     const before = cut[k - 1]?.at(-1)?.at ?? Number.NEGATIVE_INFINITY;
     const after = cut[k + 1]?.[0].at ?? Number.POSITIVE_INFINITY;
-    const width = fwhm(left);
+    const width = fwhm(chain[0].at);
     const first = Math.max(
       0,
       Math.ceil(left - REACH_FWHM * width),
@@ -49,6 +51,9 @@ export function groupPeaks<P extends Peak>(peaks: readonly P[], fwhm: (sample: n
     return { peaks: chain, first, last };
   });
 }
+
+/** How far the peaks of a chain reach: a broad line is wider than its place. */
+const endOf = (chain: readonly Peak[]) => Math.max(...chain.map((peak) => peak.at + BROAD_REACH_FWHM * (peak.fwhm ?? 0)));
 
 function cutChain<P extends Peak>(chain: P[]): P[][] {
   if (chain.length <= MOST_PEAKS) return [chain];

@@ -1,5 +1,6 @@
 import { FWHM_PER_SIGMA } from '../units/index.ts';
 import { addLocalContinuum, addProfiles } from './addProfiles.ts';
+import { withBroadLine } from './broadLine.ts';
 import { fitGroup, type GroupFit } from './fitGroup.ts';
 import type { Component, FitSamples, WidthPrior } from './fitSamples.ts';
 import { sigmaInSamples } from './lineSpread.ts';
@@ -31,24 +32,46 @@ export function growGroup(
   threshold: number,
   spikes: number[],
 ): GroupFit {
-  let fit = fitGroup(samples, first, last, mergeClose(starts, width), width);
+  let fit = withoutTwins(samples, fitGroup(samples, first, last, mergeClose(starts, width), width), width);
   const used = last - first + 1;
   const price = Math.max(threshold * threshold, 3 * Math.log(used)) + 4;
   for (let round = 0; round < MOST_ADDED; round++) {
     const residual = residualOf(samples, fit);
     const spike = loneSpike(samples, fit, residual);
-    if (spike !== undefined) {
-      fit = withoutSpike(samples, fit, spike, width, spikes);
-      continue;
-    }
     const added = bestAddition(samples, fit, residual, width, threshold);
-    if (!added) break;
-    const trial = fitGroup(samples, first, last, [...fit.components, added], width);
+    const trial = added && fitGroup(samples, first, last, [...fit.components, added], width);
+    if (spike !== undefined) {
+      const cheaper = withoutSpike(samples, fit, spike, width);
+      // where a second line explains the sample as well, it is no spike
+      if (cheaper && !(trial && totalChi2(trial) + price < totalChi2(cheaper.fit))) {
+        samples.usable[cheaper.at] = 0;
+        spikes.push(cheaper.at);
+        fit = cheaper.fit;
+        continue;
+      }
+    }
+    if (!trial) break;
     if (totalChi2(fit) - totalChi2(trial) < price || !holds(trial, width)) break;
     fit = trial;
   }
   const grown = fit.components.length > starts.length ? pruned(samples, fit, width, price) : fit;
-  return withoutHiddenSpike(samples, withoutCancelling(samples, grown, width), width, price, spikes);
+  const plain = withoutHiddenSpike(samples, withoutCancelling(samples, grown, width), width, price, spikes);
+  return withBroadLine(samples, plain, width, price);
+}
+
+/** Two components that end nearer than this, in FWHM, are one: their fluxes cannot be told apart. */
+const TWINS_FWHM = 0.1;
+
+/** The fit with such twins made one: starts on either flank of a saturated top meet in its middle. */
+function withoutTwins(samples: FitSamples, fit: GroupFit, width: WidthPrior): GroupFit {
+  const kept: Component[] = [];
+  for (const component of [...fit.components].sort((a, b) => a.centre - b.centre)) {
+    const last = kept.at(-1);
+    const isTwin = last && component.flux * last.flux > 0 && component.centre - last.centre < TWINS_FWHM * FWHM_PER_SIGMA * component.sigma;
+    if (isTwin) kept[kept.length - 1] = { ...last, flux: last.flux + component.flux };
+    else kept.push(component);
+  }
+  return kept.length === fit.components.length ? fit : fitGroup(samples, fit.first, fit.last, kept, width);
 }
 
 /** An emission and an absorption component on top of each other, of like size, only cancel: both are artefacts of the fit. */
@@ -165,10 +188,10 @@ const windowOf = (samples: FitSamples, { first, last }: GroupFit): FitSamples =>
 });
 
 /**
- * Takes the spike out and fits again. A spike on the flank of a line can pull the fit onto itself, so that a good sample of the line looks like the spike: each
+ * The fit with the spike taken out. A spike on the flank of a line can pull the fit onto itself, so that a good sample of the line looks like the spike: each
  * bright sample nearby is tried, and the one whose absence leaves the best fit goes.
  */
-function withoutSpike(samples: FitSamples, fit: GroupFit, spike: number, width: WidthPrior, spikes: number[]): GroupFit {
+function withoutSpike(samples: FitSamples, fit: GroupFit, spike: number, width: WidthPrior): { at: number; fit: GroupFit } | undefined {
   let best: { at: number; fit: GroupFit } | undefined;
   for (let at = spike - SPIKE_NEIGHBOURS; at <= spike + SPIKE_NEIGHBOURS; at++) {
     if (at <= fit.first || at >= fit.last || !samples.usable[at]) continue;
@@ -178,10 +201,7 @@ function withoutSpike(samples: FitSamples, fit: GroupFit, spike: number, width: 
     samples.usable[at] = 1;
     if (!best || totalChi2(trial) < totalChi2(best.fit)) best = { at, fit: trial };
   }
-  if (!best) return fit;
-  samples.usable[best.at] = 0;
-  spikes.push(best.at);
-  return best.fit;
+  return best;
 }
 
 function loneSpike(samples: FitSamples, fit: GroupFit, residual: Float64Array): number | undefined {

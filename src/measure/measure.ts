@@ -2,11 +2,10 @@ import { normalTail } from '../numeric/index.ts';
 import { ProblemError, type Remark } from '../problems/index.ts';
 import { countUsable, type Spectrum } from '../spectrum/index.ts';
 import { FWHM_PER_SIGMA } from '../units/index.ts';
-import type { Continuum } from './continuum.ts';
 import type { Measurement, MeasureSettings } from './feature.ts';
-import type { GroupFit } from './fitGroup.ts';
 import { fitPasses } from './fitPasses.ts';
-import type { FitSamples, WidthPrior } from './fitSamples.ts';
+import type { FitSamples } from './fitSamples.ts';
+import type { FittedSpectrum } from './fittedSpectrum.ts';
 import { learnLineSpread } from './learnLineSpread.ts';
 import { fwhmAt, type LineSpread, widthPrior } from './lineSpread.ts';
 import { measurementOf } from './measurementOf.ts';
@@ -16,23 +15,6 @@ import { prepare } from './prepare.ts';
 export interface MeasureControl {
   readonly progress?: (stage: string, share: number) => void;
   readonly signal?: AbortSignal;
-}
-
-/** A spectrum with everything that was fitted to it by itself: what is done by hand starts from here. Not to be changed by whoever holds it. */
-export interface FittedSpectrum {
-  readonly samples: FitSamples;
-  readonly masked: Uint8Array;
-  readonly continuum: Continuum;
-  readonly noiseFactor?: number;
-  readonly noiseCorrelation: number;
-  readonly spread: LineSpread;
-  readonly width: WidthPrior;
-  readonly fits: readonly GroupFit[];
-  /** Sample numbers. */
-  readonly spikes: readonly number[];
-  readonly settings: MeasureSettings;
-  readonly expectedFalse: number;
-  readonly remarks: readonly Remark[];
 }
 
 const FEWEST_SAMPLES = 20;
@@ -95,6 +77,8 @@ export function fitSpectrum(spectrum: Spectrum, settings: MeasureSettings, contr
     width,
     fits,
     spikes: [...new Set(spikes)],
+    saturated: prepared.saturated,
+    name: spectrum.name,
     settings,
     expectedFalse: expectedFalse(samples, spread, settings),
     remarks,

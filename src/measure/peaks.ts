@@ -4,6 +4,8 @@ export interface Peak {
   readonly at: number;
   /** Signed: negative for absorption. */
   readonly snr: number;
+  /** Of a line that is known to be wider than usual, samples. */
+  readonly fwhm?: number;
 }
 
 /**

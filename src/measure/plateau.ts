@@ -70,7 +70,8 @@ function rowsOf(lines: readonly Component[], width: WidthPrior): Component[][] {
   return rows.filter((r) => r.length > 1 && r[r.length - 1].centre - r[0].centre >= NARROWEST_FWHM * fwhm(r[0]));
 }
 
-function isPlateau(samples: FitSamples, fit: GroupFit, row: readonly Component[], width: WidthPrior): boolean {
+/** Whether a row of components is better told as a step up and a step down of the continuum. */
+export function isPlateau(samples: FitSamples, fit: GroupFit, row: readonly Component[], width: WidthPrior): boolean {
   const fwhm = FWHM_PER_SIGMA * width.sigmaAt(row[0].centre);
   const first = Math.max(fit.first, firstAtLeast(samples.x, row[0].centre - SURROUNDINGS_FWHM * fwhm));
   const last = Math.min(fit.last, firstAtLeast(samples.x, row[row.length - 1].centre + SURROUNDINGS_FWHM * fwhm));

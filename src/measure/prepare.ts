@@ -9,6 +9,7 @@ import { toldWidth } from './learnLineSpread.ts';
 import { constantResolvingPower, fwhmAt, sigmaInSamples, widthPrior } from './lineSpread.ts';
 import { scatterNoise, scatterOverNoise } from './noise.ts';
 import { regularAxis } from './regularAxis.ts';
+import { saturatedSamples } from './saturation.ts';
 import { findSpikes } from './spikes.ts';
 import { widthOfTallPeaks } from './tallPeaks.ts';
 
@@ -27,6 +28,8 @@ export interface Prepared {
   readonly width: { readonly law: WidthLaw; readonly from: 'user' | 'file' | 'lines' | 'sampling' };
   readonly told: ReturnType<typeof toldWidth>;
   readonly spikes: readonly number[];
+  /** Sample numbers where the detector was full: not used. */
+  readonly saturated: readonly number[];
 }
 
 /** @param remarks what is assumed on the way is added */
@@ -63,6 +66,8 @@ export function prepare(spectrum: Spectrum, settings: MeasureSettings, remarks: 
   for (let i = 0; i < y.length; i++) y[i] = flux[i] - continuum.level[i];
   const samples: FitSamples = { x, y, noise, usable, sampleWidth };
   const sigma = sigmaInSamples(samples, widthPrior(width.law, 0));
+  const saturated = saturatedSamples(flux, y, noise, sigma);
+  for (const full of saturated) usable[full] = 0;
   const spikes = findSpikes(y, noise, usable, sigma);
   for (const spike of spikes) usable[spike] = 0;
   const shared = sharedNoise(samples, continuum, typical(sigma));
@@ -72,7 +77,7 @@ export function prepare(spectrum: Spectrum, settings: MeasureSettings, remarks: 
       `neighbouring samples share their noise (resampled or smoothed): errors under a line are ${shared.toFixed(2)} times what independent samples would give, and were taken so`,
     );
   const noiseFactor = spectrum.fluxErr ? { noiseFactor: factor } : {};
-  return { samples, continuum, ...noiseFactor, noiseCorrelation: shared, width, told, spikes };
+  return { samples, continuum, ...noiseFactor, noiseCorrelation: shared, width, told, spikes, saturated };
 }
 
 function usableSamples({ flux, masked }: Spectrum, noise: Float64Array): Uint8Array {

@@ -1,4 +1,4 @@
-import { seededRandom } from '../../src/numeric/index.ts';
+import { erfc, seededRandom } from '../../src/numeric/index.ts';
 import type { Spectrum } from '../../src/spectrum/index.ts';
 
 /** The truth of one line. */
@@ -28,7 +28,9 @@ export function sky(words: string): { spectrum: Spectrum; lines: TrueLine[]; fwh
     for (const { centre, flux: total } of lines) {
       const sigma = word('fwhm', centre / r) / 2.3548;
       const peak = total / (sigma * Math.sqrt(2 * Math.PI));
-      f += peak * Math.exp(-0.5 * ((w - centre) / sigma) ** 2);
+      // a detector collects over a whole sample
+      const edge = (side: number) => 0.5 * erfc((w + side * step - centre) / (sigma * Math.SQRT2));
+      f += (total * (edge(-0.5) - edge(0.5))) / step;
       // scattered light: Lorentzian wings of this share of the peak
       f += (peak * word('wings', 0)) / (1 + ((w - centre) / (2 * sigma)) ** 2);
     }
