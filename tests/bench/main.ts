@@ -1,4 +1,5 @@
 import { atomicBench } from './atomicBench.ts';
+import { deskBench } from './deskBench.ts';
 import { identifyBench } from './identifyBench.ts';
 import { namingBench } from './namingBench.ts';
 import { physicsBench } from './physicsBench.ts';
@@ -13,6 +14,7 @@ for (const [title, bench] of [
   ['reading', readersBench],
   ['naming', namingBench],
   ['naming a simulated nebula', identifyBench],
+  ['moving about the spectrum', deskBench],
   ['measuring, beside a script of numpy and scipy', seededBench],
 ] as const) {
   process.stdout.write(`\n${title}\n`);

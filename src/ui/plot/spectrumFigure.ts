@@ -153,6 +153,8 @@ export function layoutFor(scene: SpectrumScene, axes: Axes): Partial<Layout> {
   const { ink, layout } = scene;
   const lanes = laneTicks(words.spectrum.unnamed);
   const plain = {
+    // said, or the library looks through the values whether they are dates
+    type: 'linear',
     fixedrange: true,
     zeroline: false,
     showline: true,
