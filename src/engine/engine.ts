@@ -1,6 +1,17 @@
 import { type AtomicData, readUserLines, withUserLines } from '../atomic/index.ts';
 import { DEFAULT_NAMING_SETTINGS, type Naming, type NamingSettings, nameMarks } from '../identify/index.ts';
-import { DEFAULT_MEASURE_SETTINGS, type Measurement, type MeasureSettings, measure } from '../measure/index.ts';
+import {
+  DEFAULT_MEASURE_SETTINGS,
+  type FeatureShape,
+  type FittedSpectrum,
+  type FluxLimit,
+  fitSpectrum,
+  fluxLimit,
+  type Measurement,
+  type MeasureSettings,
+  measurementOf,
+  shapesOfFeature,
+} from '../measure/index.ts';
 import { ProblemError } from '../problems/index.ts';
 import type { ByteSource, ReadingChoices } from '../readers/index.ts';
 import { matchVerdicts, type OwnLines, type Settings, type Verdict } from '../session/index.ts';
@@ -9,6 +20,7 @@ import { assemble } from './assemble.ts';
 import { fixedNames } from './fixedNames.ts';
 import { marksOf } from './marksOf.ts';
 import { guessKind, type Material, readMaterial, type SourceKind } from './material.ts';
+import { namedPairs } from './namedPairs.ts';
 import { sourceHash } from './sourceHash.ts';
 
 /** How a run is watched and stopped. */
@@ -25,6 +37,10 @@ export interface Engine {
   open(source: ByteSource, kind: SourceKind | 'guess'): Promise<SourceKind>;
   /** @throws ProblemError when the source cannot be read as chosen; RangeError when nothing is open */
   analyse(settings: Settings, verdicts: readonly Verdict[], control?: RunControl): Promise<Analysis>;
+  /** Of the spectrum last analysed: the feature nearest to `at` (Angstrom, medium of the reading) in other shapes, best first; empty for a list of lines. */
+  shapesAt(at: number): readonly FeatureShape[];
+  /** Of the spectrum last analysed: three-sigma limit of an unseen line; undefined outside of it, or for a list of lines. */
+  limitAt(at: number): FluxLimit | undefined;
 }
 
 /**
@@ -36,7 +52,10 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
   const lists = listsOf(data);
   const hashed = stage<string>();
   const material = stage<Material>();
+  const fitted = stage<FittedSpectrum | undefined>();
   const measured = stage<Measurement | undefined>();
+  const tied = stage<Measurement | undefined>();
+  let last: { readonly fitted: FittedSpectrum; readonly measurement: Measurement; readonly edits: MeasureSettings['edits'] } | undefined;
   const named = stage<Naming>();
 
   return {
@@ -70,24 +89,32 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
       const { spectrum } = what;
       const sha256 = await hashed.of([], () => run('hashing', (progress) => sourceHash(bytes, progress, control.signal)));
       const measureSettings: MeasureSettings = { ...DEFAULT_MEASURE_SETTINGS, ...settings.measure };
-      const measurement = await measured.of([material.stamp(), measureSettings], () =>
+      const { edits = [], ...fitSettings } = measureSettings;
+      const fits = await fitted.of([material.stamp(), fitSettings], () =>
         spectrum
           ? run('measuring', (progress) =>
-              measure(spectrum, measureSettings, { progress: (_, share) => progress(share), signal: control.signal }),
+              fitSpectrum(spectrum, fitSettings, { progress: (_, share) => progress(share), signal: control.signal }),
             )
           : undefined,
       );
-      const features = measurement?.features ?? what.features;
-      const marks = marksOf(features, what.reading.medium);
+      const alone = await measured.of([fitted.stamp(), edits], () => fits && measurementOf(fits, edits));
+      const found = alone?.features ?? what.features;
+      const marks = marksOf(found, what.reading.medium);
       const { byFeature, lost } = matchVerdicts(
         verdicts,
-        marks.map((mark, k) => ({ at: mark.wavelength, atErr: features[k].centroidErr })),
+        marks.map((mark, k) => ({ at: mark.wavelength, atErr: found[k].centroidErr })),
       );
       const namingSettings: NamingSettings = { ...DEFAULT_NAMING_SETTINGS, ...settings.naming, medium: what.reading.medium };
       const fixed = fixedNames(byFeature, list);
       const naming = await named.of([material.stamp(), measured.stamp(), namingSettings, fixed, settings.ownLines], () =>
         run('naming', (progress) => nameMarks(marks, list, namingSettings, fixed, { progress, signal: control.signal })),
       );
+      const pairs = alone && measureSettings.tieNamedPairs ? namedPairs(list, what.reading.medium, found, naming, byFeature) : [];
+      const measurement = await tied.of([measured.stamp(), pairs], () =>
+        fits && pairs.length > 0 ? tieOrNot(fits, alone, edits, pairs) : alone,
+      );
+      const features = measurement?.features ?? what.features;
+      last = fits && measurement && { fitted: fits, measurement, edits };
       return assemble({
         data: list,
         sha256,
@@ -103,7 +130,20 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
         timings,
       });
     },
+    shapesAt: (at) => (last ? shapesOfFeature(last.fitted, last.edits ?? [], at) : []),
+    limitAt: (at) => last && fluxLimit(last.fitted, last.measurement.model, at),
   };
+}
+
+/** The measurement with ties, unless they made a feature come or go: names are counted along the features. */
+function tieOrNot(
+  fits: FittedSpectrum,
+  alone: Measurement | undefined,
+  edits: NonNullable<MeasureSettings['edits']>,
+  pairs: ReturnType<typeof namedPairs>,
+): Measurement | undefined {
+  const withTies = measurementOf(fits, edits, pairs);
+  return withTies.features.length === alone?.features.length ? withTies : alone;
 }
 
 /** The bundled list, or the last one that was joined with the user's lines. */

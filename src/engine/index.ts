@@ -1,6 +1,7 @@
 // The one door to computing: opens a source, runs reading, measuring and naming, keeps what did not change, puts the result together for desk and terminal.
 // Deliberately not here: storage, screens, files. worker.ts is its second entry, for the browser.
 export { type AtomicData, loadAtomicData } from '../atomic/index.ts';
+export type { FeatureShape, FluxLimit } from '../measure/index.ts';
 export { readSpectrum } from '../readers/index.ts';
 export type {
   Analysis,

@@ -91,6 +91,7 @@ function notesOf(feature: FeatureView): string {
   if (nature === 'raman') notes.push('Raman-scattered');
   if (nature === 'interstellar') notes.push('interstellar absorption');
   if (nature === 'telluric') notes.push('telluric');
+  if (feature.measured.byHand) notes.push(feature.measured.byHand);
   notes.push(...feature.measured.notes);
   const { fit } = feature.measured;
   if (fit.ended === 'at-bound') notes.push(`fit: ${fit.which} at its bound`);

@@ -1,3 +1,4 @@
+import type { FeatureShape, FluxLimit } from '../measure/index.ts';
 import type { Problem, Remark } from '../problems/index.ts';
 import type { OwnLines, Settings, Verdict } from '../session/index.ts';
 import type { Analysis, Progress, SamplesView } from './analysis.ts';
@@ -34,11 +35,17 @@ export type WorkerRequest =
       readonly ne: number;
       readonly own?: OwnLines;
     }
+  /** The feature nearest to `at` (Angstrom, medium of the reading) in other shapes. */
+  | { readonly ask: 'shapes'; readonly id: number; readonly at: number }
+  /** Three-sigma limit of an unseen line at `at`. */
+  | { readonly ask: 'limit'; readonly id: number; readonly at: number }
   /** Reads the user's own lines without taking them: a problem for every bad row. */
   | { readonly ask: 'check-lines'; readonly id: number; readonly own: OwnLines };
 
 export type WorkerAnswer =
   | { readonly say: 'lines'; readonly id: number; readonly result: LineSearchResult }
+  | { readonly say: 'shapes'; readonly id: number; readonly shapes: readonly FeatureShape[] }
+  | { readonly say: 'limit'; readonly id: number; readonly limit?: FluxLimit }
   | { readonly say: 'record'; readonly id: number; readonly record: LineRecord }
   | {
       readonly say: 'checked';

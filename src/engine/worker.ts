@@ -29,7 +29,9 @@ async function answer(request: WorkerRequest): Promise<void> {
     else if (request.ask === 'open') {
       const kind = await engine.open(blobSource(request.file, request.name), request.kind);
       say({ say: 'opened', id: request.id, kind });
-    } else if (request.ask === 'lines')
+    } else if (request.ask === 'shapes') say({ say: 'shapes', id: request.id, shapes: engine.shapesAt(request.at) });
+    else if (request.ask === 'limit') say({ say: 'limit', id: request.id, limit: engine.limitAt(request.at) });
+    else if (request.ask === 'lines')
       say({ say: 'lines', id: request.id, result: searchLines(engine.dataWith(request.own), request.query) });
     else if (request.ask === 'check-lines')
       say({ say: 'checked', id: request.id, ...checkOwnLines(engine.dataWith(undefined), request.own) });

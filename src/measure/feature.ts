@@ -69,6 +69,8 @@ export interface MeasureSettings {
   /** Growth of that FWHM along the spectrum, Angstrom per Angstrom; 0 when absent. */
   readonly instrumentFwhmSlope?: number;
   readonly absorption: boolean;
+  /** Whether blended features that are surely named take velocity and width, and where it helps the flux ratio, from an unblended partner. */
+  readonly tieNamedPairs: boolean;
   readonly continuum?: ContinuumSettings;
   /** What the user did to the features by hand, in order. */
   readonly edits?: readonly FeatureEdit[];
@@ -96,7 +98,7 @@ export type FeatureEdit =
 
 export type ProfileShape = 'gaussian' | 'voigt' | 'two-gaussians';
 
-export const DEFAULT_MEASURE_SETTINGS: MeasureSettings = { thresholdSigma: 4.5, absorption: true };
+export const DEFAULT_MEASURE_SETTINGS: MeasureSettings = { thresholdSigma: 4.5, absorption: true, tieNamedPairs: true };
 
 /** Width of a line as the instrument makes it: FWHM in Angstrom = `fwhmA` + `slope` (wavelength - `at`). */
 export interface WidthLaw {

@@ -110,7 +110,14 @@ export function openSource(document: SessionDocument, source: Source): Change {
 
 /** Settings without what belongs to one source alone. */
 function forAnotherSource({ measure, naming, ...rest }: Settings): Settings {
-  const { resolvingPower: _power, ...measureKept } = measure;
+  const {
+    resolvingPower: _power,
+    instrumentFwhmA: _width,
+    instrumentFwhmSlope: _slope,
+    continuum: _continuum,
+    edits: _edits,
+    ...measureKept
+  } = measure;
   const { z: _z, ...namingKept } = naming;
   return { ...rest, reading: {}, measure: measureKept, naming: namingKept };
 }

@@ -1,5 +1,7 @@
 // The document - source, settings, verdicts - and everything that may be done to it: described, reversible changes, undo and redo, the session file.
 // Deliberately not here: anything derived (features, candidates, tables), and where the file is kept (the screen's storage).
+
+export type { FeatureEdit } from '../measure/index.ts';
 export { applyChange, type Change, inverseOf, type Step } from './change.ts';
 export {
   accept,
@@ -25,6 +27,7 @@ export {
   type Source,
   type Verdict,
 } from './document.ts';
+export { dropEdit, editFeature } from './editFeature.ts';
 export { readSession, writeSession } from './file.ts';
 export { type History, make, redo, startHistory, undo } from './history.ts';
 export { matchVerdicts, type Place } from './matchVerdicts.ts';
