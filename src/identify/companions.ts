@@ -1,5 +1,6 @@
 import { type AtomicData, linesBetween } from '../atomic/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
+import { chanceLeftOut } from './leftOut.ts';
 import type { SystemModel } from './model.ts';
 import type { CompanionFinding, Mark, NamingSettings } from './naming.ts';
 import { isLocal } from './options.ts';
@@ -104,8 +105,9 @@ export function findCompanions(
       if (above <= 0) return say('too-faint', 0);
       const near = nearestWithin(marks, expectedAt, mergedWithin(mark));
       if (near !== undefined && Math.log10(marks[near].flux) > logPredicted - err) return say('hidden', 0, near);
+      const left = chanceLeftOut(model.leftOut, above);
       const gone = Math.exp(-0.5 * (above / Math.hypot(err, 0.1)) ** 2);
-      return say('absent', Math.max(-MOST_AGAINST, Math.log(model.leftOut + (1 - model.leftOut) * gone)));
+      return say('absent', Math.max(-MOST_AGAINST, Math.log(left + (1 - left) * gone)));
     }
     const off = Math.log10(marks[there].flux) - logPredicted;
     const fluxErr = Number.isFinite(marks[there].fluxErr) ? (Math.LOG10E * marks[there].fluxErr) / marks[there].flux : 0.05;
@@ -151,7 +153,7 @@ export function missingLines(
   data: AtomicData,
   survey: Survey,
   model: SystemModel,
-  scaleOf: (ion: number) => { mean: number; seen: number },
+  scaleOf: (line: number) => { mean: number; seen: number },
   logPredicted: (line: number) => number,
   toleranceKms: number,
 ): { line: number; predictedFlux: number; expectedAt: number }[] {
@@ -160,7 +162,7 @@ export function missingLines(
   const missing: { line: number; predictedFlux: number; expectedAt: number }[] = [];
   for (let line = first; line < end; line++) {
     if (isLocal(data, line)) continue;
-    const scale = scaleOf(lines.ion[line]);
+    const scale = scaleOf(line);
     if (!(scale.seen > 0.8)) continue;
     const expectedAt = lines.wavelengthVac[line] * (1 + model.z);
     const log = logPredicted(line) + scale.mean;

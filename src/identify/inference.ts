@@ -1,14 +1,16 @@
 import type { AtomicData } from '../atomic/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
-import { absencesOf, leftOutShare, strongestLines } from './absences.ts';
+import { absencesOf, strongestLines } from './absences.ts';
 import { claimsOf } from './claims.ts';
 import { type Drift, type DriftPoint, fitDrift, refineDrift, startPoints, withoutDrift } from './drift.ts';
 import { estimateKind } from './estimateKind.ts';
-import { fitScale, type IonScale, priorMeans } from './ionScales.ts';
+import { estimateLeftOut } from './estimateLeftOut.ts';
 import { factsOf } from './lineFacts.ts';
 import type { SystemModel } from './model.ts';
 import type { FixedName, Mark, NamingSettings, ObjectKind } from './naming.ts';
 import { rulesOf } from './rules.ts';
+import { type FamilyScale, scalePosterior, summaryOf } from './scalePosterior.ts';
+import { scalePriors } from './scalePriors.ts';
 import { sightingsOf } from './sightings.ts';
 import { startModel } from './startModel.ts';
 import type { Survey } from './survey.ts';
@@ -19,7 +21,7 @@ import type { Weighing } from './weighed.ts';
 export interface Inferred {
   readonly model: SystemModel;
   readonly weighings: readonly Weighing[];
-  readonly scales: readonly IonScale[];
+  readonly scales: readonly FamilyScale[];
   /** The marks with the drift of the wavelength calibration taken off. */
   readonly placed: readonly Mark[];
   readonly drift: Drift;
@@ -54,7 +56,7 @@ export function infer(
   let drift = fitDrift(startPoints(marks, data, z0), survey.low, survey.high);
   let placed = withoutDrift(marks, drift);
   let model = startModel(placed, data, z0, zErr0);
-  let scales: IonScale[] = [];
+  let scales: FamilyScale[] = [];
   let kind = settings.kind;
   let weighings: Weighing[] = [];
   for (let round = 0; round < MOST_ROUNDS; round++) {
@@ -67,11 +69,18 @@ export function infer(
     }
     const sightings = sightingsOf(weighings, placed, data, model);
     if (round > 1 && settings.kind === 'unknown') kind = estimateKind(data, scales).kind;
-    const means = priorMeans(data, kind, scales, facts.localIon);
+    const priors = scalePriors(data, kind, scales, model.hydrogenSeen);
     const absences = absencesOf(placed, data, strongest, survey, model, settings);
-    scales = Array.from(means, (mean, ion) => fitScale(mean, sightings.byIon.get(ion) ?? [], absences[ion], model.leftOut));
-    model = { ...model, leftOut: leftOutShare(placed, data, strongest, survey, model, scales, settings) };
-    const shared = { data, facts, settings, survey, model, sightings, absences, means, scales, claims: claimsOf(weighings) };
+    // what absences say must not decide how much they say
+    const bySightings = priors.map((prior, family) =>
+      summaryOf(scalePosterior(prior, sightings.byFamily.get(family) ?? [], [], model.leftOut)),
+    );
+    model = { ...model, leftOut: estimateLeftOut(placed, data, strongest, survey, model, bySightings, settings) };
+    const posteriors = priors.map((prior, family) =>
+      scalePosterior(prior, sightings.byFamily.get(family) ?? [], absences[family], model.leftOut),
+    );
+    scales = posteriors.map((posterior) => summaryOf(posterior));
+    const shared = { data, facts, settings, survey, model, sightings, posteriors, scales, claims: claimsOf(weighings) };
     const next = placed.map((mark, j) => weigh(mark, j, { ...shared, rule: rules[j] }));
     const moved = round + 1 < LEAST_ROUNDS ? 1 : largestMove(weighings, next);
     weighings = next;

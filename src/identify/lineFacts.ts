@@ -1,4 +1,4 @@
-import type { AtomicData } from '../atomic/index.ts';
+import type { AtomicData, Mechanism } from '../atomic/index.ts';
 import { roughDimming } from './roughReddening.ts';
 
 /** What the inference asks of every line again and again, one value a line in every array. */
@@ -15,8 +15,19 @@ export interface LineFacts {
   readonly dimming: Float64Array;
   /** How hard the ion is to make, ln((eV + 8) / 25), one value an ion: what a trend of velocity is taken against. */
   readonly hardness: Float64Array;
-  /** 1 for ions whose lines are local, one value an ion. */
-  readonly localIon: Uint8Array;
+  /** Index into `families` of every line. */
+  readonly family: Uint16Array;
+  /** Lines of one ion fed in one way share one scale: forbidden lines fade in dense gas, fluorescence follows the star. */
+  readonly families: readonly Family[];
+}
+
+/** The lines of one ion that one mechanism feeds. */
+export interface Family {
+  /** Index into `lines.ions`. */
+  readonly ion: number;
+  readonly mechanism: Mechanism;
+  /** Its lines stand still in the observer's frame. */
+  readonly local: boolean;
 }
 
 /** A line whose strength nobody knows is expected to be faint, with a wide error. */
@@ -44,14 +55,13 @@ export function factsOf(data: AtomicData): LineFacts {
     errDex: new Float64Array(lines.count),
     dimming: new Float64Array(lines.count),
     hardness: Float64Array.from(lines.ions, (ion) => Math.log((ion.creationEv + SOFTEST_EV) / MIDDLE_EV)),
-    localIon: new Uint8Array(lines.ions.length),
+    ...familiesOf(data),
   };
   for (let line = 0; line < lines.count; line++) {
     const nature = lines.nature(line);
     const absorbs = nature === 'telluric' || nature === 'interstellar';
     facts.absorbs[line] = absorbs ? 1 : 0;
     facts.local[line] = absorbs || nature === 'sky' ? 1 : 0;
-    if (facts.local[line] === 1) facts.localIon[lines.ion[line]] = 1;
     const strength = lines.logStrength[line];
     const isKnown = Number.isFinite(strength);
     facts.logStrength[line] = isKnown ? strength : UNKNOWN_LOG_STRENGTH;
@@ -62,4 +72,24 @@ export function factsOf(data: AtomicData): LineFacts {
   }
   known.set(data, facts);
   return facts;
+}
+
+function familiesOf({ lines }: AtomicData): Pick<LineFacts, 'family' | 'families'> {
+  const families: Family[] = [];
+  const family = new Uint16Array(lines.count);
+  const index = new Map<string, number>();
+  for (let line = 0; line < lines.count; line++) {
+    const nature = lines.nature(line);
+    const local = nature === 'sky' || nature === 'telluric' || nature === 'interstellar';
+    const mechanism = lines.mechanism(line);
+    const key = `${lines.ion[line]} ${local} ${local ? '' : mechanism}`;
+    let at = index.get(key);
+    if (at === undefined) {
+      at = families.length;
+      index.set(key, at);
+      families.push({ ion: lines.ion[line], mechanism, local });
+    }
+    family[line] = at;
+  }
+  return { family, families };
 }

@@ -1,3 +1,4 @@
+import type { LeftOut } from './leftOut.ts';
 import type { LineFacts } from './lineFacts.ts';
 
 /** What is common to all marks, estimated with the assignments. */
@@ -12,8 +13,10 @@ export interface SystemModel {
   readonly logZero: number;
   /** Rough reddening, c(Hbeta). */
   readonly cHbeta: number;
-  /** Chance that a line above the limit is not among the marks all the same. */
-  readonly leftOut: number;
+  /** What the list leaves out. */
+  readonly leftOut: LeftOut;
+  /** The flux zero comes from lines of hydrogen. */
+  readonly hydrogenSeen: boolean;
 }
 
 /** log10 flux predicted for a line at ion scale 0, in the marks' unit. */

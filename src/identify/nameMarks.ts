@@ -82,7 +82,7 @@ export function nameMarks(
       data,
       survey,
       model,
-      (ion) => scales[ion],
+      (line) => scales[factsOf(data).family[line]],
       (line) => predictedLog(factsOf(data), line, model),
       settings.toleranceKms,
     ).map((m) => ({ ...m, expectedAt: asMeasured(inferred.drift, m.expectedAt) })),

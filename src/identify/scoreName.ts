@@ -53,9 +53,9 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
     MOST_OWED,
     sorted.reduce((sum, p) => sum + p.owed, 0),
   );
+  const logStrangers = Math.log(strangersPerDex(Math.log10(Math.abs(mark.flux)) - survey.logLimitAt(mark.wavelength)));
   const strengthNats =
-    Math.log((1 - WIDE_SHARE) * normal(excess, err) + WIDE_SHARE * normal(excess, Math.hypot(err, WIDE_DEX))) -
-    Math.log(strangersPerDex(Math.log10(Math.abs(mark.flux)) - survey.logLimitAt(mark.wavelength)));
+    Math.log((1 - WIDE_SHARE) * normal(excess, err) + WIDE_SHARE * normal(excess, Math.hypot(err, WIDE_DEX))) - logStrangers;
   let priorNats = -Math.log(STRANGERS);
   if (parts.length > 1) priorNats += BLEND_PRIOR * (parts.length - 1);
   let claimNats = 0;
@@ -80,5 +80,6 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
     owedNats,
     ionSeen: sorted[0].seen,
     probability: 0,
+    logStrangers,
   };
 }

@@ -1,11 +1,10 @@
 import { type AtomicData, linesBetween } from '../atomic/index.ts';
 import { median, quantile } from '../numeric/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
+import { USUAL_LEFT_OUT } from './leftOut.ts';
 import type { SystemModel } from './model.ts';
 import type { Mark } from './naming.ts';
 import { isLocal } from './options.ts';
-
-const START_LEFT_OUT = 0.05;
 
 /** The model before any name is weighed. */
 export const startModel = (marks: readonly Mark[], data: AtomicData, z: number, zErr: number): SystemModel => ({
@@ -15,7 +14,8 @@ export const startModel = (marks: readonly Mark[], data: AtomicData, z: number, 
   trendKms: 0,
   logZero: startZero(marks, data, z),
   cHbeta: 0,
-  leftOut: START_LEFT_OUT,
+  leftOut: USUAL_LEFT_OUT,
+  hydrogenSeen: false,
 });
 
 /** A first guess of the dispersion: marks with tiny formal errors still scatter by the wavelength calibration. */

@@ -92,14 +92,14 @@ function fluxFrame(
   model: SystemModel,
   sure: readonly { mark: Mark; best: Weighed }[],
   data: AtomicData,
-): Pick<SystemModel, 'logZero' | 'cHbeta'> {
+): Pick<SystemModel, 'logZero' | 'cHbeta' | 'hydrogenSeen'> {
   const hydrogen = sure.filter(({ best }) => best.lines.length === 1 && data.lines.ions[data.lines.ion[best.lines[0]]].name === 'H I');
   const points = hydrogen.map(({ mark, best }) => ({
     x: -roughDimming(data.lines.wavelengthVac[best.lines[0]]),
     y: Math.log10(mark.flux) - data.lines.logStrength[best.lines[0]],
     w: 1 / logFluxErr(mark) ** 2 + 1,
   }));
-  if (points.length === 0) return { logZero: model.logZero, cHbeta: model.cHbeta };
+  if (points.length === 0) return { logZero: model.logZero, cHbeta: model.cHbeta, hydrogenSeen: false };
   // slope with a prior about moderate reddening, so that two lines next to each other do not decide
   const prior = { mean: 0.3, weight: 1 / 0.5 ** 2 };
   const sw = points.reduce((s, p) => s + p.w, 0);
@@ -108,5 +108,5 @@ function fluxFrame(
   const sxx = points.reduce((s, p) => s + p.w * (p.x - mx) ** 2, 0);
   const sxy = points.reduce((s, p) => s + p.w * (p.x - mx) * (p.y - my), 0);
   const cHbeta = Math.min(4, Math.max(0, (sxy + prior.mean * prior.weight) / (sxx + prior.weight)));
-  return { cHbeta, logZero: my - cHbeta * mx };
+  return { cHbeta, logZero: my - cHbeta * mx, hydrogenSeen: true };
 }

@@ -2,13 +2,13 @@ import { normalTail } from '../numeric/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import { blendsOf, type Single } from './blends.ts';
 import { claimedElsewhere } from './claims.ts';
-import { fitScale, type IonScale } from './ionScales.ts';
 import { predictedLog } from './model.ts';
 import type { Mark } from './naming.ts';
 import { isLocal, type Option, optionsOf } from './options.ts';
+import { type FamilyScale, summaryOf } from './scalePosterior.ts';
 import { scoreName } from './scoreName.ts';
 import type { WeighContext } from './weighContext.ts';
-import type { Weighed, Weighing } from './weighed.ts';
+import { logOddsOf, type Weighing } from './weighed.ts';
 
 /** Candidates below this probability are dropped, but for the first few. */
 const HOPELESS = 1e-5;
@@ -18,15 +18,13 @@ const ALWAYS_KEPT = 5;
 export function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
   const { data, settings, model, rule } = context;
   if (mark.artefact || rule.none) return { candidates: [], noneProbability: 1 };
-  const cache = new Map<number, IonScale>();
-  const scaleWithout = (ion: number): IonScale => {
-    const known = cache.get(ion);
+  const cache = new Map<number, FamilyScale>();
+  const scaleWithout = (family: number): FamilyScale => {
+    const known = cache.get(family);
     if (known) return known;
-    const { byIon, ionsOfMark } = context.sightings;
-    const scale = ionsOfMark[j].has(ion)
-      ? fitScale(context.means[ion], byIon.get(ion) ?? [], context.absences[ion], model.leftOut, j)
-      : context.scales[ion];
-    cache.set(ion, scale);
+    const sighting = context.sightings.ofMark[j].get(family);
+    const scale = sighting ? summaryOf(context.posteriors[family], sighting) : context.scales[family];
+    cache.set(family, scale);
     return scale;
   };
   const singles = likelyOnes(mark, optionsOf(mark, data, settings, model), context, scaleWithout).map((single) => ({
@@ -41,9 +39,9 @@ export function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
     const parts = forced.map((line) => singles.find((s) => s.line === line) ?? farSingle(mark, line, context, scaleWithout));
     return { candidates: [{ ...scoreName(mark, j, parts, context), probability: 1 }], noneProbability: 0 };
   }
-  const scored = names.map((parts) => scoreName(mark, j, parts, context)).sort((a, b) => logOdds(b) - logOdds(a));
-  const top = Math.max(0, ...scored.map(logOdds));
-  const weights = scored.map((s) => Math.exp(logOdds(s) - top));
+  const scored = names.map((parts) => scoreName(mark, j, parts, context)).sort((a, b) => logOddsOf(b) - logOddsOf(a));
+  const top = Math.max(0, ...scored.map(logOddsOf));
+  const weights = scored.map((s) => Math.exp(logOddsOf(s) - top));
   const none = Math.exp(-top);
   const total = weights.reduce((a, b) => a + b, none);
   return {
@@ -54,8 +52,6 @@ export function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
   };
 }
 
-const logOdds = (w: Weighed) => w.wavelengthNats + w.strengthNats + w.widthNats + w.priorNats + w.claimNats + w.owedNats;
-
 /** Options this many nats below the best are not weighed further. */
 const OUT_OF_REACH = 16;
 /** Even a wrong prediction of the strength costs no more than a line that is wide by this much, nats and dex. */
@@ -63,14 +59,14 @@ const WIDE_NATS = 3;
 const WIDE_DEX = 1.3;
 
 /** The options with their predicted flux, but for those that cannot win. */
-function likelyOnes(mark: Mark, options: readonly Option[], context: WeighContext, scaleOf: (ion: number) => IonScale): Single[] {
-  const { data, facts, model } = context;
-  const { ion } = data.lines;
+function likelyOnes(mark: Mark, options: readonly Option[], context: WeighContext, scaleOf: (family: number) => FamilyScale): Single[] {
+  const { facts, model } = context;
+  const { family } = facts;
   const logFlux = Math.log10(Math.abs(mark.flux));
   const rough = new Float64Array(options.length);
   let best = Number.NEGATIVE_INFINITY;
   options.forEach((option, k) => {
-    const scale = scaleOf(ion[option.line]);
+    const scale = scaleOf(family[option.line]);
     const excess = (logFlux - predictedLog(facts, option.line, model) - scale.mean) ** 2;
     const variance = facts.errDex[option.line] ** 2 + scale.variance;
     // a line outside the tolerance can only be a part of a blend: its own place says nothing
@@ -85,7 +81,7 @@ function likelyOnes(mark: Mark, options: readonly Option[], context: WeighContex
   const singles: Single[] = [];
   options.forEach(({ line, off, sigma, within }, k) => {
     if (rough[k] < least && !wanted?.includes(line)) return;
-    const scale = scaleOf(ion[line]);
+    const scale = scaleOf(family[line]);
     const logPredicted = predictedLog(facts, line, model) + scale.mean;
     singles.push({
       line,
@@ -118,10 +114,10 @@ function owedBy(mark: Mark, j: number, { line, logPredicted, err }: Single, { fa
 const sameLines = (a: readonly number[], parts: readonly Single[]) => a.length === parts.length && parts.every((p) => a.includes(p.line));
 
 /** A name the user insists on although it lies outside the tolerance. */
-function farSingle(mark: Mark, line: number, context: WeighContext, scaleOf: (ion: number) => IonScale): Single {
+function farSingle(mark: Mark, line: number, context: WeighContext, scaleOf: (family: number) => FamilyScale): Single {
   const { data, facts, model } = context;
   const shift = isLocal(data, line) ? 1 : 1 + model.z;
-  const scale = scaleOf(data.lines.ion[line]);
+  const scale = scaleOf(facts.family[line]);
   return {
     line,
     within: false,

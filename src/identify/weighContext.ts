@@ -1,10 +1,10 @@
 import type { AtomicData } from '../atomic/index.ts';
 import type { Claim } from './claims.ts';
-import type { Absence, IonScale } from './ionScales.ts';
 import type { LineFacts } from './lineFacts.ts';
 import type { SystemModel } from './model.ts';
 import type { NamingSettings } from './naming.ts';
 import type { Rule } from './rules.ts';
+import type { FamilyScale, ScalePosterior } from './scalePosterior.ts';
 import type { Sightings } from './sightings.ts';
 import type { Survey } from './survey.ts';
 
@@ -16,9 +16,8 @@ export interface WeighContext {
   readonly survey: Survey;
   readonly model: SystemModel;
   readonly sightings: Sightings;
-  readonly absences: readonly (readonly Absence[])[];
-  readonly means: Float64Array;
-  readonly scales: readonly IonScale[];
+  readonly posteriors: readonly ScalePosterior[];
+  readonly scales: readonly FamilyScale[];
   readonly claims: ReadonlyMap<number, Claim>;
   readonly rule: Rule;
 }

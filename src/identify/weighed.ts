@@ -19,7 +19,12 @@ export interface Weighed {
   /** Weighted number of other lines of the (main) ion that were seen. */
   readonly ionSeen: number;
   readonly probability: number;
+  /** Logarithm of the density of strangers of this flux, per dex; `strengthNats` holds it already. */
+  readonly logStrangers: number;
 }
+
+/** Log odds of a name against "none of these". */
+export const logOddsOf = (w: Weighed): number => w.wavelengthNats + w.strengthNats + w.widthNats + w.priorNats + w.claimNats + w.owedNats;
 
 export interface Weighing {
   readonly candidates: readonly Weighed[];

@@ -1,0 +1,54 @@
+import type { AtomicData } from '../atomic/index.ts';
+import { LOCAL_LOG_SCALE, priorLogScale } from './kindPriors.ts';
+import { factsOf } from './lineFacts.ts';
+import type { ObjectKind } from './naming.ts';
+import type { FamilyScale, ScalePrior } from './scalePosterior.ts';
+
+/** Spread of ion abundances and ionisation about the reference, dex: common practice, no source. */
+const PRIOR_SPREAD_DEX = 0.9;
+/** What light pumps follows the star and its distance. */
+const PUMPED_SPREAD_DEX = 1.2;
+/** Two families of one ion share its abundance, not what feeds them. */
+const SIBLING_SPREAD_DEX = 0.7;
+const SIBLING_WEIGHT = 3;
+/** Neighbours in ionisation energy share excitation: width of the kernel in ln(energy). */
+const KERNEL_WIDTH = 0.35;
+const KERNEL_PRIOR_WEIGHT = 1.5;
+/** Families that another mechanism feeds tell less. */
+const OTHER_MECHANISM = 0.5;
+const SEEN = 0.8;
+/** The flux zero is that of hydrogen's lines once there are any. */
+const HYDROGEN_SPREAD_DEX = 0.15;
+/**
+ * Prior of every family: the kind of object, what families of about the same creation energy show, and other families of the ion.
+ *
+ * @param hydrogenSeen the flux zero was taken from lines of hydrogen
+ */
+export function scalePriors(data: AtomicData, kind: ObjectKind, scales: readonly FamilyScale[], hydrogenSeen: boolean): ScalePrior[] {
+  const { families } = factsOf(data);
+  const { ions } = data.lines;
+  const place = ions.map((ion) => Math.log(ion.creationEv + 8));
+  const base = ions.map((ion) => priorLogScale(ion, kind));
+  const seen = families.flatMap((family, k) => (!family.local && scales[k]?.seen > SEEN ? [{ ...family, scale: scales[k] }] : []));
+  return families.map(({ ion, mechanism, local }): ScalePrior => {
+    if (local) return { mean: LOCAL_LOG_SCALE, spread: PRIOR_SPREAD_DEX };
+    if (hydrogenSeen && ions[ion].name === 'H I' && mechanism === 'recombination') return { mean: 0, spread: HYDROGEN_SPREAD_DEX };
+    let sum = 0;
+    let weight = KERNEL_PRIOR_WEIGHT;
+    let hasSibling = false;
+    for (const other of seen) {
+      if (other.ion === ion && other.mechanism === mechanism) continue;
+      const away = (place[ion] - place[other.ion]) / KERNEL_WIDTH;
+      let k = Math.exp(-0.5 * away * away) * Math.min(2, other.scale.seen);
+      if (other.mechanism !== mechanism) k *= OTHER_MECHANISM;
+      if (other.ion === ion) {
+        hasSibling = true;
+        k *= SIBLING_WEIGHT;
+      }
+      sum += k * (other.scale.mean - base[other.ion]);
+      weight += k;
+    }
+    const spread = mechanism === 'fluorescence' ? PUMPED_SPREAD_DEX : PRIOR_SPREAD_DEX;
+    return { mean: base[ion] + sum / weight, spread: hasSibling ? Math.min(spread, SIBLING_SPREAD_DEX) : spread };
+  });
+}
