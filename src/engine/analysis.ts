@@ -117,6 +117,10 @@ export interface Analysis {
   readonly resolvingPower?: number;
   readonly resolvingPowerFrom?: 'user' | 'file' | 'lines' | 'sampling';
   readonly noiseFactor?: number;
+  /** FWHM of a usual line at the middle of the spectrum, Angstrom, and how it goes along it. */
+  readonly lineWidth?: { readonly fwhmA: number; readonly form: 'constant-resolving-power' | 'constant-width' | 'linear' };
+  /** Detail of this period is followed by half in the continuum, Angstrom. */
+  readonly continuumHalfPeriodA?: number;
   readonly expectedFalse?: number;
   readonly features: readonly FeatureView[];
   readonly redshifts: readonly RedshiftHypothesis[];

@@ -58,6 +58,8 @@ export function assemble(parts: Parts): Analysis {
     resolvingPower: measurement?.resolvingPower,
     resolvingPowerFrom: measurement?.resolvingPowerFrom,
     noiseFactor: measurement?.noiseFactor,
+    ...(measurement ? { lineWidth: { fwhmA: measurement.lineWidth.fwhmA, form: measurement.lineWidth.form } } : {}),
+    continuumHalfPeriodA: measurement?.continuumHalfPeriodA,
     expectedFalse: measurement?.expectedFalse,
     features,
     redshifts: naming.redshifts,

@@ -3,6 +3,7 @@ import { acceptCandidate, declareRow, redoNext, rejectCandidate, reopenRow, undo
 import { desk, setDesk, type Tab } from './desk/deskStore.ts';
 import { saveTable } from './desk/files.ts';
 import { focusFilter, focusNote } from './desk/focus.ts';
+import { addAtPointer, deleteFeature, isPointing, splitFeature } from './desk/handEdits.ts';
 import { closeIn, nextScale, otherFrame, otherMedium, wholeSpectrum, zoomBy } from './desk/looking.ts';
 import { pickFile } from './desk/pickFile.ts';
 import { words } from './words.ts';
@@ -24,6 +25,7 @@ const { commands: label } = words;
 const always = () => true;
 const atDesk = () => desk().stage === 'desk';
 const withRow = () => atDesk() && chosenRow() !== undefined;
+const withFit = () => withRow() && desk().samples !== undefined;
 const candidate = (n: number) => chosenRow()?.candidates[n];
 
 const show = (name: Tab, key: string): Command => ({
@@ -103,6 +105,23 @@ export const COMMANDS: readonly Command[] = [
     run: () => onRow(reopenRow),
   },
   { name: 'note', label: label.note, group: 'decide', keys: ['m'], canRun: withRow, run: focusNote },
+  {
+    name: 'add-feature',
+    label: label.addFeature,
+    group: 'decide',
+    keys: ['a'],
+    canRun: () => atDesk() && isPointing(),
+    run: addAtPointer,
+  },
+  { name: 'split-feature', label: label.splitFeature, group: 'decide', keys: ['t'], canRun: withFit, run: () => onRow(splitFeature) },
+  {
+    name: 'delete-feature',
+    label: label.deleteFeature,
+    group: 'decide',
+    keys: ['Delete'],
+    canRun: withFit,
+    run: () => onRow(deleteFeature),
+  },
   { name: 'undo', label: label.undo, group: 'decide', keys: ['Mod+z'], canRun: () => desk().history.past.length > 0, run: undoLast },
   {
     name: 'redo',

@@ -1,4 +1,13 @@
-import type { LineRecord, LineSearchResult, Progress, SamplesView, WorkerAnswer, WorkerRequest } from '../engine/index.ts';
+import type {
+  FeatureShape,
+  FluxLimit,
+  LineRecord,
+  LineSearchResult,
+  Progress,
+  SamplesView,
+  WorkerAnswer,
+  WorkerRequest,
+} from '../engine/index.ts';
 import type { Problem } from '../problems/index.ts';
 import type { OwnLines, Settings, Verdict } from '../session/index.ts';
 
@@ -26,6 +35,10 @@ export interface WorkerClient {
   lineRecord(line: number, te: number, ne: number, own: OwnLines | undefined): Promise<LineRecord>;
   /** Reads the user's own lines without taking them: a problem for every bad row. */
   checkLines(own: OwnLines): Promise<Extract<WorkerAnswer, { say: 'checked' }>>;
+  /** The feature nearest to `at` (Angstrom of the file) in other shapes, best first. */
+  shapesAt(at: number): Promise<readonly FeatureShape[]>;
+  /** Three-sigma limit of an unseen line; undefined outside the spectrum. */
+  limitAt(at: number): Promise<FluxLimit | undefined>;
   /** Ends the thread: what is pending rejects with `Cancelled`; whoever calls next has to open the file again. */
   cancel(): void;
 }
@@ -113,6 +126,16 @@ export function workerClient(bundleUrl: string, progress: (p: Progress) => void,
       const answer = await post(await running(), { ask: 'check-lines', own });
       if (answer.say !== 'checked') throw new TypeError(`check-lines was answered by ${answer.say}`);
       return answer;
+    },
+    async shapesAt(at) {
+      const answer = await post(await running(), { ask: 'shapes', at });
+      if (answer.say !== 'shapes') throw new TypeError(`shapes was answered by ${answer.say}`);
+      return answer.shapes;
+    },
+    async limitAt(at) {
+      const answer = await post(await running(), { ask: 'limit', at });
+      if (answer.say !== 'limit') throw new TypeError(`limit was answered by ${answer.say}`);
+      return answer.limit;
     },
     cancel: () => end(new Cancelled()),
   };

@@ -85,6 +85,9 @@ export function goBackTo(count: number): void {
   follow(history, `went back to: ${history.past.at(-1)?.sentence ?? 'the beginning'}`);
 }
 
+/** Makes a change that is described elsewhere. */
+export const commitChange = (change: Change) => commit(change);
+
 function commit(change: Change): void {
   if (change.steps.length === 0) return;
   follow(make(desk().history, change), change.sentence);

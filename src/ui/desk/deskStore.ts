@@ -38,6 +38,8 @@ export interface DeskFields {
   /** The analysis on screen belongs to an earlier document: the run was stopped. */
   readonly outOfDate: boolean;
   readonly alerts: readonly Alert[];
+  /** A newer build is on this machine and waits for a reload. */
+  readonly newBuild: boolean;
   /** What happened last, a sentence for the status line and the screen reader. */
   readonly status: string;
   /** Vacuum Angstrom of the chosen feature: survives a refit. */
@@ -51,6 +53,8 @@ export interface DeskFields {
   /** What the wavelength axis shows; absent = as in the file. */
   readonly axisMedium?: AxisMedium;
   readonly tab: Tab;
+  /** A place on the spectrum that something is to be done at by hand, Angstrom of the file. */
+  readonly handPlace?: number;
   readonly filter: RowFilter;
   readonly sorting: Sorting;
   readonly theme: Theme;
@@ -67,6 +71,7 @@ const START: DeskFields = {
   rows: [],
   outOfDate: false,
   alerts: [],
+  newBuild: false,
   status: '',
   scale: 'asinh',
   gain: 1,

@@ -25,6 +25,9 @@ function client(): WorkerClient {
 /** The thread for questions about the line list. */
 export const listClient = (): Pick<WorkerClient, 'searchLines' | 'lineRecord' | 'checkLines'> => client();
 
+/** The thread for questions about the spectrum that is open. */
+export const measuringClient = (): Pick<WorkerClient, 'shapesAt' | 'limitAt'> => client();
+
 /** Bytes at hand, by `sourceKey`. */
 const files = new Map<string, Blob>();
 /** Key of the source the worker holds. */

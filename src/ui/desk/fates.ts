@@ -25,7 +25,9 @@ export const FATES = {
   rows: 'gone',
   run: 'gone',
   outOfDate: 'gone',
+  handPlace: 'gone',
   alerts: 'gone',
+  newBuild: 'gone',
   status: 'gone',
 } as const satisfies Record<keyof DeskFields, Fate>;
 

@@ -7,6 +7,7 @@ import { words } from '../words.ts';
 import { Candidates } from './Candidates.tsx';
 import { CloseUp } from './CloseUp.tsx';
 import { CommandButton } from './CommandButton.tsx';
+import { FitByHand } from './FitByHand.tsx';
 import { Icon } from './Icon.tsx';
 import { Mark } from './Mark.tsx';
 import { NoteField } from './NoteField.tsx';
@@ -39,6 +40,7 @@ export function CaseView() {
       </header>
       <CloseUp row={row} />
       <Measured row={row} />
+      <FitByHand key={`hand ${row.feature.number}`} row={row} />
       <Verdicts row={row} />
       <Candidates row={row} />
       <NoteField key={row.feature.number} row={row} />
@@ -61,6 +63,7 @@ function Measured({ row }: { row: DeskRow }) {
   const doubts = [
     measured.artefact ? label.artefactFound(measured.artefact) : '',
     measured.fit.ended === 'converged' ? '' : label.fit[measured.fit.ended],
+    measured.byHand ?? '',
     ...measured.notes,
   ].filter(Boolean);
   return (

@@ -11,6 +11,7 @@ import type { Profile } from '../plot/profileCurve.ts';
 import { profileOf } from '../plot/profileOf.ts';
 import { extent, place, svgPath, svgSteps } from '../plot/svgPath.ts';
 import { words } from '../words.ts';
+import { useCloseUpPointer } from './useCloseUpPointer.ts';
 
 const WIDTH = 360;
 const HEIGHT = 128;
@@ -26,15 +27,17 @@ export function CloseUp({ row }: { row: DeskRow }) {
   const samples = useDesk((state) => state.samples);
   const rows = useDesk((state) => state.rows);
   const drawn = useMemo(() => samples && closeUpCurves(samples, row, rows), [samples, row, rows]);
+  const { handlers, shown } = useCloseUpPointer(row, drawn?.xAxis);
   if (!drawn) return null;
   return (
-    <svg className="curves close-up" viewBox={`0 0 ${WIDTH} ${HEIGHT + FOOT}`} role="img" aria-label={words.case.closeUp}>
+    <svg className="curves close-up" viewBox={`0 0 ${WIDTH} ${HEIGHT + FOOT}`} role="img" aria-label={words.case.closeUp} {...handlers}>
       <svg width={WIDTH} height={HEIGHT} aria-hidden="true">
         <path className="curve-chosen" d={`M${drawn.centre.toFixed(1)} 0V${HEIGHT}`} />
         <path className="curve-continuum" d={drawn.continuum} />
         {drawn.components.map(({ at, d }) => (
           <path key={at} className="curve-component" d={d} />
         ))}
+        {shown !== undefined && <path className="curve-place" d={`M${place(drawn.xAxis, shown).toFixed(1)} 0V${HEIGHT}`} />}
         <path className="curve-data" d={drawn.data} />
         <path className="curve-model" d={drawn.model} />
       </svg>
@@ -74,6 +77,7 @@ function closeUpCurves(samples: SamplesView, row: DeskRow, rows: readonly DeskRo
     return svgPath(fit.x, fit.y, xAxis, yAxis);
   };
   return {
+    xAxis,
     centre: place(xAxis, centroid),
     data: svgSteps(data.x, data.y, xAxis, yAxis),
     model: curve(profiles),

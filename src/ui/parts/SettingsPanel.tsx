@@ -2,14 +2,14 @@ import type { Settings } from '../../session/index.ts';
 import { redshiftFromVelocity, velocityFromRedshift } from '../../units/index.ts';
 import { set } from '../desk/decisions.ts';
 import { useDesk } from '../desk/deskStore.ts';
-import { fixed, probabilityText, round, signed } from '../figures.ts';
+import { fixed, probabilityText, signed } from '../figures.ts';
 import { words } from '../words.ts';
+import { MeasuringSettings } from './MeasuringSettings.tsx';
 import { NumberSetting } from './NumberSetting.tsx';
 
 const { settings: label } = words;
 const KINDS = Object.keys(words.kinds) as (keyof typeof words.kinds)[];
 
-const measure = (change: Settings['measure'], sentence: string) => set((s) => ({ ...s, measure: { ...s.measure, ...change } }), sentence);
 const naming = (change: Settings['naming'], sentence: string) => set((s) => ({ ...s, naming: { ...s.naming, ...change } }), sentence);
 
 /** Every setting with its unit, a sentence, and the value really used. */
@@ -73,41 +73,7 @@ export function SettingsPanel() {
         used={used.naming.ne}
         commit={(ne, said) => naming({ ne }, said)}
       />
-      {analysis.reading.kind === 'spectrum' && (
-        <>
-          <NumberSetting
-            label={label.threshold}
-            hint={`${label.thresholdHint}${analysis.expectedFalse === undefined ? '' : ` ${label.expectedFalse(round(analysis.expectedFalse, 2))}`}`}
-            unit="σ"
-            low={1}
-            high={1000}
-            value={chosen.measure.thresholdSigma}
-            used={used.measure.thresholdSigma}
-            commit={(thresholdSigma, said) => measure({ thresholdSigma }, said)}
-          />
-          <NumberSetting
-            label={label.resolvingPower}
-            hint={label.resolvingPowerHint}
-            unit={analysis.resolvingPowerFrom ? label.resolvingPowerFrom[analysis.resolvingPowerFrom] : 'λ/FWHM'}
-            low={10}
-            high={1_000_000}
-            value={chosen.measure.resolvingPower}
-            used={analysis.resolvingPower && Math.round(analysis.resolvingPower)}
-            commit={(resolvingPower, said) => measure({ resolvingPower }, said)}
-          />
-          <label className="choice">
-            <input
-              type="checkbox"
-              checked={used.measure.absorption}
-              onChange={(event) =>
-                measure({ absorption: event.target.checked }, label.changed(label.absorption, event.target.checked ? 'on' : 'off'))
-              }
-            />
-            {label.absorption}
-          </label>
-          <p className="hint">{label.absorptionHint}</p>
-        </>
-      )}
+      {analysis.reading.kind === 'spectrum' && <MeasuringSettings />}
     </section>
   );
 }

@@ -1,6 +1,7 @@
 import { type PointerEvent, type RefObject, useEffect, useRef } from 'react';
 import { choose, wholeRange } from '../desk/chosen.ts';
 import { desk, setDesk } from '../desk/deskStore.ts';
+import { pointAt } from '../desk/handEdits.ts';
 import { look, shownRange, wholeSpectrum } from '../desk/looking.ts';
 import { waveAxis } from '../desk/waveAxis.ts';
 import { fixed, round } from '../figures.ts';
@@ -78,6 +79,7 @@ export function usePointer(area: RefObject<HTMLDivElement | null>, layout: Panel
       if (a && b && pinch.current)
         return look(pinched(pinch.current.range, pinch.current.fingers, [shareOf(layout, a.x), shareOf(layout, b.x)], wholeRange()));
       if (press.current) drag(press.current, at.x, layout);
+      pointAt(at.x > layout.left ? wavelengthAt(layout, at.x) : undefined);
       if (readout.current) readout.current.textContent = at.x > layout.left ? readoutAt(wavelengthAt(layout, at.x)) : '';
     },
     onPointerUp(event: PointerEvent) {
@@ -93,6 +95,7 @@ export function usePointer(area: RefObject<HTMLDivElement | null>, layout: Panel
       pinch.current = undefined;
     },
     onPointerLeave() {
+      pointAt(undefined);
       if (readout.current) readout.current.textContent = '';
     },
     onDoubleClick: wholeSpectrum,
