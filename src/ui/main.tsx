@@ -5,6 +5,7 @@ import './desk.css';
 import { App } from './App.tsx';
 import { startKeeping } from './desk/autosave.ts';
 import { useDesk } from './desk/deskStore.ts';
+import { keepOffline } from './offline/keepOffline.ts';
 
 // before anything is drawn in the new colours
 useDesk.subscribe(({ theme }) => {
@@ -19,3 +20,4 @@ createRoot(root).render(
   </StrictMode>,
 );
 void startKeeping();
+void keepOffline();

@@ -1,5 +1,6 @@
 import { useDesk } from '../desk/deskStore.ts';
 import { analyse, stop } from '../desk/engineRuns.ts';
+import { takeNewBuild } from '../offline/keepOffline.ts';
 import { words } from '../words.ts';
 import { stageWord } from './RunStrip.tsx';
 
@@ -7,12 +8,18 @@ import { stageWord } from './RunStrip.tsx';
 export function StatusBar() {
   const status = useDesk((state) => state.status);
   const run = useDesk((state) => state.run);
+  const newBuild = useDesk((state) => state.newBuild);
   const outOfDate = useDesk((state) => state.outOfDate);
   return (
     <footer className="status">
       <p role="status" aria-label={words.status.label}>
         {status || words.status.ready}
       </p>
+      {newBuild && (
+        <button type="button" className="small" onClick={takeNewBuild}>
+          {words.status.newBuild}
+        </button>
+      )}
       {run ? (
         <>
           <span className="number">
