@@ -1,11 +1,14 @@
+import { acceptAll, declareAll, rejectAll, reopenAll } from './desk/bulkDecisions.ts';
 import { chooseNextOpen, chosenRow, walkFeatures, walkTable } from './desk/chosen.ts';
 import { acceptCandidate, declareRow, redoNext, rejectCandidate, reopenRow, undoLast } from './desk/decisions.ts';
+import type { DeskRow } from './desk/deskRows.ts';
 import { desk, setDesk, type Tab } from './desk/deskStore.ts';
-import { saveTable } from './desk/files.ts';
+import { copyRows, saveTable } from './desk/files.ts';
 import { focusFilter, focusNote } from './desk/focus.ts';
 import { addAtPointer, deleteFeature, isPointing, splitFeature } from './desk/handEdits.ts';
 import { closeIn, nextScale, otherFrame, otherMedium, wholeSpectrum, zoomBy } from './desk/looking.ts';
 import { pickFile } from './desk/pickFile.ts';
+import { pickAll, pickFurther, pickNone, rowsInHand } from './desk/picking.ts';
 import { words } from './words.ts';
 
 /** One thing the desk can do: menu, keyboard and help read this one list. */
@@ -63,13 +66,17 @@ export const COMMANDS: readonly Command[] = [
   { name: 'next-row', label: label.nextRow, group: 'walk', keys: ['ArrowDown'], canRun: atDesk, run: () => walkTable(1) },
   { name: 'previous-row', label: label.previousRow, group: 'walk', keys: ['ArrowUp'], canRun: atDesk, run: () => walkTable(-1) },
   { name: 'next-open', label: label.nextOpen, group: 'walk', keys: ['n'], canRun: atDesk, run: chooseNextOpen },
+  { name: 'pick-next', label: label.pickNext, group: 'walk', keys: ['Shift+ArrowDown'], canRun: atDesk, run: () => pickFurther(1) },
+  { name: 'pick-previous', label: label.pickPrevious, group: 'walk', keys: ['Shift+ArrowUp'], canRun: atDesk, run: () => pickFurther(-1) },
+  { name: 'pick-all', label: label.pickAll, group: 'walk', keys: ['Mod+a'], canRun: atDesk, run: pickAll },
+  { name: 'pick-none', label: label.pickNone, group: 'walk', keys: ['Escape'], canRun: () => desk().picked.length > 0, run: pickNone },
   {
     name: 'accept-top',
     label: label.acceptTop,
     group: 'decide',
     keys: ['Enter'],
-    canRun: () => withRow() && candidate(0) !== undefined,
-    run: () => onRow((row) => acceptCandidate(row, row.candidates[0], 'go-on')),
+    canRun: () => hasSeveral() || (withRow() && candidate(0) !== undefined),
+    run: () => onRows(acceptAll, (row) => acceptCandidate(row, row.candidates[0], 'go-on')),
   },
   ...[1, 2, 3, 4, 5, 6, 7, 8, 9].map(acceptNth),
   {
@@ -77,8 +84,8 @@ export const COMMANDS: readonly Command[] = [
     label: label.rejectTop,
     group: 'decide',
     keys: ['Backspace'],
-    canRun: () => withRow() && candidate(0) !== undefined,
-    run: () => onRow((row) => rejectCandidate(row, row.candidates[0])),
+    canRun: () => hasSeveral() || (withRow() && candidate(0) !== undefined),
+    run: () => onRows(rejectAll, (row) => rejectCandidate(row, row.candidates[0])),
   },
   {
     name: 'unidentified',
@@ -86,7 +93,11 @@ export const COMMANDS: readonly Command[] = [
     group: 'decide',
     keys: ['u'],
     canRun: withRow,
-    run: () => onRow((row) => declareRow(row, 'unidentified', 'go-on')),
+    run: () =>
+      onRows(
+        (rows) => declareAll(rows, 'unidentified'),
+        (row) => declareRow(row, 'unidentified', 'go-on'),
+      ),
   },
   {
     name: 'artefact',
@@ -94,15 +105,19 @@ export const COMMANDS: readonly Command[] = [
     group: 'decide',
     keys: ['x'],
     canRun: withRow,
-    run: () => onRow((row) => declareRow(row, 'artefact', 'go-on')),
+    run: () =>
+      onRows(
+        (rows) => declareAll(rows, 'artefact'),
+        (row) => declareRow(row, 'artefact', 'go-on'),
+      ),
   },
   {
     name: 'reopen',
     label: label.reopen,
     group: 'decide',
     keys: ['r'],
-    canRun: () => withRow() && chosenRow()?.standing !== 'open',
-    run: () => onRow(reopenRow),
+    canRun: () => rowsInHand().some((row) => row.standing !== 'open'),
+    run: () => onRows(reopenAll, reopenRow),
   },
   { name: 'note', label: label.note, group: 'decide', keys: ['m'], canRun: withRow, run: focusNote },
   {
@@ -139,6 +154,15 @@ export const COMMANDS: readonly Command[] = [
   { name: 'frame', label: label.frame, group: 'look', keys: ['f'], canRun: atDesk, run: otherFrame },
   { name: 'axis-medium', label: label.axisMedium, group: 'look', keys: ['v'], canRun: atDesk, run: otherMedium },
   { name: 'filter', label: label.filter, group: 'desk', keys: ['/'], canRun: atDesk, run: focusFilter },
+  {
+    name: 'copy-rows',
+    label: label.copyRows,
+    group: 'desk',
+    keys: ['Mod+c'],
+    // marked text is copied by the browser
+    canRun: () => rowsInHand().length > 0 && document.getSelection()?.isCollapsed !== false,
+    run: () => void copyRows(rowsInHand()),
+  },
   show('case', 'd'),
   show('settings', 's'),
   show('reading', 'i'),
@@ -149,7 +173,15 @@ export const COMMANDS: readonly Command[] = [
   { name: 'export-csv', label: label.exportCsv, group: 'desk', keys: ['e'], canRun: atDesk, run: () => void saveTable('csv') },
 ];
 
-function onRow(act: (row: NonNullable<ReturnType<typeof chosenRow>>) => void): void {
+const hasSeveral = () => rowsInHand().length > 1;
+
+/** On all picked rows at once, else on the chosen one. */
+function onRows(several: (rows: readonly DeskRow[]) => void, one: (row: DeskRow) => void): void {
+  if (hasSeveral()) several(rowsInHand());
+  else onRow(one);
+}
+
+function onRow(act: (row: DeskRow) => void): void {
   const row = chosenRow();
   if (row) act(row);
 }

@@ -24,9 +24,9 @@ describe('the command table', () => {
     }
   });
 
-  it('leaves the keys of the browser alone: no Mod key but those of undo and redo', () => {
+  it('leaves the keys of the browser alone: no Mod key but those of undo, redo, pick all and copy', () => {
     const withMod = COMMANDS.flatMap((command) => command.keys).filter((key) => key.startsWith('Mod+'));
-    expect(withMod.sort()).toEqual(['Mod+Shift+z', 'Mod+y', 'Mod+z']);
+    expect(withMod.sort()).toEqual(['Mod+Shift+z', 'Mod+a', 'Mod+c', 'Mod+y', 'Mod+z']);
   });
 
   it('on an empty desk only opening and the keys can be run', () => {

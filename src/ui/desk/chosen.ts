@@ -6,12 +6,18 @@ import { desk, setDesk, useDesk } from './deskStore.ts';
 /** A feature is still the chosen one after a refit when it lies this near, vacuum Angstrom. */
 const SAME_A = 1.5;
 
-/** The row nearest to `at`. */
+/** The row that `at` (vacuum Angstrom) means. */
 export function rowAt(rows: readonly DeskRow[], at: number | undefined): DeskRow | undefined {
+  const best = nearestRow(rows, at);
+  return best && at !== undefined && Math.abs(best.feature.at - at) <= SAME_A ? best : undefined;
+}
+
+/** The row nearest to `at`, however far. */
+export function nearestRow(rows: readonly DeskRow[], at: number | undefined): DeskRow | undefined {
   if (at === undefined) return undefined;
   let best: DeskRow | undefined;
   for (const row of rows) if (!best || Math.abs(row.feature.at - at) < Math.abs(best.feature.at - at)) best = row;
-  return best && Math.abs(best.feature.at - at) <= SAME_A ? best : undefined;
+  return best;
 }
 
 export const useChosenRow = () => useDesk((state) => rowAt(state.rows, state.chosenAt));
@@ -29,7 +35,13 @@ export function choose(index: number): void {
   const row = desk().rows[index];
   if (!row) return;
   const { range } = desk();
-  setDesk({ chosenAt: row.feature.at, tab: 'case', ...(range ? { range: showing(range, row.feature.centroid, wholeRange()) } : {}) });
+  setDesk({
+    chosenAt: row.feature.at,
+    tab: 'case',
+    picked: [],
+    pickedFrom: undefined,
+    ...(range ? { range: showing(range, row.feature.centroid, wholeRange()) } : {}),
+  });
 }
 
 /** Walks by wavelength. */

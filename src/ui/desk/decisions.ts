@@ -27,7 +27,12 @@ import { analyse } from './engineRuns.ts';
 /** What a verdict does besides: a decision by key goes on to the next open feature, one by click stays where it is. */
 export type Then = 'stay' | 'go-on';
 
-const pointed = ({ feature }: DeskRow): PointedFeature => ({ at: feature.at, atErr: feature.atErr, label: `feature ${feature.number}` });
+/** A row as the document points at it. */
+export const pointed = ({ feature }: DeskRow): PointedFeature => ({
+  at: feature.at,
+  atErr: feature.atErr,
+  label: `feature ${feature.number}`,
+});
 const present = () => desk().history.document;
 
 export function acceptCandidate(row: DeskRow, candidate: CandidateView | undefined, then: Then): void {

@@ -44,6 +44,10 @@ export interface DeskFields {
   readonly status: string;
   /** Vacuum Angstrom of the chosen feature: survives a refit. */
   readonly chosenAt?: number;
+  /** Numbers of the features picked in the table. */
+  readonly picked: readonly number[];
+  /** Where picking began; absent = at the chosen feature. */
+  readonly pickedFrom?: number;
   /** Observed Angstrom; absent = the whole spectrum. */
   readonly range?: Range;
   readonly scale: ScaleKind;
@@ -71,6 +75,7 @@ const START: DeskFields = {
   rows: [],
   outOfDate: false,
   alerts: [],
+  picked: [],
   newBuild: false,
   status: '',
   scale: 'asinh',

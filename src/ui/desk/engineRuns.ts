@@ -3,7 +3,7 @@ import { EMPTY_DOCUMENT, make, openSource, type Source, startHistory } from '../
 import { keepFile, keptFile, sourceKey } from '../storage.ts';
 import { words } from '../words.ts';
 import { type Analysed, AnsweredProblem, Cancelled, type WorkerClient, workerClient } from '../workerClient.ts';
-import { rowAt } from './chosen.ts';
+import { nearestRow } from './chosen.ts';
 import { type DeskRow, deskRows, prominence } from './deskRows.ts';
 import { desk, raiseAlert, setDesk } from './deskStore.ts';
 
@@ -126,13 +126,15 @@ async function round(): Promise<void> {
 function arrive(answer: Analysed, isNew: boolean): void {
   const { verdicts } = desk().history.document;
   const rows = deskRows(answer.analysis, verdicts);
-  const kept = isNew ? undefined : rowAt(rows, desk().chosenAt);
+  const kept = isNew ? undefined : nearestRow(rows, desk().chosenAt);
   setDesk({
     stage: 'desk',
     analysis: answer.analysis,
     samples: answer.samples,
     rows,
     outOfDate: false,
+    // numbers mean other features when measuring has found more or fewer
+    ...(rows.length === desk().rows.length ? {} : { picked: [], pickedFrom: undefined }),
     chosenAt: (kept ?? mostProminent(rows))?.feature.at,
     ...(isNew ? { range: undefined, gain: 1, filter: {}, tab: 'case' } : {}),
   });

@@ -27,6 +27,8 @@ export const FATES = {
   outOfDate: 'gone',
   handPlace: 'gone',
   alerts: 'gone',
+  picked: 'gone',
+  pickedFrom: 'gone',
   newBuild: 'gone',
   status: 'gone',
 } as const satisfies Record<keyof DeskFields, Fate>;

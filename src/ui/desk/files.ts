@@ -3,6 +3,7 @@ import { acceptedRows, TABLE_FORMATS, type TableFormatName } from '../../report/
 import { readSession, writeSession } from '../../session/index.ts';
 import { tsvTable } from '../table/tsvTable.ts';
 import { words } from '../words.ts';
+import type { DeskRow } from './deskRows.ts';
 import { desk, raiseAlert, setDesk } from './deskStore.ts';
 import { analyse, openFile, settled } from './engineRuns.ts';
 
@@ -55,6 +56,17 @@ export async function copyTable(): Promise<void> {
   if (!table) return;
   await navigator.clipboard.writeText(tsvTable(table));
   setDesk({ status: words.export.copied });
+}
+
+/** These rows, as tab-separated text on the clipboard. */
+export async function copyRows(rows: readonly DeskRow[]): Promise<void> {
+  await settled();
+  const { analysis } = desk();
+  const numbers = new Set(rows.map((row) => row.feature.number));
+  if (!analysis || numbers.size === 0) return;
+  const table = { ...analysis.table, rows: analysis.table.rows.filter((row) => numbers.has(row.feature)) };
+  await navigator.clipboard.writeText(tsvTable(table));
+  setDesk({ status: words.bulk.copied(table.rows.length) });
 }
 
 async function tableToExport() {

@@ -1,9 +1,10 @@
+import { useMemo } from 'react';
 import { choose } from '../desk/chosen.ts';
 import { acceptNames } from '../desk/decisions.ts';
 import type { DeskRow } from '../desk/deskRows.ts';
 import { setDesk, useDesk } from '../desk/deskStore.ts';
 import { FILTER_ID } from '../desk/focus.ts';
-import type { RowFilter } from '../table/rowFilter.ts';
+import { ionsIn, type RowFilter } from '../table/rowFilter.ts';
 import { words } from '../words.ts';
 import { ColumnsMenu } from './ColumnsMenu.tsx';
 
@@ -12,10 +13,12 @@ const { table: label } = words;
 const SURE = 0.9;
 
 /** What the table shows and how much that is. */
-export function FilterBar({ shown, all }: { shown: readonly DeskRow[]; all: number }) {
+export function FilterBar({ shown }: { shown: readonly DeskRow[] }) {
   const filter = useDesk((state) => state.filter);
+  const rows = useDesk((state) => state.rows);
   const change = (part: RowFilter) => setDesk({ filter: { ...filter, ...part } });
   const isFiltered = Object.values(filter).some(Boolean);
+  const ions = useMemo(() => ionsIn(rows), [rows]);
   const sure = shown.filter((row) => row.standing === 'open' && row.name && row.name.probability >= SURE);
   return (
     <div className="filter">
@@ -33,6 +36,12 @@ export function FilterBar({ shown, all }: { shown: readonly DeskRow[]; all: numb
           if (shown[0]) choose(shown[0].index);
         }}
       />
+      <select aria-label={label.ion} value={filter.ion ?? ''} onChange={(event) => change({ ion: event.target.value || undefined })}>
+        <option value="">{label.anyIon}</option>
+        {ions.map((ion) => (
+          <option key={ion}>{ion}</option>
+        ))}
+      </select>
       <Choice label={label.nature} options={label.natures} value={filter.nature} choose={(nature) => change({ nature })} />
       <Choice
         label={label.standing}
@@ -58,7 +67,7 @@ export function FilterBar({ shown, all }: { shown: readonly DeskRow[]; all: numb
         </button>
       )}
       <ColumnsMenu />
-      <span className="number muted">{label.count(shown.length, all)}</span>
+      <span className="number muted count">{label.count(shown.length, rows.length)}</span>
     </div>
   );
 }

@@ -1,24 +1,27 @@
 import { useVirtualizer } from '@tanstack/react-virtual';
-import { useEffect, useMemo, useRef } from 'react';
+import { type MouseEvent, useEffect, useMemo, useRef } from 'react';
 import { choose, useChosenRow } from '../desk/chosen.ts';
 import { type DeskRow, isOfTheAir, thinGasOf } from '../desk/deskRows.ts';
 import { setDesk, useDesk } from '../desk/deskStore.ts';
+import { pickAlso, pickedRows, pickTo, tick } from '../desk/picking.ts';
 import { shownColumns, type TableColumn } from '../table/columns.ts';
 import { sortedBy } from '../table/sortRows.ts';
 import { tableRows } from '../table/tableRows.ts';
 import { words } from '../words.ts';
+import { BulkBar } from './BulkBar.tsx';
 import { FilterBar } from './FilterBar.tsx';
 import { Mark, Ring } from './Mark.tsx';
 import { RowVerdict } from './RowVerdict.tsx';
 
 const ROW_PX = 26;
 const VERDICT_PX = 56;
+const PICK_PX = 28;
 const GROWING: Record<string, string> = { name: '320px', note: '1fr' };
 const trackOf = ({ key, width }: TableColumn) => (GROWING[key] ? `minmax(${width}px, ${GROWING[key]})` : `${width}px`);
 const gridOf = (columns: readonly TableColumn[]) => ({
-  gridTemplateColumns: [...columns.map(trackOf), `${VERDICT_PX}px`].join(' '),
+  gridTemplateColumns: [`${PICK_PX}px`, ...columns.map(trackOf), `${VERDICT_PX}px`].join(' '),
 });
-const leastWidth = (columns: readonly TableColumn[]) => columns.reduce((sum, { width }) => sum + width, VERDICT_PX);
+const leastWidth = (columns: readonly TableColumn[]) => columns.reduce((sum, { width }) => sum + width, PICK_PX + VERDICT_PX);
 
 /** Every feature as a row: sorted, filtered, only what is in sight drawn. */
 export function LineTable() {
@@ -28,6 +31,9 @@ export function LineTable() {
   const hidden = useDesk((state) => state.hiddenColumns);
   const chosen = useChosenRow()?.index;
   const shown = useMemo(() => tableRows(rows, filter, sorting), [rows, filter, sorting]);
+  const picked = useDesk((state) => state.picked);
+  const isPicked = useMemo(() => new Set(picked), [picked]);
+  const inHand = useMemo(() => pickedRows(rows, picked), [rows, picked]);
   const columns = useMemo(() => shownColumns(hidden), [hidden]);
   const grid = useMemo(() => gridOf(columns), [columns]);
   const scroller = useRef<HTMLDivElement>(null);
@@ -46,11 +52,12 @@ export function LineTable() {
   }, [place, virtual]);
   return (
     <section className="table" aria-label={words.table.label}>
-      <FilterBar shown={shown} all={rows.length} />
+      {inHand.length > 0 ? <BulkBar rows={inHand} /> : <FilterBar shown={shown} />}
       <div ref={scroller} className="table-scroll">
         <table className="lines" style={{ minWidth: leastWidth(columns) }} aria-label={words.table.label} aria-rowcount={shown.length + 1}>
           <thead>
             <tr style={grid} aria-rowindex={1}>
+              <td />
               {columns.map((column) => (
                 <Head key={column.key} column={column} />
               ))}
@@ -67,6 +74,7 @@ export function LineTable() {
                 place={item.index}
                 start={item.start - ROW_PX}
                 isChosen={item.index === place}
+                isPicked={isPicked.has(shown[item.index].feature.number)}
               />
             ))}
           </tbody>
@@ -97,6 +105,13 @@ function Head({ column }: { column: TableColumn }) {
   );
 }
 
+/** A click chooses; with Shift it picks all rows up to this one, with Ctrl or ⌘ this one too. */
+function clicked(event: MouseEvent, row: DeskRow): void {
+  if (event.shiftKey) pickTo(row);
+  else if (event.ctrlKey || event.metaKey) pickAlso(row);
+  else choose(row.index);
+}
+
 interface RowProps {
   readonly row: DeskRow;
   readonly columns: readonly TableColumn[];
@@ -106,20 +121,31 @@ interface RowProps {
   /** Pixels below the head. */
   readonly start: number;
   readonly isChosen: boolean;
+  readonly isPicked: boolean;
 }
 
-function Row({ row, columns, grid, place, start, isChosen }: RowProps) {
+function Row({ row, columns, grid, place, start, isChosen, isPicked }: RowProps) {
   return (
     // the keys of the desk walk the rows: a click is the mouse's way to the same thing
     <tr
       id={rowId(row)}
-      className={`body-row standing-${row.standing}`}
+      className={`body-row standing-${row.standing}${isPicked ? ' is-picked' : ''}`}
       style={{ ...grid, height: ROW_PX, transform: `translateY(${start}px)` }}
       aria-rowindex={place + 2}
       aria-current={isChosen || undefined}
-      onClick={() => choose(row.index)}
+      onClick={(event) => clicked(event, row)}
       onKeyDown={(event) => event.key === ' ' && choose(row.index)}
     >
+      <td className="pick">
+        <input
+          type="checkbox"
+          tabIndex={-1}
+          aria-label={words.bulk.pick(row.feature.number)}
+          checked={isPicked}
+          onChange={() => tick(row)}
+          onClick={(event) => event.stopPropagation()}
+        />
+      </td>
       {columns.map((column) => (
         <td
           key={column.key}

@@ -5,8 +5,17 @@ export interface RowFilter {
   /** Words looked for in name, wavelength and note; all must be there. */
   readonly text?: string;
   readonly nature?: 'permitted' | 'intercombination' | 'forbidden' | 'sky' | 'unnamed' | 'thin-gas';
+  /** As printed: `[O III]`. */
+  readonly ion?: string;
   readonly standing?: Standing;
   readonly probability?: 'sure' | 'likely' | 'doubtful';
+}
+
+/** The ions named in the rows, sorted, without their brackets counting. */
+export function ionsIn(rows: readonly DeskRow[]): string[] {
+  const ions = new Set(rows.flatMap((row) => row.name?.transitions.map((t) => t.ion) ?? []));
+  const plain = (ion: string) => ion.replace(/[[\]]/g, '');
+  return [...ions].sort((a, b) => plain(a).localeCompare(plain(b)) || a.localeCompare(b));
 }
 
 /** Limits of the probability filter. */
@@ -15,6 +24,7 @@ const LIKELY = 0.5;
 
 export function passes(row: DeskRow, filter: RowFilter): boolean {
   if (filter.standing && row.standing !== filter.standing) return false;
+  if (filter.ion && !row.name?.transitions.some((t) => t.ion === filter.ion)) return false;
   if (filter.nature && !hasNature(row, filter.nature)) return false;
   if (filter.probability && !hasProbability(row, filter.probability)) return false;
   const words = (filter.text ?? '').toLowerCase().split(/\s+/).filter(Boolean);
