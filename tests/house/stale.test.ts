@@ -1,8 +1,9 @@
 import { readFileSync } from 'node:fs';
 import { expect, it } from 'vitest';
 import { buildBundle } from '../../src/atomic/build/buildBundle.ts';
-import { lanternNebula } from '../../src/atomic/build/lanternNebula.ts';
 import { readTables } from '../../src/atomic/build/readTables.ts';
+import { SAMPLE_RECIPES } from '../../src/atomic/build/sampleRecipes.ts';
+import { sampleSpectrum } from '../../src/atomic/build/sampleSpectrum.ts';
 import { loadAtomicData } from '../../src/atomic/index.ts';
 
 it('public/atomic.bin is what the tables of src/atomic give today', () => {
@@ -11,10 +12,13 @@ it('public/atomic.bin is what the tables of src/atomic give today', () => {
   expect(built.equals(kept), 'public/atomic.bin is stale: run `npm run data` and commit the result').toBe(true);
 });
 
-it('the sample spectrum is what its script gives today', () => {
-  const kept = readFileSync(new URL('../../public/samples/lantern-nebula.csv', import.meta.url), 'utf8');
-  expect(
-    kept === lanternNebula(loadAtomicData(buildBundle(readTables()))),
-    'public/samples is stale: run `npm run data` and commit the result',
-  ).toBe(true);
+it('the sample spectra are what their script gives today', () => {
+  const data = loadAtomicData(buildBundle(readTables()));
+  for (const recipe of SAMPLE_RECIPES) {
+    const kept = readFileSync(new URL(`../../public/samples/${recipe.file}`, import.meta.url), 'utf8');
+    expect(
+      kept === sampleSpectrum(data, recipe),
+      `public/samples/${recipe.file} is stale: run \`npm run data\` and commit the result`,
+    ).toBe(true);
+  }
 });

@@ -1,11 +1,12 @@
-// `npm run data`: compiles src/atomic/tables into public/atomic.bin and makes the sample spectrum. No network, no clock: the same tables and seed give the same bytes.
+// `npm run data`: compiles src/atomic/tables into public/atomic.bin and makes the sample spectra. No network, no clock: the same tables and seed give the same bytes.
 import { mkdirSync, writeFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { gzipSync } from 'node:zlib';
 import { loadAtomicData } from '../loadAtomicData.ts';
 import { buildBundle } from './buildBundle.ts';
-import { lanternNebula } from './lanternNebula.ts';
 import { readTables } from './readTables.ts';
+import { SAMPLE_RECIPES } from './sampleRecipes.ts';
+import { sampleSpectrum } from './sampleSpectrum.ts';
 
 const target = fileURLToPath(new URL('../../../public/atomic.bin', import.meta.url));
 const tables = readTables();
@@ -16,6 +17,9 @@ console.log(`${tables.files.size} tables -> public/atomic.bin: ${bytes.length} b
 
 const samples = fileURLToPath(new URL('../../../public/samples/', import.meta.url));
 mkdirSync(samples, { recursive: true });
-const sample = lanternNebula(loadAtomicData(bytes));
-writeFileSync(`${samples}lantern-nebula.csv`, sample);
-console.log(`public/samples/lantern-nebula.csv: ${sample.length} bytes`);
+const data = loadAtomicData(bytes);
+for (const recipe of SAMPLE_RECIPES) {
+  const sample = sampleSpectrum(data, recipe);
+  writeFileSync(`${samples}${recipe.file}`, sample);
+  console.log(`public/samples/${recipe.file}: ${sample.length} bytes`);
+}
