@@ -131,8 +131,10 @@ export function groupEquations(
         for (let i = from[s]; i < from[s + 1]; i++) residual[i] = root[i] * (y[i] - offset - slope * u[i]);
       }
       for (let k = 0; k < lines; k++) addLine(k);
-      chi2 = 0;
-      for (let i = 0; i < length; i++) chi2 += residual[i] * residual[i];
+      // summed in a variable of its own: one that closures share is boxed anew at every step
+      let sum = 0;
+      for (let i = 0; i < length; i++) sum += residual[i] * residual[i];
+      chi2 = sum;
       let priors = 0;
       for (let s = 0; s < stretches.length; s++)
         priors += window.offsetWeight[s] * (p[3 * lines + 2 * s] ** 2 + p[3 * lines + 2 * s + 1] ** 2);

@@ -14,7 +14,7 @@ export interface LineSpread {
 }
 
 /** A width never falls below this share of what it is at the reference wavelength, however steep the law. */
-const LEAST_SHARE = 0.05;
+export const LEAST_SHARE = 0.05;
 
 /** FWHM, Angstrom. */
 export const fwhmAt = ({ at, fwhmA, slope }: WidthLaw, wavelength: number) =>

@@ -7,7 +7,7 @@ import { fitPasses } from './fitPasses.ts';
 import type { FitSamples } from './fitSamples.ts';
 import type { FittedSpectrum } from './fittedSpectrum.ts';
 import { learnLineSpread } from './learnLineSpread.ts';
-import { fwhmAt, type LineSpread, widthPrior } from './lineSpread.ts';
+import { LEAST_SHARE, type LineSpread, widthPrior } from './lineSpread.ts';
 import { measurementOf } from './measurementOf.ts';
 import { prepare } from './prepare.ts';
 
@@ -88,6 +88,8 @@ export function fitSpectrum(spectrum: Spectrum, settings: MeasureSettings, contr
 /** Features from noise alone: independent places (two sigma of the profile apart) times the tail beyond the threshold. */
 function expectedFalse({ x, usable, sampleWidth }: FitSamples, { usual }: LineSpread, settings: MeasureSettings): number {
   let places = 0;
-  for (let i = 0; i < x.length; i++) if (usable[i]) places += (sampleWidth[i] * FWHM_PER_SIGMA) / (2 * fwhmAt(usual, x[i]));
+  const { at, fwhmA, slope } = usual;
+  for (let i = 0; i < x.length; i++)
+    if (usable[i]) places += (sampleWidth[i] * FWHM_PER_SIGMA) / (2 * Math.max(LEAST_SHARE * fwhmA, fwhmA + slope * (x[i] - at)));
   return places * normalTail(settings.thresholdSigma) * (settings.absorption ? 2 : 1);
 }

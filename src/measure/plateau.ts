@@ -16,7 +16,7 @@ const NARROWEST_FWHM = 1.3;
 const SURROUNDINGS_FWHM = 4;
 /** Edges are sought this far beyond the outermost components, on a grid of so many places. */
 const EDGE_REACH_FWHM = 1.6;
-const EDGES = 16;
+const EDGES = 8;
 /** Heights of the two edges, offset and slope of the line below. */
 const BOX_UNKNOWNS = 4;
 

@@ -106,10 +106,12 @@ function roughContinuum(flux: Float64Array, usable: Uint8Array): Float64Array {
   const n = flux.length;
   const rough = new Float64Array(n);
   const stretch = Math.max(30, Math.min(2000, Math.ceil(n / 60)));
+  const values = new Float64Array(stretch);
   for (let from = 0; from < n; from += stretch) {
     const to = Math.min(n, from + stretch);
-    const level = median(flux.subarray(from, to).filter((_, i) => usable[from + i] === 1));
-    rough.fill(level, from, to);
+    let count = 0;
+    for (let i = from; i < to; i++) if (usable[i]) values[count++] = flux[i];
+    rough.fill(median(values.subarray(0, count)), from, to);
   }
   return rough;
 }

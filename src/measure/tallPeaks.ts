@@ -28,8 +28,8 @@ export function widthOfTallPeaks(
   for (let i = 3; i < x.length - 3; i++) {
     const here = flux[i] - level[i];
     if (!usable[i] || !(here > TALL_SIGMA * noise[i])) continue;
-    const left = above(i - 1);
-    const right = above(i + 1);
+    const left = flux[i - 1] - level[i - 1];
+    const right = flux[i + 1] - level[i + 1];
     if (here < left || here <= right) continue;
     // spikes have nothing beside them
     if (Math.max(left, right) < 0.2 * here) continue;
