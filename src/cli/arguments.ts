@@ -18,7 +18,9 @@ const OPTIONS = {
   medium: { type: 'string' },
   resolution: { type: 'string' },
   kind: { type: 'string' },
+  width: { type: 'string' },
   threshold: { type: 'string' },
+  limit: { type: 'string' },
   te: { type: 'string' },
   ne: { type: 'string' },
   hdu: { type: 'string' },
@@ -36,6 +38,8 @@ export interface Arguments {
   /** CSV file with the user's own lines. */
   readonly lines?: string;
   readonly timings: boolean;
+  /** Wavelengths at which three-sigma limits are wanted, Angstrom. */
+  readonly limits: readonly number[];
   readonly settings: Settings;
   readonly te?: number;
   readonly ne?: number;
@@ -60,6 +64,7 @@ export function parseArguments(args: readonly string[]): Arguments {
     format,
     lines: values.lines,
     timings: values.timings === true,
+    limits: (values.limit ?? '').split(',').flatMap((text) => (text === '' ? [] : (positive('--limit', text) ?? []))),
     te,
     ne,
     settings: {
@@ -72,6 +77,7 @@ export function parseArguments(args: readonly string[]): Arguments {
       measure: dropAbsent({
         thresholdSigma: positive('--threshold', values.threshold),
         resolvingPower: positive('--resolution', values.resolution),
+        instrumentFwhmA: positive('--width', values.width),
       }),
       naming: dropAbsent({ z, kind, te, ne }),
     },

@@ -74,6 +74,7 @@ async function oneTable(engine: Engine, path: string, kind: SourceKind, options:
         `${basename(path)}: ${analysis.features.length} features, ${named} named, z = ${analysis.z.toFixed(6)} +/- ${analysis.zErr.toFixed(6)}\n`,
       );
       for (const remark of analysis.remarks) if (remark.weight === 'warning') process.stderr.write(`  ${wordProblem(remark)}\n`);
+      for (const at of options.limits) process.stderr.write(`  ${limitText(engine, at)}\n`);
       if (options.timings) for (const { stage, seconds } of analysis.timings) process.stderr.write(`  ${stage} ${seconds.toFixed(3)} s\n`);
     });
     return true;
@@ -83,6 +84,13 @@ async function oneTable(engine: Engine, path: string, kind: SourceKind, options:
     process.stderr.write(`linewright: ${wordProblem(error.problem)}\n`);
     return false;
   }
+}
+
+/** The limit at a wavelength in words; the flux unit is that of the table. */
+function limitText(engine: Engine, at: number): string {
+  const found = engine.limitAt(at);
+  if (!found) return `limit ${at}: too few samples there`;
+  return `limit ${at}: flux < ${found.limit.toPrecision(4)} (3 sigma, FWHM ${found.fwhm.toFixed(3)} A); the fits leave ${found.flux.toPrecision(3)} +/- ${found.fluxErr.toPrecision(3)}`;
 }
 
 /** A progress line on stderr when a person looks at it; called without arguments it wipes the line. */

@@ -12,11 +12,13 @@ export const USAGE = `linewright: names the emission lines of thin, glowing gas
   --z Z | --velocity KMS redshift, or velocity in the optical convention; without either it is found from the lines
   --medium air|vacuum    medium of the wavelengths, where the file does not say
   --resolution R         lambda / FWHM of the instrument
+  --width A              FWHM of the instrument in Angstrom, where it is the same everywhere
   --kind KIND            unknown (default), hii-region, planetary-nebula, nova-shell, shocked-gas, narrow-line-galaxy
-  --threshold SIGMA      a feature is kept from this signal to noise on (default 5)
+  --threshold SIGMA      a feature is kept from this signal to noise on (default 4.5)
   --te K, --ne CM3       electron temperature and density at which critical densities and companions are stated
   --hdu N, --row K, --order K   which spectrum of the file
   --lines OWN.csv        your own lines beside the bundled ones (columns ion, wavelength_air or wavelength_vac ...)
+  --limit W,W            three-sigma limits of unseen lines at these wavelengths (Angstrom), on stderr
   --timings              seconds of each stage on stderr
 
 Names are proposals: atomic data have errors, and the astronomer decides.

@@ -26,6 +26,12 @@ describe('linewright table', () => {
     expect(err).toContain('z = 0.000104 +/- 0.000000');
   });
 
+  test('prints three-sigma limits where they are asked for, and says where there are none', () => {
+    const { err } = linewright('table', sample, '--limit', '5300,99999', '--threshold', '20');
+    expect(err).toMatch(/limit 5300: flux < 0\.\d+ \(3 sigma, FWHM 2\.\d+ A\)/);
+    expect(err).toContain('limit 99999: too few samples there');
+  });
+
   test('goes on after a file that cannot be read, and exits with 1', () => {
     const out = mkdtempSync(join(tmpdir(), 'linewright-out-'));
     const broken = fileWith('broken.csv', 'no numbers here\nnone at all\n');
