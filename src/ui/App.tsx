@@ -3,6 +3,7 @@ import { useDesk } from './desk/deskStore.ts';
 import { openAll } from './desk/files.ts';
 import { Alerts } from './parts/Alerts.tsx';
 import { EmptyDesk } from './parts/EmptyDesk.tsx';
+import { GuideStrip } from './parts/GuideStrip.tsx';
 import { LineTable } from './parts/LineTable.tsx';
 import { MediumStrip } from './parts/MediumStrip.tsx';
 import { RunStrip } from './parts/RunStrip.tsx';
@@ -25,7 +26,12 @@ export function App() {
       <RunStrip />
       <TopBar />
       <Alerts />
-      {atDesk && <MediumStrip />}
+      {atDesk && (
+        <div className="notices">
+          <MediumStrip />
+          <GuideStrip />
+        </div>
+      )}
       {atDesk ? (
         <main className="desk">
           <SpectrumView />

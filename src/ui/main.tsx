@@ -5,6 +5,7 @@ import './desk.css';
 import { App } from './App.tsx';
 import { startKeeping } from './desk/autosave.ts';
 import { useDesk } from './desk/deskStore.ts';
+import { followGuide } from './desk/guide.ts';
 import { keepOffline } from './offline/keepOffline.ts';
 
 // before anything is drawn in the new colours
@@ -20,4 +21,5 @@ createRoot(root).render(
   </StrictMode>,
 );
 void startKeeping();
+followGuide();
 void keepOffline();

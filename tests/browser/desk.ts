@@ -21,7 +21,7 @@ export class Desk {
 
   async openSample(): Promise<void> {
     await this.page.goto('/');
-    await this.page.getByRole('button', { name: /sample/ }).click();
+    await this.page.getByRole('button', { name: /Try the sample/ }).click();
     await this.isReady();
   }
 

@@ -18,7 +18,13 @@ export async function startKeeping(): Promise<void> {
     if (desk().stage === 'starting') setDesk({ stage: 'awaiting' });
     if (desk().stage === 'desk') setDesk({ status: words.status.restored });
   } else {
-    if (kept) setDesk({ theme: kept.view.theme, singleKeys: kept.view.singleKeys });
+    if (kept)
+      setDesk({
+        theme: kept.view.theme,
+        singleKeys: kept.view.singleKeys,
+        guideSeen: kept.view.guideSeen ?? false,
+        goOn: kept.view.goOn ?? true,
+      });
     useDesk.subscribe(keepIfChanged);
     setDesk({ stage: 'empty' });
   }

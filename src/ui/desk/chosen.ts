@@ -61,8 +61,9 @@ export function walkTable(by: 1 | -1): void {
   if (next) choose(next.index);
 }
 
-/** Goes to the next feature without a verdict; stays when there is none. */
-export function chooseNextOpen(): void {
+/** Goes to the next feature without a verdict; false when there is none. */
+export function chooseNextOpen(): boolean {
   const next = nextOpen(desk().rows, chosenRow()?.index ?? -1);
   if (next !== undefined) choose(next);
+  return next !== undefined;
 }

@@ -19,12 +19,12 @@ import {
   writeNote,
 } from '../../session/index.ts';
 import { words } from '../words.ts';
-import { chooseNextOpen } from './chosen.ts';
+import { chooseNextOpen, chosenRow } from './chosen.ts';
 import { type DeskRow, deskRows } from './deskRows.ts';
 import { desk, setDesk } from './deskStore.ts';
 import { analyse } from './engineRuns.ts';
 
-/** What a verdict does besides: a decision by key goes on to the next open feature, one by click stays where it is. */
+/** What a verdict does besides: one on the chosen feature brings up the next open one, unless the user does not want that; one on another row stays. */
 export type Then = 'stay' | 'go-on';
 
 /** A row as the document points at it. */
@@ -38,16 +38,24 @@ const present = () => desk().history.document;
 export function acceptCandidate(row: DeskRow, candidate: CandidateView | undefined, then: Then): void {
   if (!candidate) return;
   commit(accept(present(), pointed(row), candidate));
-  if (then === 'go-on') chooseNextOpen();
+  if (then === 'go-on') goOn();
 }
 
 export function rejectCandidate(row: DeskRow, candidate: CandidateView | undefined): void {
-  if (candidate) commit(reject(present(), pointed(row), candidate));
+  if (!candidate) return;
+  commit(reject(present(), pointed(row), candidate));
+  // the next candidate comes up by itself; after the last one there is nothing left to weigh
+  if (row.candidates.length === 1 && row === chosenRow()) goOn();
 }
 
 export function declareRow(row: DeskRow, decision: 'unidentified' | 'artefact', then: Then): void {
   commit(declare(present(), pointed(row), decision));
-  if (then === 'go-on') chooseNextOpen();
+  if (then === 'go-on') goOn();
+}
+
+function goOn(): void {
+  if (!desk().goOn) return;
+  if (!chooseNextOpen()) setDesk({ status: `${desk().status}; ${words.case.allDecided}` });
 }
 
 export const reopenRow = (row: DeskRow) => commit(reopen(present(), pointed(row)));

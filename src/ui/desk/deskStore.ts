@@ -67,6 +67,12 @@ export interface DeskFields {
   readonly exportAll: boolean;
   /** Keys of columns the table leaves out. */
   readonly hiddenColumns: readonly string[];
+  /** Step of the tour, from 0; absent = it is not on. */
+  readonly guide?: number;
+  /** The tour was ended once: it does not come up by itself again. */
+  readonly guideSeen: boolean;
+  /** A verdict brings up the next open feature. */
+  readonly goOn: boolean;
 }
 
 const START: DeskFields = {
@@ -88,6 +94,8 @@ const START: DeskFields = {
   singleKeys: true,
   exportAll: false,
   hiddenColumns: [],
+  guideSeen: false,
+  goOn: true,
 };
 
 export const useDesk = create<DeskFields>()(() => START);

@@ -6,6 +6,7 @@ import { type Analysed, AnsweredProblem, Cancelled, type WorkerClient, workerCli
 import { nearestRow } from './chosen.ts';
 import { type DeskRow, deskRows, prominence } from './deskRows.ts';
 import { desk, raiseAlert, setDesk } from './deskStore.ts';
+import { offerGuide } from './guide.ts';
 
 let made: WorkerClient | undefined;
 
@@ -74,6 +75,7 @@ async function openNow(file: Blob, name: string): Promise<void> {
   await keepFile(source, file).catch(() => raiseAlert(words.status.storageFailed));
   setDesk({ history: after(), status: `opened ${name}` });
   arrive(answer, true);
+  offerGuide();
 }
 
 /** Analyses the document as it stands now; calls while a run is going are joined into one more run. */

@@ -8,13 +8,13 @@ import { desk, raiseAlert, setDesk } from './deskStore.ts';
 import { analyse, openFile, settled } from './engineRuns.ts';
 
 const SESSION_ENDING = 'linewright.json';
-/** The made-up nebula that comes with the program. */
-const SAMPLE = 'lantern-nebula.csv';
+/** The made-up objects that come with the program; each is fetched when it is asked for. */
+export const SAMPLES = ['lantern-nebula.csv', 'heron-marsh.csv', 'kiln-nebula.csv', 'ember-veil.csv', 'dunlin-galaxy.csv'] as const;
 
-export async function openSample(): Promise<void> {
-  const response = await fetch(new URL(`samples/${SAMPLE}`, document.baseURI));
-  if (!response.ok) return raiseAlert(`${SAMPLE}: ${response.status} ${response.statusText}`);
-  await openFile(await response.blob(), SAMPLE);
+export async function openSample(sample: (typeof SAMPLES)[number]): Promise<void> {
+  const response = await fetch(new URL(`samples/${sample}`, document.baseURI));
+  if (!response.ok) return raiseAlert(`${sample}: ${response.status} ${response.statusText}`);
+  await openFile(await response.blob(), sample);
 }
 
 /** Opens files one after the other; the last one stays on the desk, the others stand on the shelf. */

@@ -38,7 +38,7 @@ export function Candidates({ row }: { row: DeskRow }) {
           {row.turnedDown.map((candidate) => (
             <li key={candidate.label}>
               <s>{candidate.label}</s>
-              <button type="button" className="small" onClick={() => acceptCandidate(row, candidate, 'stay')}>
+              <button type="button" className="small" onClick={() => acceptCandidate(row, candidate, 'go-on')}>
                 {label.acceptAfterAll}
               </button>
             </li>
@@ -75,7 +75,7 @@ function CandidateCard({ row, candidate, digit, isOpen, toggle }: CardProps) {
           aria-pressed={isAccepted}
           aria-label={`${label.accept} ${candidate.label}`}
           title={label.accept}
-          onClick={() => acceptCandidate(row, candidate, 'stay')}
+          onClick={() => acceptCandidate(row, candidate, 'go-on')}
         >
           <Icon name="check" />
         </button>

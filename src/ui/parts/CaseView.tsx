@@ -2,6 +2,7 @@ import { useEffect, useRef } from 'react';
 import { useChosenRow } from '../desk/chosen.ts';
 import { declareRow, reopenRow } from '../desk/decisions.ts';
 import type { DeskRow } from '../desk/deskRows.ts';
+import { setDesk, useDesk } from '../desk/deskStore.ts';
 import { fixed, fluxText, wavelengthText, withError } from '../figures.ts';
 import { words } from '../words.ts';
 import { Candidates } from './Candidates.tsx';
@@ -88,13 +89,14 @@ function Measured({ row }: { row: DeskRow }) {
 /** Verdicts that name no candidate. */
 function Verdicts({ row }: { row: DeskRow }) {
   const { case: label } = words;
+  const goesOn = useDesk((state) => state.goOn);
   return (
     <div className="verdicts">
       <button
         type="button"
         className="small"
         aria-pressed={row.standing === 'unidentified'}
-        onClick={() => declareRow(row, 'unidentified', 'stay')}
+        onClick={() => declareRow(row, 'unidentified', 'go-on')}
       >
         <Mark standing="unidentified" /> {label.unidentified}
       </button>
@@ -102,10 +104,14 @@ function Verdicts({ row }: { row: DeskRow }) {
         type="button"
         className="small"
         aria-pressed={row.standing === 'artefact'}
-        onClick={() => declareRow(row, 'artefact', 'stay')}
+        onClick={() => declareRow(row, 'artefact', 'go-on')}
       >
         <Mark standing="artefact" /> {label.artefact}
       </button>
+      <label className="choice go-on">
+        <input type="checkbox" checked={goesOn} onChange={() => setDesk({ goOn: !goesOn })} />
+        {label.goOn}
+      </label>
       {row.standing !== 'open' && (
         <button type="button" className="small" onClick={() => reopenRow(row)}>
           {label.reopen}

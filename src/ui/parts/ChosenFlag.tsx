@@ -42,7 +42,7 @@ export function ChosenFlag({ row, layout, view, top }: Props) {
               aria-pressed={row.standing === 'accepted'}
               aria-label={`${words.case.accept} ${best.label}`}
               title={words.case.accept}
-              onClick={() => acceptCandidate(row, best, 'stay')}
+              onClick={() => acceptCandidate(row, best, 'go-on')}
             >
               <Icon name="check" />
             </button>

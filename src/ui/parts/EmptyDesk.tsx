@@ -1,8 +1,9 @@
 import { useDesk } from '../desk/deskStore.ts';
-import { openSample } from '../desk/files.ts';
+import { openSample, SAMPLES } from '../desk/files.ts';
 import { pickFile } from '../desk/pickFile.ts';
 import { words } from '../words.ts';
 import { LanternDrawing } from './LanternDrawing.tsx';
+import { SampleList } from './SampleList.tsx';
 
 /** Nothing is open: what can be done, and one click that shows it. */
 export function EmptyDesk() {
@@ -19,12 +20,13 @@ export function EmptyDesk() {
             {empty.open}
           </button>
           {!awaited && (
-            <button type="button" onClick={() => void openSample()}>
+            <button type="button" onClick={() => void openSample(SAMPLES[0])}>
               {empty.sample}
             </button>
           )}
         </div>
       </div>
+      {!awaited && <SampleList />}
       <ol className="empty-steps">
         {empty.steps.map(([title, text], k) => (
           <li key={title}>

@@ -1,5 +1,6 @@
 import { COMMANDS, type Command } from '../commands.ts';
 import { setDesk, useDesk } from '../desk/deskStore.ts';
+import { startGuide } from '../desk/guide.ts';
 import { words } from '../words.ts';
 import { Key } from './CommandButton.tsx';
 
@@ -30,6 +31,9 @@ export function KeysPanel() {
           </dl>
         </section>
       ))}
+      <button type="button" onClick={startGuide}>
+        {keys.tour}
+      </button>
       <Pairs title={keys.mouse} pairs={keys.mouseLines} />
       <Pairs title={keys.glossary} pairs={keys.words} />
     </section>
