@@ -4,7 +4,11 @@ import { spanOf } from './groupEquations.ts';
 import { firstAtLeast, gaussianInto, isUnderSampled, PROFILE_REACH } from './profile.ts';
 
 /** Adds the profiles of components to `into`, one value a sample of the whole spectrum. */
-export function addProfiles({ x, sampleWidth }: FitSamples, components: readonly Component[], into: Float64Array): void {
+export function addProfiles(
+  { x, sampleWidth }: Pick<FitSamples, 'x' | 'sampleWidth'>,
+  components: readonly Component[],
+  into: Float64Array,
+): void {
   const profile = { value: 0, byCentre: 0, bySigma: 0 };
   for (const { flux, centre, sigma } of components) {
     const to = centre + (PROFILE_REACH + 1) * sigma;

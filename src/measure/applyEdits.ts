@@ -1,9 +1,10 @@
 import { FWHM_PER_SIGMA } from '../units/index.ts';
-import { addLocalContinuum, addProfiles } from './addProfiles.ts';
+import { addProfiles } from './addProfiles.ts';
 import type { FeatureEdit } from './feature.ts';
 import { fitGroup, type GroupFit } from './fitGroup.ts';
 import type { Component, FitSamples, WidthPrior } from './fitSamples.ts';
 import { fitTied, type Tie } from './fitTied.ts';
+import { spanOf } from './groupEquations.ts';
 import { groupPeaks } from './groups.ts';
 import { firstAtLeast } from './profile.ts';
 
@@ -113,14 +114,22 @@ function withoutSpikeAt(samples: FitSamples, now: Fits, at: number): Fits | unde
 function startAt(samples: FitSamples, fits: readonly GroupFit[], at: number, width: WidthPrior, sign: number, byHand: string): Component {
   const sigma = width.sigmaAt(at);
   const i = Math.min(samples.x.length - 1, firstAtLeast(samples.x, at));
-  const near = fits.filter((fit) => fit.first <= i && i <= fit.last);
-  const model = new Float64Array(samples.x.length);
-  for (const fit of near) {
-    addProfiles(samples, fit.components, model);
-    addLocalContinuum(samples, fit, model);
-  }
-  const left = samples.usable[i] ? samples.y[i] - model[i] : 0;
+  const left = samples.usable[i] ? samples.y[i] - modelAt(samples, fits, i) : 0;
   return { flux: sign * Math.max(sign * left, samples.noise[i]) * sigma * Math.sqrt(2 * Math.PI), centre: at, sigma, byHand };
+}
+
+/** What the fits that reach a sample give there, above the continuum of the whole spectrum. */
+function modelAt({ x, sampleWidth }: FitSamples, fits: readonly GroupFit[], i: number): number {
+  const one = { x: x.subarray(i, i + 1), sampleWidth: sampleWidth.subarray(i, i + 1) };
+  const model = new Float64Array(1);
+  for (const fit of fits) {
+    if (i < fit.first || i > fit.last) continue;
+    addProfiles(one, fit.components, model);
+    const { middle, half } = spanOf(x, fit.first, fit.last);
+    const { parameters: p } = fit;
+    model[0] += p[p.length - 2] + (p[p.length - 1] * (x[i] - middle)) / half;
+  }
+  return model[0];
 }
 
 /** The fits with some components taken out and others put in: groups are formed anew where that matters, all others stay as they are. */

@@ -15,8 +15,8 @@ export interface GroupFit {
 }
 
 export const MOST_STEPS = 60;
-/** A step that gains less chi2 than this moves nothing by more than a few thousandths of its error. */
-export const CLOSE_ENOUGH = 1e-4;
+/** A step that gains less chi2 than this moves nothing by more than a few hundredths of its error, and convergence is quadratic there. */
+export const CLOSE_ENOUGH = 1e-3;
 
 /**
  * Fits all components of a group at once, with a local linear correction of the continuum.

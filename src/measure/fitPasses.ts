@@ -47,8 +47,7 @@ export function fitPasses(samples: FitSamples, settings: PassSettings, spikes: n
   const n = samples.x.length;
   let found = seedsIn(samples, samples.y, settings, sigma, []);
   const alone = forgiveMisfit(samples, groupPeaks(found, fwhmAt, n), width, misfit);
-  if (alone) found = found.map((seed) => alone.get(seed) ?? seed);
-  else found = seedsIn(samples, samples.y, settings, sigma, []);
+  if (!alone) found = seedsIn(samples, samples.y, settings, sigma, []);
   let fits: GroupFit[] = [];
   let known = new Map<string, GroupFit>();
   let seeds: Seed[] = [];
@@ -61,7 +60,10 @@ export function fitPasses(samples: FitSamples, settings: PassSettings, spikes: n
     const windows = groupPeaks(seeds, fwhmAt, n);
     fits = windows.map((window, k) => {
       if (k % 16 === 0) settings.between((pass + k / windows.length) / PASSES);
-      return known.get(keyOf(window)) ?? growGroup(samples, window.first, window.last, startsOf(window), width, threshold, spikes);
+      const fit = known.get(keyOf(window));
+      if (fit) return fit;
+      const begun = pass === 0 && window.peaks.length === 1 ? alone?.get(window.peaks[0]) : undefined;
+      return growGroup(samples, window.first, window.last, startsOf(window), width, threshold, spikes, begun);
     });
     // what was fitted under a key may have gained components: the next pass knows it by them
     seeds = fits.flatMap((fit) => fit.components.map((c) => seedOf(samples, c)));
@@ -113,14 +115,14 @@ const WING_SHARE = 0.08;
 /**
  * Fits the lines that stand alone, but for what may be their own wings, by one Gaussian each, and takes into the noise what that leaves over.
  *
- * @returns when nothing is left over: seeds improved by these fits; absent when the noise has changed
+ * @returns when nothing is left over: the fit of every peak that is alone in its window; absent when the noise has changed
  */
 function forgiveMisfit(
   samples: FitSamples,
   windows: readonly Window<Seed>[],
   width: WidthPrior,
   misfit: (share: number) => void,
-): Map<Seed, Seed> | undefined {
+): Map<Seed, GroupFit> | undefined {
   const strongest = ({ peaks }: Window<Seed>) => peaks.reduce((a, b) => (Math.abs(b.snr) > Math.abs(a.snr) ? b : a));
   const isAlone = (window: Window<Seed>) =>
     window.peaks.every((p) => p === strongest(window) || Math.abs(p.snr) < WING_SHARE * Math.abs(strongest(window).snr));
@@ -128,8 +130,7 @@ function forgiveMisfit(
   const windowsAlone = windows.filter(isAlone);
   const alone = windowsAlone.map((window) => fitOf(window, [strongest(window).start]));
   const left = misfitOf(samples, alone);
-  if (Math.max(left.core, left.wing) <= LEAST_MISFIT)
-    return new Map(windowsAlone.map((window, k) => [strongest(window), { ...strongest(window), start: alone[k].components[0] }]));
+  if (Math.max(left.core, left.wing) <= LEAST_MISFIT) return new Map(windowsAlone.map((window, k) => [strongest(window), alone[k]]));
   const crowds = windows.filter((window) => !isAlone(window)).map((window) => fitOf(window, startsOf(window)));
   addMisfit(samples, [...alone, ...crowds], left);
   misfit(Math.max(left.core, left.wing));

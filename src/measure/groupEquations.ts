@@ -24,8 +24,14 @@ export interface GroupEquations extends NormalEquations {
   readonly atBound: (p: Float64Array, k: number) => Component['atBound'];
 }
 
-/** Columns of the Jacobian of the fit at hand, three a line: grown as needed and used anew by every fit, since fits never run inside one another. */
+/** Working arrays, grown as needed and used anew by every fit, since fits never run inside one another: the Jacobian, three columns a line ... */
 let columns = new Float64Array(0);
+/** ... and what belongs to the samples of the window. */
+let sampleRoom = roomOf(0);
+
+function roomOf(length: number) {
+  return { residual: new Float64Array(length), y: new Float64Array(length), root: new Float64Array(length), u: new Float64Array(length) };
+}
 
 /**
  * The least-squares equations of Gaussian lines on straight pieces of continuum: parameters three a line (flux, centre, ln sigma), then offset and slope a stretch.
@@ -50,7 +56,7 @@ export function groupEquations(
   const widthWeight = Float64Array.from(starts, (start) => 1 / (start.isBroad ? BROAD_SPREAD : width.spread) ** 2);
   const low = new Int32Array(lines);
   const high = new Int32Array(lines);
-  const residual = new Float64Array(length);
+  const { residual } = sampleRoom;
   const point = new Float64Array(size);
   if (columns.length < 3 * lines * length) columns = new Float64Array(3 * lines * length);
   const shapes = columns;
@@ -315,14 +321,15 @@ function gather(samples: FitSamples, stretches: readonly Stretch[]): Gathered {
   });
   const length = from[stretches.length];
   const single = stretches.length === 1;
+  if (sampleRoom.y.length < length) sampleRoom = roomOf(2 * length);
   const gathered = {
     length,
     from,
     x: single ? samples.x.subarray(stretches[0].first, stretches[0].last + 1) : new Float64Array(length),
-    y: new Float64Array(length),
     step: single ? samples.sampleWidth.subarray(stretches[0].first, stretches[0].last + 1) : new Float64Array(length),
-    root: new Float64Array(length),
-    u: new Float64Array(length),
+    y: sampleRoom.y,
+    root: sampleRoom.root,
+    u: sampleRoom.u,
     sums: new Float64Array(3 * stretches.length),
     offsetWeight: new Float64Array(stretches.length),
   };
@@ -338,6 +345,8 @@ function gather(samples: FitSamples, stretches: readonly Stretch[]): Gathered {
       const k = at + i - first;
       const u = (samples.x[i] - middle) / half;
       gathered.u[k] = u;
+      gathered.y[k] = 0;
+      gathered.root[k] = 0;
       // the others may hold no number at all: they stay 0, with no weight
       if (!samples.usable[i]) continue;
       count++;

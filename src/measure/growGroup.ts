@@ -22,6 +22,7 @@ const MARGIN_SIGMA = 3;
  * its price: the Bayesian information criterion (Schwarz 1978, Ann. Statist. 6, 461) and the square of the detection threshold, whichever is more.
  *
  * @param spikes sample numbers found to be spikes are added here and marked unusable
+ * @param begun  the fit of `starts`, where it has been done
  */
 export function growGroup(
   samples: FitSamples,
@@ -31,8 +32,9 @@ export function growGroup(
   width: WidthPrior,
   threshold: number,
   spikes: number[],
+  begun?: GroupFit,
 ): GroupFit {
-  let fit = withoutTwins(samples, fitGroup(samples, first, last, mergeClose(starts, width), width), width);
+  let fit = withoutTwins(samples, begun ?? fitGroup(samples, first, last, mergeClose(starts, width), width), width);
   const used = last - first + 1;
   const price = Math.max(threshold * threshold, 3 * Math.log(used)) + 4;
   for (let round = 0; round < MOST_ADDED; round++) {

@@ -42,11 +42,9 @@ export interface LeastSquaresOptions {
 export function levenbergMarquardt(problem: NormalEquations, p: Float64Array, options: LeastSquaresOptions = {}): LeastSquaresEnd {
   const { maxSteps = 100, closeEnough = 0 } = options;
   const n = problem.size;
-  const jtj = new Float64Array(n * n);
-  const jtr = new Float64Array(n);
-  const damped = new Float64Array(n * n);
-  const step = new Float64Array(n);
-  const trial = new Float64Array(n);
+  const { jtj, jtr, damped, step, trial } = workspaceOf(n);
+  jtj.fill(0);
+  jtr.fill(0);
   let damping = FIRST_DAMPING;
   let growth = 2;
   let chi2 = problem.evaluate(p);
@@ -86,6 +84,27 @@ export function levenbergMarquardt(problem: NormalEquations, p: Float64Array, op
     }
   }
   return { ended: 'limit', chi2, steps: maxSteps };
+}
+
+interface Workspace {
+  readonly jtj: Float64Array;
+  readonly jtr: Float64Array;
+  readonly damped: Float64Array;
+  readonly step: Float64Array;
+  readonly trial: Float64Array;
+}
+
+/** Working arrays by number of parameters: thousands of small fits follow one another, never one inside another. */
+const workspaces = new Map<number, Workspace>();
+
+function workspaceOf(n: number): Workspace {
+  const known = workspaces.get(n);
+  if (known) return known;
+  const vector = () => new Float64Array(n);
+  const matrix = () => new Float64Array(n * n);
+  const made = { jtj: matrix(), damped: matrix(), jtr: vector(), step: vector(), trial: vector() };
+  workspaces.set(n, made);
+  return made;
 }
 
 function finish(jtj: Float64Array, n: number, chi2: number, steps: number): LeastSquaresEnd {
