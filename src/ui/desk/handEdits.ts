@@ -50,12 +50,19 @@ export function moveFeature(row: DeskRow, to: number): void {
 export const reshapeFeature = (row: DeskRow, as: Extract<FeatureEdit, { edit: 'profile' }>['as']) =>
   edit({ edit: 'profile', at: at(row), as }, hand.reshaped(row.feature.number, hand.shapes[as]));
 
-/** Ties a feature to another one by their names. */
-export function tieFeature(row: DeskRow, to: DeskRow): void {
+/** Ties a feature to another one by their names, with a ratio of their fluxes where one is given. */
+export function tieFeature(row: DeskRow, to: DeskRow, ratio: number | undefined): void {
   const [line, other] = [row.name?.transitions[0], to.name?.transitions[0]];
   if (!line || !other) return;
   edit(
-    { edit: 'tie', at: at(row), to: at(to), restAt: line.wavelengthLab, restTo: other.wavelengthLab },
+    {
+      edit: 'tie',
+      at: at(row),
+      to: at(to),
+      restAt: line.wavelengthLab,
+      restTo: other.wavelengthLab,
+      ...(ratio === undefined ? {} : { ratio }),
+    },
     hand.tied(row.feature.number, to.feature.number),
   );
 }

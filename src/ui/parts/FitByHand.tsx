@@ -107,6 +107,7 @@ function TieTool({ row }: { row: DeskRow }) {
   const ion = row.name?.transitions.length === 1 ? row.name.transitions[0].ion : undefined;
   const partners = rows.filter((other) => other !== row && other.name?.transitions.length === 1 && other.name.transitions[0].ion === ion);
   const [chosen, setChosen] = useState('');
+  const [ratio, setRatio] = useState('');
   if (!ion || partners.length === 0) return null;
   const partner = partners.find((other) => String(other.feature.number) === chosen);
   return (
@@ -121,14 +122,32 @@ function TieTool({ row }: { row: DeskRow }) {
             </option>
           ))}
         </select>
-        <button type="button" className="small" disabled={!partner} onClick={() => partner && tieFeature(row, partner)}>
+        <button
+          type="button"
+          className="small"
+          disabled={!partner || !isRatio(ratio)}
+          onClick={() => partner && tieFeature(row, partner, ratio === '' ? undefined : Number(ratio))}
+        >
           {label.tieButton}
         </button>
       </span>
+      <label className="with-unit">
+        {label.tieRatio}
+        <input
+          type="text"
+          inputMode="decimal"
+          value={ratio}
+          aria-invalid={!isRatio(ratio)}
+          onChange={(event) => setRatio(event.target.value.trim())}
+        />
+      </label>
       <p className="hint">{label.tieHint}</p>
     </div>
   );
 }
+
+/** Nothing, or a flux ratio. */
+const isRatio = (text: string) => text === '' || Number(text) > 0;
 
 /** The feature as a Gaussian, a Voigt profile and two Gaussians, side by side. */
 function Shapes({ row }: { row: DeskRow }) {
