@@ -1,5 +1,6 @@
 import type { Evidence, NamingSettings, RedshiftHypothesis } from '../identify/index.ts';
 import type { Feature, Group, MeasureSettings } from '../measure/index.ts';
+import type { Gas, GasSettings } from '../plasma/index.ts';
 import type { Remark } from '../problems/index.ts';
 import type { Offer, Reading, ReadingChoices } from '../readers/index.ts';
 import type { LineTable } from '../report/index.ts';
@@ -128,7 +129,9 @@ export interface Analysis {
   readonly zErr: number;
   readonly dispersionKms: number;
   /** What was really used, defaults filled in. */
-  readonly settings: { readonly measure: MeasureSettings; readonly naming: NamingSettings };
+  readonly settings: { readonly measure: MeasureSettings; readonly naming: NamingSettings; readonly gas: GasSettings };
+  /** What the names in force say of the gas. */
+  readonly gas: Gas;
   readonly missing: readonly { readonly label: string; readonly expectedAt: number; readonly predictedFlux: number }[];
   readonly remarks: readonly Remark[];
   /** Verdicts that found no feature any more. */

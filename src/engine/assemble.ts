@@ -1,6 +1,7 @@
 import type { AtomicData } from '../atomic/index.ts';
 import type { Mark, Naming, NamingSettings } from '../identify/index.ts';
 import type { Feature, Measurement, MeasureSettings } from '../measure/index.ts';
+import type { Gas } from '../plasma/index.ts';
 import { sameKeys, type Verdict } from '../session/index.ts';
 import { fromVacuum } from '../spectrum/index.ts';
 import type { Analysis, CandidateView, FeatureView } from './analysis.ts';
@@ -27,12 +28,11 @@ interface Parts {
   readonly timings: Analysis['timings'];
 }
 
-/** Stages, verdicts and names put together as they are shown and printed. */
-export function assemble(parts: Parts): Analysis {
-  const { data, material, measurement, naming, namingSettings } = parts;
-  const { medium, mediumStated, fluxUnit, name: title } = material.reading;
-  const view = candidateViewer({ data, medium, te: namingSettings.te });
-  const features = parts.features.map((measured, k): FeatureView => {
+/** The features with their cases and the verdicts on them. */
+export function featureViews(parts: Parts): FeatureView[] {
+  const { data, material, naming, namingSettings } = parts;
+  const view = candidateViewer({ data, medium: material.reading.medium, te: namingSettings.te });
+  return parts.features.map((measured, k): FeatureView => {
     const { candidates, noneProbability } = naming.features[k];
     const verdict = parts.byFeature[k];
     const shown = candidates.map(view);
@@ -50,6 +50,12 @@ export function assemble(parts: Parts): Analysis {
       ...(name ? { name } : {}),
     };
   });
+}
+
+/** Stages, verdicts and names put together as they are shown and printed. */
+export function assemble(parts: Parts, features: readonly FeatureView[], gas: Gas): Analysis {
+  const { data, material, measurement, naming, namingSettings } = parts;
+  const { medium, mediumStated, fluxUnit, name: title } = material.reading;
   return {
     reading: material.reading,
     ...(material.spectrum && measurement ? { samples: samplesOf(material.spectrum, measurement) } : {}),
@@ -66,7 +72,8 @@ export function assemble(parts: Parts): Analysis {
     z: naming.z,
     zErr: naming.zErr,
     dispersionKms: naming.dispersionKms,
-    settings: { measure: parts.measureSettings, naming: namingSettings },
+    settings: { measure: parts.measureSettings, naming: namingSettings, gas: gas.settings },
+    gas,
     missing: naming.missing.map((m) => ({
       label: lineLabel(data, m.line, medium),
       expectedAt: fromVacuum(m.expectedAt, medium),
@@ -74,18 +81,22 @@ export function assemble(parts: Parts): Analysis {
     })),
     remarks: [...material.reading.remarks, ...(measurement?.remarks ?? []), ...naming.remarks],
     lostVerdicts: parts.lost,
-    table: lineTableOf(features, {
-      title,
-      medium,
-      mediumStated,
-      fluxUnit,
-      z: naming.z,
-      zErr: naming.zErr,
-      te: namingSettings.te,
-      resolvingPower: measurement?.resolvingPower,
-      atomicVersion: data.version,
-      sha256: parts.sha256,
-    }),
+    table: lineTableOf(
+      features,
+      {
+        title,
+        medium,
+        mediumStated,
+        fluxUnit,
+        z: naming.z,
+        zErr: naming.zErr,
+        te: namingSettings.te,
+        resolvingPower: measurement?.resolvingPower,
+        atomicVersion: data.version,
+        sha256: parts.sha256,
+      },
+      gas,
+    ),
     timings: parts.timings,
   };
 }

@@ -12,15 +12,18 @@ import {
   measurementOf,
   shapesOfFeature,
 } from '../measure/index.ts';
+import { DEFAULT_GAS_SETTINGS, type Gas, type GasSettings } from '../plasma/index.ts';
 import { ProblemError } from '../problems/index.ts';
 import type { ByteSource, ReadingChoices } from '../readers/index.ts';
 import { matchVerdicts, type OwnLines, type Settings, type Verdict } from '../session/index.ts';
 import type { Analysis, Progress } from './analysis.ts';
-import { assemble } from './assemble.ts';
+import { assemble, featureViews } from './assemble.ts';
 import { fixedNames } from './fixedNames.ts';
 import { marksOf } from './marksOf.ts';
 import { guessKind, type Material, readMaterial, type SourceKind } from './material.ts';
 import { namedPairs } from './namedPairs.ts';
+import { plasmaLines } from './plasmaLines.ts';
+import { plasmaStage } from './plasmaStage.ts';
 import { sourceHash } from './sourceHash.ts';
 
 /** How a run is watched and stopped. */
@@ -35,6 +38,8 @@ export interface Engine {
   dataWith(own: OwnLines | undefined): AtomicData;
   /** Takes `source` for all following analyses; `guess` looks into the file whether it holds samples or measured lines. */
   open(source: ByteSource, kind: SourceKind | 'guess'): Promise<SourceKind>;
+  /** SHA-256 of the open source's bytes, hex; RangeError when nothing is open. */
+  sha256(control?: RunControl): Promise<string>;
   /** @throws ProblemError when the source cannot be read as chosen; RangeError when nothing is open */
   analyse(settings: Settings, verdicts: readonly Verdict[], control?: RunControl): Promise<Analysis>;
   /** Of the spectrum last analysed: the feature nearest to `at` (Angstrom, medium of the reading) in other shapes, best first; empty for a list of lines. */
@@ -57,6 +62,7 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
   const tied = stage<Measurement | undefined>();
   let last: { readonly fitted: FittedSpectrum; readonly measurement: Measurement; readonly edits: MeasureSettings['edits'] } | undefined;
   const named = stage<Naming>();
+  const described = stage<Gas>();
 
   return {
     dataWith: lists,
@@ -66,6 +72,11 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
       material.forget();
       hashed.forget();
       return found;
+    },
+    async sha256(control = {}) {
+      if (!source) throw new RangeError('sha256 was called before open');
+      const { bytes } = source;
+      return hashed.of([], () => sourceHash(bytes, (share) => control.progress?.({ stage: 'hashing', share }), control.signal));
     },
     async analyse(settings, verdicts, control = {}) {
       if (!source) throw new RangeError('analyse was called before open');
@@ -115,7 +126,7 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
       );
       const features = measurement?.features ?? what.features;
       last = fits && measurement && { fitted: fits, measurement, edits };
-      return assemble({
+      const parts = {
         data: list,
         sha256,
         material: what,
@@ -128,7 +139,17 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
         measureSettings,
         namingSettings,
         timings,
-      });
+      };
+      const views = featureViews(parts);
+      const gasSettings: GasSettings = { ...DEFAULT_GAS_SETTINGS, ...settings.gas };
+      const { medium } = what.reading;
+      const lines = plasmaLines(views, { data: list, medium, z: naming.z, leastProbability: gasSettings.leastProbability });
+      const gas = await described.of([measured.stamp(), tied.stamp(), lines, gasSettings, namingSettings, settings.ownLines], () =>
+        run('gas', () =>
+          plasmaStage({ data: list, lines, spectrum, measurement, medium, z: naming.z, settings: gasSettings, namingSettings }),
+        ),
+      );
+      return assemble(parts, views, gas);
     },
     shapesAt: (at) => (last ? shapesOfFeature(last.fitted, last.edits ?? [], at) : []),
     limitAt: (at) => last && fluxLimit(last.fitted, last.measurement.model, at),

@@ -1,3 +1,4 @@
+import type { Gas, WithErr } from '../plasma/index.ts';
 import type { LineRow, LineTable } from '../report/index.ts';
 import { fromVacuum, toVacuum } from '../spectrum/index.ts';
 import { kmsFromWidth } from '../units/index.ts';
@@ -11,15 +12,25 @@ const H_BETA_AIR_A = 4861.33;
 const MOST_ALTERNATIVES = 5;
 
 /** The finished table: one row a feature in the order of `features`. */
-export function lineTableOf(features: readonly FeatureView[], facts: TableFacts): LineTable {
-  const hBeta = features.find((f) => f.name?.transitions[0].ion === 'H I' && isHBeta(f.name.transitions[0], facts) && f.measured.flux > 0);
-  return { ...facts, rows: features.map((feature) => rowOf(feature, facts, hBeta)) };
+export function lineTableOf(features: readonly FeatureView[], facts: TableFacts, gas: Pick<Gas, 'intensities' | 'hBeta'>): LineTable {
+  const intensities = new Map(gas.intensities?.map((each) => [each.feature, each]));
+  const named = features.find((f) => f.name?.transitions[0].ion === 'H I' && isHBeta(f.name.transitions[0], facts) && f.measured.flux > 0);
+  const hBeta = gas.hBeta ? { flux: gas.hBeta.value, fluxErr: gas.hBeta.err } : named?.measured;
+  return {
+    ...facts,
+    rows: features.map((feature) => ({ ...rowOf(feature, facts, hBeta), ...intensityCells(intensities.get(feature.number)) })),
+  };
+}
+
+interface HBeta {
+  readonly flux: number;
+  readonly fluxErr: number;
 }
 
 const isHBeta = (t: TransitionView, facts: TableFacts) =>
   Math.abs(t.wavelengthLab - fromVacuum(toVacuum(H_BETA_AIR_A, 'air'), facts.medium)) < 0.5;
 
-function rowOf(feature: FeatureView, facts: TableFacts, hBeta: FeatureView | undefined): LineRow {
+function rowOf(feature: FeatureView, facts: TableFacts, hBeta: HBeta | undefined): LineRow {
   const m = feature.measured;
   const listed = Number.isNaN(m.continuum);
   return {
@@ -36,7 +47,7 @@ function rowOf(feature: FeatureView, facts: TableFacts, hBeta: FeatureView | und
     ewErr: listed ? undefined : known(m.ewErr),
     snr: known(m.snr),
     ...nameCells(feature.name),
-    ...hBetaCells(m.flux, m.fluxErr, hBeta?.measured),
+    ...hBetaCells(m.flux, m.fluxErr, hBeta),
     alternatives: feature.candidates
       .filter((candidate) => candidate !== feature.name)
       .slice(0, MOST_ALTERNATIVES)
@@ -76,13 +87,17 @@ function natureCell(nature: string): LineRow['nature'] {
 }
 
 /** On the scale H beta = 100; the error of H beta itself is carried into every other line's. */
-function hBetaCells(flux: number, fluxErr: number, hBeta: { flux: number; fluxErr: number } | undefined): Partial<LineRow> {
+function hBetaCells(flux: number, fluxErr: number, hBeta: HBeta | undefined): Partial<LineRow> {
   if (!hBeta) return {};
   const scaled = (100 * flux) / hBeta.flux;
   const relativeErr = hBeta.flux === flux ? fluxErr / flux : Math.hypot(fluxErr / flux, hBeta.fluxErr / hBeta.flux);
   const fluxHbeta100Err = known(Math.abs(scaled * relativeErr));
   return { fluxHbeta100: scaled, fluxHbeta100Err };
 }
+
+/** Corrected for reddening; the error carries that of c(H beta). */
+const intensityCells = (found: WithErr | undefined): Partial<LineRow> =>
+  found ? { intensityHbeta100: known(found.value), intensityHbeta100Err: known(found.err) } : {};
 
 function notesOf(feature: FeatureView): string {
   const notes: string[] = [];

@@ -109,7 +109,7 @@ export function openSource(document: SessionDocument, source: Source): Change {
 }
 
 /** Settings without what belongs to one source alone. */
-function forAnotherSource({ measure, naming, ...rest }: Settings): Settings {
+function forAnotherSource({ measure, naming, gas, ...rest }: Settings): Settings {
   const {
     resolvingPower: _power,
     instrumentFwhmA: _width,
@@ -119,7 +119,8 @@ function forAnotherSource({ measure, naming, ...rest }: Settings): Settings {
     ...measureKept
   } = measure;
   const { z: _z, ...namingKept } = naming;
-  return { ...rest, reading: {}, measure: measureKept, naming: namingKept };
+  const { cHbeta: _c, stellarEwA: _stellar, te: _te, ne: _ne, ...gasKept } = gas ?? {};
+  return { ...rest, reading: {}, measure: measureKept, naming: namingKept, ...(gas ? { gas: gasKept } : {}) };
 }
 
 /** Takes a source off the shelf; its verdicts go with it, undo brings both back. */

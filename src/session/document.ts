@@ -1,5 +1,6 @@
 import type { NamingSettings } from '../identify/index.ts';
 import type { MeasureSettings } from '../measure/index.ts';
+import type { GasSettings } from '../plasma/index.ts';
 import type { ReadingChoices } from '../readers/index.ts';
 
 /** Choices of the user; what is absent is left to the engine's defaults and to what the file says. */
@@ -7,6 +8,8 @@ export interface Settings {
   readonly reading: ReadingChoices;
   readonly measure: Partial<MeasureSettings>;
   readonly naming: Partial<NamingSettings>;
+  /** Absent = all left to the program. */
+  readonly gas?: Partial<GasSettings>;
   /** Lines the user adds to the bundled list: the CSV as it was read, so that it can be read again by another release. */
   readonly ownLines?: OwnLines;
 }
@@ -23,6 +26,8 @@ export interface Source {
   readonly name: string;
   /** Bytes. */
   readonly size: number;
+  /** SHA-256 of the bytes, hex; absent in documents of the first version, which knew a source by its name and size. */
+  readonly sha256?: string;
 }
 
 /** A transition in a form that survives a new edition of the line list: ion and vacuum wavelength, `O III 5008.240`. */
@@ -61,7 +66,11 @@ export interface Shelved {
   readonly verdicts: readonly Verdict[];
 }
 
-/** Whether two sources are the same file. */
-export const sameSource = (a: Source, b: Source) => a.kind === b.kind && a.name === b.name && a.size === b.size;
+/** Whether two sources are the same file under the same name: by their hashes where both are known, else by size. */
+export const sameSource = (a: Source, b: Source) => a.kind === b.kind && a.name === b.name && sameBytes(a, b);
+
+/** Whether two sources hold the same bytes, whatever their names: by their hashes where both are known, else as far as the size tells. */
+export const sameBytes = (a: Pick<Source, 'size' | 'sha256'>, b: Pick<Source, 'size' | 'sha256'>) =>
+  a.sha256 !== undefined && b.sha256 !== undefined ? a.sha256 === b.sha256 : a.size === b.size;
 
 export const EMPTY_DOCUMENT: SessionDocument = { settings: { reading: {}, measure: {}, naming: {} }, verdicts: [] };

@@ -4,7 +4,13 @@ import type { History } from './history.ts';
 import { startHistory } from './history.ts';
 
 const MAGIC = 'linewright-session';
-const VERSION = 1;
+const VERSION = 2;
+
+/** What turns a file of one version into one of the next; a file goes through all from its own to the present one. */
+const MIGRATIONS: Readonly<Record<number, (file: object) => object>> = {
+  // version 1 knew a source by name and size: its sources stay without a hash and are compared as before
+  1: (file) => ({ ...file, version: 2 }),
+};
 
 const keys = v.array(v.string());
 const verdictShape = v.object({
@@ -19,9 +25,15 @@ const settingsShape = v.object({
   reading: v.record(v.string(), v.unknown()),
   measure: v.record(v.string(), v.unknown()),
   naming: v.record(v.string(), v.unknown()),
+  gas: v.optional(v.record(v.string(), v.unknown())),
   ownLines: v.optional(v.object({ name: v.string(), text: v.string() })),
 });
-const sourceShape = v.object({ kind: v.picklist(['spectrum', 'line-list']), name: v.string(), size: v.number() });
+const sourceShape = v.object({
+  kind: v.picklist(['spectrum', 'line-list']),
+  name: v.string(),
+  size: v.number(),
+  sha256: v.optional(v.string()),
+});
 const shelfShape = v.array(v.object({ source: sourceShape, settings: settingsShape, verdicts: v.array(verdictShape) }));
 const documentShape = v.object({
   source: v.optional(sourceShape),
@@ -46,7 +58,7 @@ const fileShape = v.object({
 
 /** The history as the text of a session file (JSON with a magic word and a version). */
 export function writeSession(history: History): string {
-  return `${JSON.stringify({ magic: MAGIC, version: VERSION, document: history.document, past: history.past, future: history.future }, null, 1)}\n`;
+  return `${JSON.stringify(sessionRecord(history), null, 1)}\n`;
 }
 
 /**
@@ -64,12 +76,34 @@ export function readSession(text: string, file: string): History {
   } catch {
     return fail('session-not-json', 'the text is not JSON', 'Open a file that was saved by "Save session".');
   }
+  return checked(raw, fail);
+}
+
+/** What is kept of a session outside a file: plain data with the same magic word and version. */
+export const sessionRecord = ({ document, past, future }: History): object => ({ magic: MAGIC, version: VERSION, document, past, future });
+
+/**
+ * A record of `sessionRecord`, of this or an earlier release -> the history it holds.
+ *
+ * @throws ProblemError as `readSession`
+ */
+export function readSessionRecord(record: unknown, where: string): History {
+  return checked(record, (code, found, doThis) => {
+    throw new ProblemError({ code, where: { file: where }, found, expected: `a ${MAGIC} record of version ${VERSION}`, doThis });
+  });
+}
+
+function checked(raw: unknown, fail: (code: string, found: string, doThis: string) => never): History {
   const head = v.safeParse(v.object({ magic: v.literal(MAGIC), version: v.number() }), raw);
   if (!head.success)
     return fail('session-no-magic', 'the file does not call itself a session', 'Open a file that was saved by "Save session".');
-  if (head.output.version !== VERSION)
-    return fail('session-version', `version ${head.output.version}`, 'Open it with the release that wrote it.');
-  const parsed = v.safeParse(fileShape, raw);
+  let file: object = raw as object;
+  for (let { version } = head.output; version !== VERSION; version++) {
+    const migrate = MIGRATIONS[version];
+    if (!migrate) return fail('session-version', `version ${head.output.version}`, 'Open it with the release that wrote it.');
+    file = migrate(file);
+  }
+  const parsed = v.safeParse(fileShape, file);
   if (!parsed.success) {
     const issue = parsed.issues[0];
     return fail(

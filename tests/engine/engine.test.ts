@@ -136,7 +136,7 @@ describe('stages', () => {
   test('a verdict runs naming again but not reading and measuring', async () => {
     await analyse(EMPTY_DOCUMENT);
     const document = applyChange(EMPTY_DOCUMENT, declare(EMPTY_DOCUMENT, pointed(at(analysis, 6300.9)), 'unidentified'));
-    expect((await analyse(document)).timings.map((t) => t.stage)).toEqual(['naming']);
+    expect((await analyse(document)).timings.map((t) => t.stage)).toEqual(['naming', 'gas']);
     expect((await analyse(document)).timings).toEqual([]);
   });
 

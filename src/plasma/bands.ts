@@ -1,0 +1,34 @@
+import type { MeasuredRatio } from './measuredRatios.ts';
+import { NE_GRID, profileAlong, solveProfile, TE_GRID } from './populationGrid.ts';
+import type { LnRatio } from './solveZones.ts';
+
+/** Where in the Te-ne plane a measured ratio holds: the line and one sigma to either side; a point that leaves the table is absent (NaN). */
+export interface Band {
+  readonly label: string;
+  readonly tells: 'temperature' | 'density';
+  /** Density bands run over Te, temperature bands over ne: `at` is that one, the other three the quantity told. */
+  readonly at: readonly number[];
+  readonly middle: readonly number[];
+  readonly low: readonly number[];
+  readonly high: readonly number[];
+}
+
+/** The band of one diagnostic. `ln`: its measured ratio. */
+export function bandOf({ diagnostic, grid }: MeasuredRatio, ln: LnRatio): Band {
+  const along = diagnostic.tells === 'density' ? 'ne' : 'te';
+  const at = along === 'ne' ? TE_GRID : NE_GRID;
+  const solveAll = (value: number) =>
+    at.map((other) => {
+      const solution = solveProfile(profileAlong(grid, along, other), value);
+      return solution.ended === 'value' ? solution.x : Number.NaN;
+    });
+  const sides = [solveAll(ln.value - ln.err), solveAll(ln.value + ln.err)];
+  return {
+    label: diagnostic.label,
+    tells: diagnostic.tells,
+    at,
+    middle: solveAll(ln.value),
+    low: at.map((_, k) => Math.min(sides[0][k], sides[1][k])),
+    high: at.map((_, k) => Math.max(sides[0][k], sides[1][k])),
+  };
+}

@@ -1,0 +1,130 @@
+import type { AtomicData } from '../atomic/index.ts';
+import { abundanceResults, discrepanciesOf } from './abundanceResults.ts';
+import { bandOf } from './bands.ts';
+import { densityLadder, type MeasuredDensity } from './densityLadder.ts';
+import { diagnosticResults, zoneResults } from './diagnosticResults.ts';
+import { type Drawn, drawGas, lnIntensity, lnRatioOf } from './drawGas.ts';
+import type { DiagnosticResult, Gas } from './gas.ts';
+import type { GasSettings } from './gasSettings.ts';
+import { correctionOf, intensitiesOf } from './intensities.ts';
+import { collisionalIons } from './ionAbundances.ts';
+import { type Continuum, jumpResults } from './jumps.ts';
+import { kinematicsOf } from './kinematics.ts';
+import { lineFluxes } from './lineFluxes.ts';
+import { measuredRatios } from './measuredRatios.ts';
+import type { NamedLine } from './namedLine.ts';
+import { curveOf, type ReddeningResult, reddeningOf } from './reddening.ts';
+import { reddeningView } from './reddeningView.ts';
+import { type LnRatio, solveZones, type ZonesSolved } from './solveZones.ts';
+
+/** What the gas is described from, beside its lines. */
+export interface GasContext {
+  readonly data: AtomicData;
+  readonly settings: GasSettings;
+  /** Te (K) and ne (cm^-3) where nothing is known. */
+  readonly startTe: number;
+  readonly startNe: number;
+  /** Absent for a list of lines. */
+  readonly continuum?: Continuum;
+  readonly draws?: number;
+  readonly seed?: number;
+}
+
+/** Reddening hangs on Te and ne by a few per cent at most: it settles at once. */
+const ROUNDS = 3;
+const DRAWS = 200;
+const SEED = 1;
+/** The ladder's temperature goes in steps, so that its curves need not be solved anew for every verdict, K. */
+const LADDER_TE_STEP = 100;
+
+/**
+ * What the named emission lines of an object say of its gas: reddening, temperature and density by zone, abundances, density ladder, kinematics.
+ *
+ * @param named emission lines of the object, rest frame; features without a name only get an intensity
+ * Errors: draws of the noise of all fluxes at once (seeded, repeatable); intensities by linear propagation.
+ */
+export function describeGas(named: readonly NamedLine[], context: GasContext): Gas {
+  const { data, settings } = context;
+  const fluxes = lineFluxes(named, settings.calibrationErr);
+  const { ratios, unused } = measuredRatios(data, fluxes);
+  const curve = curveOf(settings);
+  const f = Float64Array.from(fluxes, (flux) => curve(flux.restVac));
+  const zoneSettings = { te: settings.te, ne: settings.ne, startTe: context.startTe, startNe: context.startNe };
+
+  let [te, ne] = [settings.te ?? context.startTe, settings.ne ?? context.startNe];
+  let reddening: ReddeningResult | undefined;
+  let solved: ZonesSolved | undefined;
+  let ln: LnRatio[] = [];
+  let c = 0;
+  for (let round = 0; round < ROUNDS; round++) {
+    reddening = reddeningOf(data, fluxes, settings, te, ne);
+    c = Math.max(0, settings.cHbeta ?? reddening.fit?.cHbeta ?? 0);
+    const lnI = fluxes.map(({ flux }, k) => lnIntensity(flux, c, f[k]));
+    const relativeErr = (indices: readonly number[]) => {
+      const sum = indices.reduce((total, index) => total + fluxes[index].flux, 0);
+      return Math.hypot(...indices.map((index) => fluxes[index].fluxErr / sum));
+    };
+    const cErr = settings.cHbeta === undefined ? (reddening.fit?.cHbetaErr ?? 0) : 0;
+    ln = ratios.map((ratio) => {
+      const reach = Math.LN10 * cErr * (f[ratio.over[0]] - f[ratio.under[0]]);
+      return { value: lnRatioOf(ratio, lnI), err: Math.hypot(relativeErr(ratio.over), relativeErr(ratio.under), reach) };
+    });
+    solved = solveZones(ratios, ln, zoneSettings);
+    // most of the hydrogen shines in the medium zone
+    ({ te, ne } = solved.zones.medium);
+  }
+  const { fit, zones } = { fit: (reddening as ReddeningResult).fit, zones: (solved as ZonesSolved).zones };
+  const correction = correctionOf(named, fluxes, fit, settings.cHbeta);
+  const hBetaLine = data.hydrogenicLine('H I', 2, 4);
+  const hBetaIndex = fluxes.findIndex((flux) => flux.lines.length === 1 && flux.lines[0] === hBetaLine);
+  const hBeta = hBetaIndex < 0 ? undefined : hBetaIndex;
+  const ions = collisionalIons(data, fluxes);
+  const drawn: Drawn = drawGas({
+    fluxes,
+    f,
+    c,
+    cSlopes: Float64Array.from(fluxes, ({ from }) => (correction ? from.reduce((sum, k) => sum + correction.slopes[k], 0) : 0)),
+    hBeta,
+    ratios,
+    ions,
+    solved: solved as ZonesSolved,
+    settings: zoneSettings,
+    seed: context.seed ?? SEED,
+    draws: context.draws ?? DRAWS,
+  });
+  const numbers = (indices: readonly number[]) => indices.flatMap((index) => fluxes[index].from.map((k) => named[k].feature));
+  const diagnostics = diagnosticResults(ratios, ln, solved as ZonesSolved, drawn, numbers);
+  const ladderTe = LADDER_TE_STEP * Math.round(zones.medium.te / LADDER_TE_STEP);
+  const lnI = fluxes.map(({ flux }, k) => lnIntensity(flux, c, f[k]));
+  const abundances = hBeta === undefined ? [] : abundanceResults({ data, fluxes, lnI, hBeta, ions, zones, drawn });
+  const intensities =
+    correction && hBeta !== undefined ? intensitiesOf(named, fluxes[hBeta], correction, settings.calibrationErr, curve) : undefined;
+  return {
+    settings,
+    accepted: named.filter((line) => line.lines.length > 0 && line.accepted).length,
+    probable: named.filter((line) => line.lines.length > 0 && !line.accepted).length,
+    ...(hBeta === undefined ? {} : { hBeta: { value: fluxes[hBeta].flux, err: fluxes[hBeta].fluxErr, features: numbers([hBeta]) } }),
+    reddening: reddeningView(data, named, fluxes, reddening as ReddeningResult, settings, te, ne),
+    ...(intensities ? { intensities } : {}),
+    diagnostics,
+    unused,
+    zones: zoneResults(ratios, solved as ZonesSolved, drawn, zoneSettings),
+    bands: ratios.map((ratio, k) => bandOf(ratio, ln[k])),
+    jumps: context.continuum ? jumpResults(data, fluxes, context.continuum, c, curve, abundances) : [],
+    abundances,
+    discrepancies: discrepanciesOf(abundances),
+    ladder: densityLadder(data, named, fluxes, ladderTe, measuredDensities(diagnostics)),
+    kinematics: kinematicsOf(data, named),
+    draws: context.draws ?? DRAWS,
+  };
+}
+
+function measuredDensities(diagnostics: readonly DiagnosticResult[]): MeasuredDensity[] {
+  return diagnostics.flatMap(({ label, tells, result }) =>
+    tells === 'density' && result.ended === 'value'
+      ? [{ label, lowCm3: result.low }]
+      : tells === 'density' && result.ended === 'above'
+        ? [{ label, lowCm3: result.limit }]
+        : [],
+  );
+}

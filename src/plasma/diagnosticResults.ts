@@ -1,0 +1,122 @@
+import type { Drawn } from './drawGas.ts';
+import { boundedEstimate, type Estimate, estimateOf } from './estimate.ts';
+import type { DiagnosticResult, ZoneQuantity, ZoneResult } from './gas.ts';
+import type { MeasuredRatio } from './measuredRatios.ts';
+import { NE_RANGE, TE_RANGE } from './populationGrid.ts';
+import type { LnRatio, ZoneSettings, ZonesSolved } from './solveZones.ts';
+import { nearestZones, ZONES, type Zone } from './zones.ts';
+
+/** Each diagnostic with its value or limit. */
+export function diagnosticResults(
+  ratios: readonly MeasuredRatio[],
+  ln: readonly LnRatio[],
+  { zones, solutions }: ZonesSolved,
+  drawn: Drawn,
+  numbers: (indices: readonly number[]) => number[],
+): DiagnosticResult[] {
+  const members = membersOf(ratios, solutions);
+  return ratios.map((ratio, k) => {
+    const { diagnostic, zone, over, under } = ratio;
+    const range = diagnostic.tells === 'density' ? NE_RANGE : TE_RANGE;
+    const solution = solutions[k];
+    const value = solution.ended === 'value' ? solution.x : undefined;
+    const beyond = solution.ended === 'value' ? undefined : solution.ended;
+    const ratioValue = Math.exp(ln[k].value);
+    const at =
+      diagnostic.tells === 'density' ? `Te = ${Math.round(zones[zone].te)} K` : `ne = ${Number(zones[zone].ne.toPrecision(2))} cm⁻³`;
+    return {
+      label: diagnostic.label,
+      ion: diagnostic.ion,
+      zone,
+      tells: diagnostic.tells,
+      features: numbers([...over, ...under]),
+      ratio: { value: ratioValue, err: ratioValue * ln[k].err },
+      result: boundedEstimate(value, beyond, drawn.diagnostics[k], range),
+      counts: members.has(k),
+      assumption: `Level populations of ${diagnostic.ion} at ${at} of its zone; both lines from the same gas.${diagnostic.caution ? ` ${diagnostic.caution}` : ''}`,
+    };
+  });
+}
+
+/** The diagnostics that make up the means: the primary ones of their zone, else the others. */
+function membersOf(ratios: readonly MeasuredRatio[], solutions: ZonesSolved['solutions']): Set<number> {
+  const members = new Set<number>();
+  for (const zone of ZONES)
+    for (const tells of ['temperature', 'density'] as const) {
+      const all = ratios.flatMap((ratio, k) =>
+        ratio.zone === zone && ratio.diagnostic.tells === tells && solutions[k].ended === 'value' ? [k] : [],
+      );
+      const primary = all.filter((k) => !ratios[k].diagnostic.secondary);
+      for (const k of primary.length > 0 ? primary : all) members.add(k);
+    }
+  return members;
+}
+
+/**
+ * Temperature and density of every zone, with where they are from. Where the diagnostics of a zone disagree by more than their errors, the error of the mean grows accordingly
+ * (the practice of the Particle Data Group's averages).
+ */
+export function zoneResults(ratios: readonly MeasuredRatio[], solved: ZonesSolved, drawn: Drawn, settings: ZoneSettings): ZoneResult[] {
+  const members = membersOf(ratios, solved.solutions);
+  const has = (tells: 'temperature' | 'density', zone: Zone) =>
+    ratios.some((ratio, k) => members.has(k) && ratio.zone === zone && ratio.diagnostic.tells === tells);
+  const quantity = (zone: Zone, tells: 'temperature' | 'density'): ZoneQuantity => {
+    const name = tells === 'temperature' ? 'te' : 'ne';
+    const value = solved.zones[zone][name];
+    const given = settings[name];
+    if (given !== undefined) return { estimate: estimateOf(given, []), from: 'given' };
+    const source = nearestZones(zone).find((each) => has(tells, each));
+    if (source === undefined) return unmeasured(ratios, drawn, tells, value);
+    const range = tells === 'density' ? NE_RANGE : TE_RANGE;
+    const estimate = widened(
+      boundedEstimate(value, undefined, drawn[name][zone], range),
+      disagreement(solved, members, ratios, source, tells),
+    );
+    const labels = ratios.flatMap((ratio, k) =>
+      members.has(k) && ratio.zone === source && ratio.diagnostic.tells === tells ? [ratio.diagnostic.label] : [],
+    );
+    return { estimate, from: source === zone ? labels.join(', ') : `taken from the ${source} zone` };
+  };
+  return ZONES.map((zone) => ({ zone, te: quantity(zone, 'temperature'), ne: quantity(zone, 'density') }));
+}
+
+/** How much more than their errors allow the diagnostics of a zone disagree: sqrt(chi2/dof) of their mean in the logarithm, at least 1. */
+function disagreement(
+  { solutions, weights, zones }: ZonesSolved,
+  members: ReadonlySet<number>,
+  ratios: readonly MeasuredRatio[],
+  zone: Zone,
+  tells: 'temperature' | 'density',
+): number {
+  const mean = Math.log(zones[zone][tells === 'temperature' ? 'te' : 'ne']);
+  let chi2 = 0;
+  let count = 0;
+  ratios.forEach((ratio, k) => {
+    const solution = solutions[k];
+    if (!members.has(k) || ratio.zone !== zone || ratio.diagnostic.tells !== tells || solution.ended !== 'value') return;
+    chi2 += weights[k] * (Math.log(solution.x) - mean) ** 2;
+    count++;
+  });
+  return count > 1 ? Math.max(1, Math.sqrt(chi2 / (count - 1))) : 1;
+}
+
+/** An interval made wider about its value by a factor, in the logarithm. */
+function widened(estimate: Estimate, factor: number): Estimate {
+  if (estimate.ended !== 'value' || factor === 1) return estimate;
+  const { value, low, high } = estimate;
+  return { ended: 'value', value, low: value * (low / value) ** factor, high: value * (high / value) ** factor };
+}
+
+/** Nothing solved: a limit where a ratio was measured at its flat end, else what was assumed. */
+function unmeasured(ratios: readonly MeasuredRatio[], drawn: Drawn, tells: 'temperature' | 'density', value: number): ZoneQuantity {
+  const range = tells === 'density' ? NE_RANGE : TE_RANGE;
+  const limits = ratios.flatMap((ratio, k): { estimate: Estimate; label: string }[] => {
+    if (ratio.diagnostic.tells !== tells) return [];
+    const estimate = boundedEstimate(undefined, 'below', drawn.diagnostics[k], range);
+    return estimate.ended === 'below' ? [{ estimate, label: ratio.diagnostic.label }] : [];
+  });
+  const [best] = limits.toSorted((a, b) => limitOf(a.estimate) - limitOf(b.estimate));
+  return best ? { estimate: best.estimate, from: best.label } : { estimate: estimateOf(value, []), from: 'assumed: no ratio tells it' };
+}
+
+const limitOf = (estimate: Estimate) => (estimate.ended === 'below' ? estimate.limit : Number.POSITIVE_INFINITY);
