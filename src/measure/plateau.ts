@@ -17,6 +17,8 @@ const SURROUNDINGS_FWHM = 4;
 /** Edges are sought this far beyond the outermost components, on a grid of so many places. */
 const EDGE_REACH_FWHM = 1.6;
 const EDGES = 8;
+/** Edges are as soft as the instrument, or sharp where the data were joined after it (orders, arms). */
+const SOFTNESS = [1, 0.25];
 /** Heights of the two edges, offset and slope of the line below. */
 const BOX_UNKNOWNS = 4;
 
@@ -91,7 +93,10 @@ export function isPlateau(samples: FitSamples, fit: GroupFit, row: readonly Comp
   for (let i = 0; i < others.length; i++) window.y[i] -= others[i];
   const price = Math.log(others.length);
   const n = others.length - 1;
-  const box = bestBoxChi2(window, row[0].centre, row[row.length - 1].centre, width.sigmaAt(row[0].centre), fwhm);
+  const sigma = width.sigmaAt(row[0].centre);
+  const box = Math.min(
+    ...SOFTNESS.map((softness) => bestBoxChi2(window, row[0].centre, row[row.length - 1].centre, softness * sigma, fwhm)),
+  );
   const asLines = fitGroup(window, 0, n, row, width).chi2;
   return box + BOX_UNKNOWNS * price < asLines + 3 * row.length * price;
 }
