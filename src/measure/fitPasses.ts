@@ -17,6 +17,8 @@ export interface PassSettings {
   readonly width: WidthPrior;
   readonly threshold: number;
   readonly absorption: boolean;
+  /** S/N map of the samples as they come, where there is one. */
+  readonly snr?: Float64Array;
   /** Told the share done, and asked to stop by throwing. */
   readonly between: (share: number) => void;
 }
@@ -45,7 +47,7 @@ export function fitPasses(samples: FitSamples, settings: PassSettings, spikes: n
   const sigma = sigmaInSamples(samples, width);
   const fwhmAt = (i: number) => FWHM_PER_SIGMA * sigma[i];
   const n = samples.x.length;
-  let found = seedsIn(samples, samples.y, settings, sigma, []);
+  let found = settings.snr ? seedsOf(settings.snr, samples, samples.y, settings, []) : seedsIn(samples, samples.y, settings, sigma, []);
   const alone = forgiveMisfit(samples, groupPeaks(found, fwhmAt, n), width, misfit);
   if (!alone) found = seedsIn(samples, samples.y, settings, sigma, []);
   let fits: GroupFit[] = [];
@@ -86,12 +88,23 @@ export function fitPasses(samples: FitSamples, settings: PassSettings, spikes: n
 function seedsIn(
   samples: FitSamples,
   residual: Float64Array,
-  { width, threshold, absorption }: PassSettings,
+  settings: PassSettings,
   sigma: Float64Array,
   known: readonly Seed[],
   where?: readonly Stretch[],
 ): Seed[] {
-  const snr = matchedFilter(residual, samples.noise, samples.usable, sigma, threshold, where);
+  const snr = matchedFilter(residual, samples.noise, samples.usable, sigma, settings.threshold, where);
+  return seedsOf(snr, samples, residual, settings, known);
+}
+
+/** The same from a map at hand. */
+function seedsOf(
+  snr: Float64Array,
+  samples: FitSamples,
+  residual: Float64Array,
+  { width, threshold, absorption }: PassSettings,
+  known: readonly Seed[],
+): Seed[] {
   return findPeaks(snr, threshold, absorption)
     .filter((peak) => isFree(known, samples.x[peak.at], OWN_FWHM * FWHM_PER_SIGMA * width.sigmaAt(samples.x[peak.at])))
     .map((peak) => ({ ...peak, start: startOfPeak(samples, residual, peak, width) }));

@@ -37,21 +37,41 @@ export function toldWidth(spectrum: Spectrum, settings: MeasureSettings): { law:
  * The width of lines and how much it varies, from fits of strong isolated ones.
  *
  * @param first first idea of the width, and whence
+ * @param threshold S/N above which `snr` holds every place
+ * @returns the spread, and the S/N map made on the way where its width is near enough to serve the search, too
  */
 export function learnLineSpread(
   samples: FitSamples,
   first: { readonly law: WidthLaw; readonly from: LineSpread['from'] },
   told: ReturnType<typeof toldWidth>,
-): LineSpread {
+  threshold: number,
+): { readonly spread: LineSpread; readonly snr?: Float64Array } {
   let learned: ReturnType<typeof widthLawOf>;
   let law = first.law;
+  let snr: Float64Array = new Float64Array(0);
+  let mapped = law;
   for (let round = 0; round < 2; round++) {
     const before = law;
-    learned = widthLawOf(fitTellingLines(samples, law));
+    const sigma = sigmaInSamples(samples, widthPrior(law, 0));
+    snr = matchedFilter(samples.y, samples.noise, samples.usable, sigma, Math.min(threshold, ISOLATED_SNR));
+    mapped = law;
+    learned = widthLawOf(fitTellingLines(samples, law, snr, sigma));
     if (!learned) break;
     law = learned.law;
     if (Math.abs(Math.log(fwhmAt(before, law.at) / law.fwhmA)) < LOOK_AGAIN) break;
   }
+  const spread = spreadOf(first, told, law, learned);
+  const { x } = samples;
+  const isNear = (at: number) => Math.abs(Math.log(fwhmAt(mapped, at) / fwhmAt(spread.usual, at))) < LOOK_AGAIN;
+  return { spread, ...(isNear(x[0]) && isNear(x[x.length - 1]) ? { snr } : {}) };
+}
+
+function spreadOf(
+  first: { readonly from: LineSpread['from'] },
+  told: ReturnType<typeof toldWidth>,
+  law: WidthLaw,
+  learned: ReturnType<typeof widthLawOf>,
+): LineSpread {
   const spread = learned?.spread ?? FREE_SPREAD / 2;
   if (!told) return { usual: law, from: learned ? 'lines' : first.from, spread };
   // the instrument is known, the lines may be wider: what is usual for a line is what the lines show, never less than the instrument
@@ -59,10 +79,8 @@ export function learnLineSpread(
   return { usual: wider ? law : told.law, instrument: told.law, from: told.from, spread };
 }
 
-function fitTellingLines(samples: FitSamples, law: WidthLaw): TellingLine[] {
+function fitTellingLines(samples: FitSamples, law: WidthLaw, snr: Float64Array, sigma: Float64Array): TellingLine[] {
   const width = widthPrior(law, FREE_SPREAD);
-  const sigma = sigmaInSamples(samples, width);
-  const snr = matchedFilter(samples.y, samples.noise, samples.usable, sigma, ISOLATED_SNR);
   const telling = groupPeaks(findPeaks(snr, ISOLATED_SNR, false), (i) => FWHM_PER_SIGMA * sigma[i], samples.x.length)
     .filter((w) => w.peaks.length === 1 && w.peaks[0].snr >= TELLING_SNR)
     .sort((a, b) => b.peaks[0].snr - a.peaks[0].snr);

@@ -44,7 +44,7 @@ export function fitSpectrum(spectrum: Spectrum, settings: MeasureSettings, contr
   const prepared = prepare(spectrum, settings, remarks);
   const { samples } = prepared;
   control.progress?.('detecting', 0);
-  const spread = learnLineSpread(samples, prepared.width, prepared.told);
+  const { spread, snr } = learnLineSpread(samples, prepared.width, prepared.told, settings.thresholdSigma);
   const width = widthPrior(spread.usual, spread.spread);
   const spikes = [...prepared.spikes];
   const fits = fitPasses(
@@ -53,6 +53,7 @@ export function fitSpectrum(spectrum: Spectrum, settings: MeasureSettings, contr
       width,
       threshold: settings.thresholdSigma,
       absorption: settings.absorption,
+      ...(snr ? { snr } : {}),
       between: (share) => {
         control.signal?.throwIfAborted();
         control.progress?.('fitting', share);
