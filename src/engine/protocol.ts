@@ -55,7 +55,8 @@ export type WorkerAnswer =
       readonly remarks: readonly Remark[];
     }
   | { readonly say: 'started'; readonly id: number; readonly atomicVersion: string; readonly lineCount: number }
-  | { readonly say: 'opened'; readonly id: number; readonly kind: 'spectrum' | 'line-list' }
+  /** `sha256`: of the file's bytes, hex. */
+  | { readonly say: 'opened'; readonly id: number; readonly kind: 'spectrum' | 'line-list'; readonly sha256: string }
   | { readonly say: 'progress'; readonly id: number; readonly progress: Progress }
   /** `samples` is absent when the screen already holds those of `samplesStamp`. */
   | {

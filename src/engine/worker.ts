@@ -28,7 +28,9 @@ async function answer(request: WorkerRequest): Promise<void> {
     else if (!engine) throw new RangeError('the worker was asked before it was started');
     else if (request.ask === 'open') {
       const kind = await engine.open(blobSource(request.file, request.name), request.kind);
-      say({ say: 'opened', id: request.id, kind });
+      const { id } = request;
+      const sha256 = await engine.sha256({ progress: (progress) => say({ say: 'progress', id, progress }) });
+      say({ say: 'opened', id, kind, sha256 });
     } else if (request.ask === 'shapes') say({ say: 'shapes', id: request.id, shapes: engine.shapesAt(request.at) });
     else if (request.ask === 'limit') say({ say: 'limit', id: request.id, limit: engine.limitAt(request.at) });
     else if (request.ask === 'lines')

@@ -25,9 +25,10 @@ export {
   type SessionDocument,
   type Settings,
   type Source,
+  sameBytes,
   type Verdict,
 } from './document.ts';
 export { dropEdit, editFeature } from './editFeature.ts';
-export { readSession, writeSession } from './file.ts';
+export { readSession, readSessionRecord, sessionRecord, writeSession } from './file.ts';
 export { type History, make, redo, startHistory, undo } from './history.ts';
 export { matchVerdicts, type Place } from './matchVerdicts.ts';

@@ -1,6 +1,7 @@
 import { type DBSchema, type IDBPDatabase, openDB } from 'idb';
-import type { History, Source } from '../session/index.ts';
+import { EMPTY_DOCUMENT, type History, readSessionRecord, type Source, sessionRecord, startHistory } from '../session/index.ts';
 import type { KeptView } from './desk/fates.ts';
+import { words } from './words.ts';
 
 /** What is kept in the browser after every action. */
 export interface KeptDesk {
@@ -9,7 +10,7 @@ export interface KeptDesk {
 }
 
 interface Schema extends DBSchema {
-  desk: { key: string; value: KeptDesk };
+  desk: { key: string; value: { readonly session?: object; readonly history?: object; readonly view: KeptView } };
   /** Bytes of every source the history speaks of, by `sourceKey`. */
   files: { key: string; value: Blob };
 }
@@ -17,9 +18,10 @@ interface Schema extends DBSchema {
 const NAME = 'linewright';
 const VERSION = 1;
 const CURRENT = 'current';
+const SET_ASIDE = 'set aside';
 
-/** What tells one source from another. */
-export const sourceKey = (source: Source) => `${source.kind}|${source.name}|${source.size}`;
+/** What tells one source from another; those kept by the first release have no hash. */
+export const sourceKey = (source: Source) => `${source.kind}|${source.name}|${source.sha256 ?? source.size}`;
 
 let opened: Promise<IDBPDatabase<Schema>> | undefined;
 
@@ -33,12 +35,28 @@ function database(): Promise<IDBPDatabase<Schema>> {
   return opened;
 }
 
-export async function keepDesk(desk: KeptDesk): Promise<void> {
-  await (await database()).put('desk', desk, CURRENT);
+export async function keepDesk({ history, view }: KeptDesk): Promise<void> {
+  await (await database()).put('desk', { session: sessionRecord(history), view }, CURRENT);
 }
 
+/**
+ * What was kept, by this or an earlier release.
+ *
+ * @throws ProblemError when it does not hold together: it is set aside, so that the desk starts all the same
+ */
 export async function keptDesk(): Promise<KeptDesk | undefined> {
-  return (await database()).get('desk', CURRENT);
+  const db = await database();
+  const kept = await db.get('desk', CURRENT);
+  if (!kept) return undefined;
+  try {
+    // the first release kept the bare history
+    const record = kept.session ?? { ...sessionRecord(startHistory(EMPTY_DOCUMENT)), ...kept.history, version: 1 };
+    return { history: readSessionRecord(record, words.keptWork), view: kept.view };
+  } catch (error) {
+    await db.put('desk', kept, SET_ASIDE);
+    await db.delete('desk', CURRENT);
+    throw error;
+  }
 }
 
 export async function keepFile(source: Source, file: Blob): Promise<void> {

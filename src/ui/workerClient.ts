@@ -25,9 +25,12 @@ export class AnsweredProblem extends Error {
 
 export type Analysed = Omit<Extract<WorkerAnswer, { say: 'analysed' }>, 'say' | 'id'>;
 
+/** What was found out about a file that was opened. */
+export type Opened = Pick<Extract<WorkerAnswer, { say: 'opened' }>, 'kind' | 'sha256'>;
+
 /** The one thread that computes: started when first needed, ended to cancel. */
 export interface WorkerClient {
-  open(file: Blob, name: string, kind: 'spectrum' | 'line-list' | 'guess'): Promise<'spectrum' | 'line-list'>;
+  open(file: Blob, name: string, kind: 'spectrum' | 'line-list' | 'guess'): Promise<Opened>;
   analyse(settings: Settings, verdicts: readonly Verdict[]): Promise<Analysed>;
   /** Looks into the line list: ion, wavelength in air, words of the multiplet, in any order. */
   searchLines(query: string, own: OwnLines | undefined): Promise<LineSearchResult>;
@@ -104,7 +107,7 @@ export function workerClient(bundleUrl: string, progress: (p: Progress) => void,
     async open(file, name, kind) {
       const answer = await post(await running(), { ask: 'open', file, name, kind });
       if (answer.say !== 'opened') throw new TypeError(`open was answered by ${answer.say}`);
-      return answer.kind;
+      return { kind: answer.kind, sha256: answer.sha256 };
     },
     async analyse(settings, verdicts) {
       const answer = await post(await running(), { ask: 'analyse', settings, verdicts, samplesKnown: samples.stamp });

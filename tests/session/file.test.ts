@@ -8,6 +8,9 @@ import {
   make,
   openSource,
   readSession,
+  readSessionRecord,
+  sameBytes,
+  sessionRecord,
   startHistory,
   undo,
   writeSession,
@@ -30,10 +33,21 @@ describe('the session file', () => {
     expect(readSession(writeSession(history), 'a.json')).toEqual(history);
   });
 
+  test('holds the hash of the source', () => {
+    const source = { kind: 'spectrum', name: 'lantern.csv', size: 1000, sha256: 'ab'.repeat(32) } as const;
+    const history = make(startHistory(EMPTY_DOCUMENT), openSource(EMPTY_DOCUMENT, source));
+    expect(readSession(writeSession(history), 'a.json').document.source).toEqual(source);
+  });
+
+  test('is also kept as a record, checked in the same way', () => {
+    expect(readSessionRecord(sessionRecord(worked()), 'browser')).toEqual(worked());
+    expect(() => readSessionRecord({ ...sessionRecord(worked()), document: {} }, 'the browser')).toThrow(/the browser/);
+  });
+
   const broken: [string, string, string][] = [
     ['no JSON', 'wavelength,flux', 'session-not-json'],
     ['another JSON file', '{"a":1}', 'session-no-magic'],
-    ['another version', writeSession(worked()).replace('"version": 1', '"version": 7'), 'session-version'],
+    ['another version', writeSession(worked()).replace('"version": 2', '"version": 7'), 'session-version'],
     ['a cut document', writeSession(worked()).replace('"verdicts"', '"verdict"'), 'session-broken'],
   ];
   test.each(broken)('%s is refused in words that name the file', (_, text, code) => {
@@ -47,7 +61,22 @@ describe('the session file', () => {
     }
   });
 
+  test('of version 1, which knew no hashes, is opened as it was', () => {
+    const old = writeSession(worked()).replace('"version": 2', '"version": 1');
+    expect(readSession(old, 'old.json')).toEqual(worked());
+  });
+
   test('an unknown version is refused in words that say both versions', () => {
-    expect(() => readSession(writeSession(worked()).replace('"version": 1', '"version": 7'), 'x')).toThrow(/version 7.*version 1/);
+    expect(() => readSession(writeSession(worked()).replace('"version": 2', '"version": 7'), 'x')).toThrow(/version 7.*version 2/);
+  });
+});
+
+describe('sources', () => {
+  test('are the same bytes by their hashes, and by their size where one has none', () => {
+    const a = { size: 10, sha256: 'aa' };
+    expect(sameBytes(a, { size: 10, sha256: 'bb' })).toBe(false);
+    expect(sameBytes(a, { size: 11, sha256: 'aa' })).toBe(true);
+    expect(sameBytes(a, { size: 10 })).toBe(true);
+    expect(sameBytes(a, { size: 11 })).toBe(false);
   });
 });

@@ -1,3 +1,4 @@
+import { ProblemError, wordProblem } from '../../problems/index.ts';
 import { keepDesk, keptDesk, pruneFiles } from '../storage.ts';
 import { words } from '../words.ts';
 import { type DeskFields, desk, raiseAlert, setDesk, useDesk } from './deskStore.ts';
@@ -9,7 +10,8 @@ let dirty = false;
 
 /** Brings back what was kept, then keeps every change of what is to be kept. */
 export async function startKeeping(): Promise<void> {
-  const kept = await keptDesk().catch(() => undefined);
+  void watchTabs();
+  const kept = await keptDesk().catch(sayBroken);
   if (kept?.history.document.source) {
     setDesk({ ...kept.view, history: kept.history });
     await pruneFiles(kept.history).catch(() => undefined);
@@ -28,6 +30,25 @@ export async function startKeeping(): Promise<void> {
     useDesk.subscribe(keepIfChanged);
     setDesk({ stage: 'empty' });
   }
+}
+
+/** A browser that forbids its storage says so at the first writing; what is broken is said at once. */
+function sayBroken(error: unknown): undefined {
+  if (error instanceof ProblemError) raiseAlert(`${wordProblem(error.problem)} ${words.keptAside}`);
+}
+
+/** How long another tab may take to close, as it does while a page is loaded anew. */
+const CLOSING_MS = 2000;
+
+/** Two tabs would write over each other: the second one says so. */
+async function watchTabs(): Promise<void> {
+  if (!navigator.locks) return;
+  const late = setTimeout(() => raiseAlert(words.twoTabs), CLOSING_MS);
+  // held as long as the page lives
+  await navigator.locks.request('linewright desk', () => {
+    clearTimeout(late);
+    return new Promise(() => {});
+  });
 }
 
 function keepIfChanged(after: DeskFields, before: DeskFields): void {

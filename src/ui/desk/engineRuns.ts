@@ -1,5 +1,5 @@
 import { wordProblem } from '../../problems/index.ts';
-import { EMPTY_DOCUMENT, make, openSource, type Source, startHistory } from '../../session/index.ts';
+import { make, openSource, type Source, sameBytes } from '../../session/index.ts';
 import { keepFile, keptFile, sourceKey } from '../storage.ts';
 import { words } from '../words.ts';
 import { type Analysed, AnsweredProblem, Cancelled, type WorkerClient, workerClient } from '../workerClient.ts';
@@ -62,11 +62,12 @@ export function openFile(file: Blob, name: string): Promise<void> {
 async function openNow(file: Blob, name: string): Promise<void> {
   const { history, stage } = desk();
   const awaited = stage === 'awaiting' ? history.document.source : undefined;
-  const isAwaited = awaited !== undefined && (awaited.name === name || awaited.size === file.size);
-  const kind = await client().open(file, name, isAwaited ? awaited.kind : 'guess');
-  const source: Source = isAwaited ? awaited : { kind, name, size: file.size };
-  const base = () => (stage === 'awaiting' && !isAwaited ? startHistory(EMPTY_DOCUMENT) : desk().history);
-  const after = () => (isAwaited ? base() : make(base(), openSource(base().document, source)));
+  const found = await client().open(file, name, awaited?.name === name ? awaited.kind : 'guess');
+  const opened: Source = { ...found, name, size: file.size };
+  const isAwaited = awaited !== undefined && awaited.kind === found.kind && sameBytes(awaited, opened);
+  const source = isAwaited ? awaited : opened;
+  // a spectrum that is still waited for goes onto the shelf with all that was decided on it
+  const after = () => (isAwaited ? desk().history : make(desk().history, openSource(desk().history.document, source)));
   const { settings, verdicts } = after().document;
   const answer = await client().analyse(settings, verdicts);
   const key = sourceKey(source);
@@ -74,6 +75,7 @@ async function openNow(file: Blob, name: string): Promise<void> {
   files.set(key, file);
   await keepFile(source, file).catch(() => raiseAlert(words.status.storageFailed));
   setDesk({ history: after(), status: `opened ${name}` });
+  if (awaited && !isAwaited) raiseAlert(words.notAwaited(name, awaited.name));
   arrive(answer, true);
   offerGuide();
 }
