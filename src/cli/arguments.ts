@@ -1,5 +1,6 @@
 import { parseArgs } from 'node:util';
 import type { ObjectKind } from '../identify/index.ts';
+import type { ExtinctionCurve } from '../plasma/index.ts';
 import { nearestWord } from '../problems/index.ts';
 import { TABLE_FORMATS, type TableFormatName } from '../report/index.ts';
 import type { Settings } from '../session/index.ts';
@@ -9,6 +10,8 @@ import { redshiftFromVelocity } from '../units/index.ts';
 export class UsageError extends Error {}
 
 const KINDS: readonly ObjectKind[] = ['unknown', 'hii-region', 'planetary-nebula', 'nova-shell', 'shocked-gas', 'narrow-line-galaxy'];
+
+const CURVES: readonly ExtinctionCurve[] = ['ccm89-odonnell94', 'ccm89', 'fitzpatrick99'];
 
 const OPTIONS = {
   out: { type: 'string' },
@@ -23,6 +26,9 @@ const OPTIONS = {
   limit: { type: 'string' },
   te: { type: 'string' },
   ne: { type: 'string' },
+  curve: { type: 'string' },
+  rv: { type: 'string' },
+  chbeta: { type: 'string' },
   hdu: { type: 'string' },
   row: { type: 'string' },
   order: { type: 'string' },
@@ -80,6 +86,11 @@ export function parseArguments(args: readonly string[]): Arguments {
         instrumentFwhmA: positive('--width', values.width),
       }),
       naming: dropAbsent({ z, kind, te, ne }),
+      gas: dropAbsent({
+        curve: values.curve === undefined ? undefined : choice('--curve', values.curve, CURVES),
+        rV: positive('--rv', values.rv),
+        cHbeta: number('--chbeta', values.chbeta),
+      }),
     },
   };
 }

@@ -1,7 +1,7 @@
 #!/usr/bin/env node
 import { limits } from './limits.ts';
 import { readCommand } from './read.ts';
-import { nameCommand, tableCommand } from './table.ts';
+import { gasCommand, nameCommand, tableCommand } from './table.ts';
 import { USAGE } from './usage.ts';
 
 // The terminal: the engine of the desk for batches and scripts. Results on stdout or in --out, everything else on stderr.
@@ -11,6 +11,7 @@ const COMMANDS: Readonly<Record<string, (args: readonly string[]) => Promise<num
   name: nameCommand,
   read: readCommand,
   limits,
+  gas: gasCommand,
 };
 
 // a reader that has seen enough (`| head`) closes the pipe: that is no error

@@ -2,22 +2,27 @@ import { mkdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { basename, extname, join } from 'node:path';
 import { createEngine, type Engine, type SourceKind } from '../engine/index.ts';
 import { ProblemError, wordProblem } from '../problems/index.ts';
-import { TABLE_FORMATS, withoutArtefacts } from '../report/index.ts';
+import { gasCsv, TABLE_FORMATS, withoutArtefacts } from '../report/index.ts';
 import type { Settings } from '../session/index.ts';
 import { type Arguments, parseArguments, UsageError } from './arguments.ts';
 import { openAtomicData, withFile } from './files.ts';
 
-export const tableCommand = (args: readonly string[]) => tables(args, 'spectrum');
-export const nameCommand = (args: readonly string[]) => tables(args, 'line-list');
+/** What is written of each file. */
+type Product = 'table' | 'gas';
+
+export const tableCommand = (args: readonly string[]) => tables(args, 'spectrum', 'table');
+export const nameCommand = (args: readonly string[]) => tables(args, 'line-list', 'table');
+export const gasCommand = (args: readonly string[]) => tables(args, 'guess', 'gas');
 
 /** Exit code: 0 all done, 1 some file could not be read, 2 the command line could not be understood. */
-async function tables(args: readonly string[], kind: SourceKind): Promise<number> {
+async function tables(args: readonly string[], kind: SourceKind | 'guess', product: Product): Promise<number> {
   let options: Arguments;
   try {
     options = parseArguments(args);
     if (options.words.length === 0) throw new UsageError('no file was named');
     if (options.words.length > 1 && options.out === undefined) throw new UsageError('several files need --out DIR');
-    refuseOverwriting(options);
+    if (product === 'gas' && options.format !== 'csv') throw new UsageError('gas is written as csv only');
+    refuseOverwriting(options, product);
   } catch (error) {
     if (!(error instanceof UsageError)) throw error;
     process.stderr.write(`linewright: ${error.message}\n`);
@@ -28,7 +33,7 @@ async function tables(args: readonly string[], kind: SourceKind): Promise<number
   const settings = withOwnLines(options);
   if (!settings) return 1;
   let failures = 0;
-  for (const path of options.words) failures += (await oneTable(engine, path, kind, { ...options, settings })) ? 0 : 1;
+  for (const path of options.words) failures += (await oneFile(engine, path, kind, product, { ...options, settings })) ? 0 : 1;
   return failures > 0 ? 1 : 0;
 }
 
@@ -44,10 +49,10 @@ function withOwnLines({ settings, lines }: Arguments): Settings | undefined {
 }
 
 /** Two inputs of one name would write one file. @throws UsageError */
-function refuseOverwriting(options: Arguments): void {
+function refuseOverwriting(options: Arguments, product: Product): void {
   const seen = new Map<string, string>();
   for (const path of options.words) {
-    const target = outputName(path, options);
+    const target = outputName(path, options, product);
     const earlier = seen.get(target);
     if (earlier !== undefined)
       throw new UsageError(`${earlier} and ${path} would both be written to ${target}: give them different names or run them apart`);
@@ -55,20 +60,20 @@ function refuseOverwriting(options: Arguments): void {
   }
 }
 
-const outputName = (path: string, options: Arguments) => `${basename(path, extname(path))}.${TABLE_FORMATS[options.format].ending}`;
+const outputName = (path: string, options: Arguments, product: Product) =>
+  `${basename(path, extname(path))}${product === 'gas' ? '-gas' : ''}.${TABLE_FORMATS[options.format].ending}`;
 
 /** Whether the file could be read. */
-async function oneTable(engine: Engine, path: string, kind: SourceKind, options: Arguments): Promise<boolean> {
+async function oneFile(engine: Engine, path: string, kind: SourceKind | 'guess', product: Product, options: Arguments): Promise<boolean> {
   const tell = progressOnTerminal(basename(path));
   try {
     await withFile(path, async (source) => {
       await engine.open(source, kind);
       const analysis = await engine.analyse(options.settings, [], { progress: ({ stage, share }) => tell(stage, share) });
       tell();
-      const format = TABLE_FORMATS[options.format];
-      const text = format.write(withoutArtefacts(analysis.table));
+      const text = product === 'gas' ? gasCsv(analysis.gas) : TABLE_FORMATS[options.format].write(withoutArtefacts(analysis.table));
       if (options.out === undefined) process.stdout.write(text);
-      else writeFileSync(join(options.out, outputName(path, options)), text);
+      else writeFileSync(join(options.out, outputName(path, options, product)), text);
       const named = analysis.features.filter((f) => f.name).length;
       process.stderr.write(
         `${basename(path)}: ${analysis.features.length} features, ${named} named, z = ${analysis.z.toFixed(6)} +/- ${analysis.zErr.toFixed(6)}\n`,

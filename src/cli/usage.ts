@@ -2,6 +2,7 @@ export const USAGE = `linewright: names the emission lines of thin, glowing gas
 
   linewright table SPECTRUM... [options]   measures and names; one row a feature
   linewright name LINES.csv... [options]   names lines measured elsewhere (columns wavelength, flux; optional wavelength_err, flux_err, fwhm)
+  linewright gas FILE... [options]         what the named lines say: reddening, temperature, density, abundances, density ladder, kinematics
   linewright read SPECTRUM [--hdu N] [--row K] [--order K]
                                            the samples as CSV on stdout, how they were read as one JSON line on stderr
   linewright limits ION... [--te K] [--ne CM3]
@@ -16,6 +17,8 @@ export const USAGE = `linewright: names the emission lines of thin, glowing gas
   --kind KIND            unknown (default), hii-region, planetary-nebula, nova-shell, shocked-gas, narrow-line-galaxy
   --threshold SIGMA      a feature is kept from this signal to noise on (default 4.5)
   --te K, --ne CM3       electron temperature and density at which critical densities and companions are stated
+  --curve LAW            ccm89-odonnell94 (default), ccm89 or fitzpatrick99: the reddening law; --rv R its A(V)/E(B-V) (default 3.1)
+  --chbeta C             logarithmic extinction at H beta, where it is not to be taken from the hydrogen lines
   --hdu N, --row K, --order K   which spectrum of the file
   --lines OWN.csv        your own lines beside the bundled ones (columns ion, wavelength_air or wavelength_vac ...)
   --limit W,W            three-sigma limits of unseen lines at these wavelengths (Angstrom), on stderr

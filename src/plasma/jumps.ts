@@ -51,6 +51,9 @@ const JUMPS: readonly Jump[] = [
 ];
 const LEAST_SAMPLES = 8;
 const LEAST_SIGMA = 5;
+/** Outside these no ionised gas cools in equilibrium: the step has another cause. Common practice, no source. */
+const COOLEST_TE = 1_000;
+const HOTTEST_TE = 40_000;
 
 /** Te from the jumps that stand out of the continuum; none where a window is outside the spectrum or the jump is below five sigma. */
 export function jumpResults(
@@ -81,7 +84,10 @@ export function jumpResults(
       {
         label: jump.label,
         ratio: { value, err: value * relative },
-        result: { ended: 'value', value: te, low: te / (1 + spread), high: te * (1 + spread) },
+        result:
+          te > COOLEST_TE && te < HOTTEST_TE
+            ? { ended: 'value', value: te, low: te / (1 + spread), high: te * (1 + spread) }
+            : { ended: 'none', reason: `the step would mean ${Math.round(te)} K: it is not that of ionised hydrogen alone` },
         assumption: `Drop between ${jump.blue.join('–')} and ${jump.red.join('–')} Å over H ${jump.line[1]} (${jump.source}); everything else in the continuum is smooth there.`,
       },
     ];
