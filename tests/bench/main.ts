@@ -1,4 +1,5 @@
 import { atomicBench } from './atomicBench.ts';
+import { blockingBench } from './blockingBench.ts';
 import { deskBench } from './deskBench.ts';
 import { identifyBench } from './identifyBench.ts';
 import { namingBench } from './namingBench.ts';
@@ -15,6 +16,7 @@ for (const [title, bench] of [
   ['naming', namingBench],
   ['naming a simulated nebula', identifyBench],
   ['moving about the spectrum', deskBench],
+  ['keeping the page alive while the worker computes', blockingBench],
   ['measuring, beside a script of numpy and scipy', seededBench],
 ] as const) {
   process.stdout.write(`\n${title}\n`);

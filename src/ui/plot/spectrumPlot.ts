@@ -24,6 +24,8 @@ interface Library extends Pick<typeof Plotly, 'react' | 'purge'> {
   relayout(element: HTMLElement, change: object): Promise<unknown>;
 }
 
+const CONFIG = { staticPlot: true, displayModeBar: false, showSendToCloud: false, plotlyServerURL: '' } as const;
+
 let library: Promise<Library> | undefined;
 
 /** The drawing library, loaded when the first spectrum is shown. */
@@ -51,26 +53,35 @@ export async function createSpectrumPlot(
   let scene: SpectrumScene | undefined;
   let view: Range = [0, 1];
   let chosen: number | undefined;
+  /** The view the axes are set to. */
+  let placed: Range | undefined;
   let window: DrawnWindow | undefined;
   let frame = 0;
   let rest: ReturnType<typeof setTimeout> | undefined;
 
+  // the library sets itself up at the first drawing: apart from the first curves, so that neither keeps the page waiting long
+  await lib.react(
+    element,
+    [],
+    { width: element.clientWidth, height: element.clientHeight, xaxis: { visible: false }, yaxis: { visible: false } },
+    CONFIG,
+  );
+  await new Promise((resolve) => requestAnimationFrame(resolve));
+
   const rebuild = (now: SpectrumScene) => {
     window = drawWindow(now, view);
-    void lib.react(element, window.data, layoutFor(now, axesOf(now, window, view)), {
-      staticPlot: true,
-      displayModeBar: false,
-      showSendToCloud: false,
-      plotlyServerURL: '',
-    });
+    void lib.react(element, window.data, layoutFor(now, axesOf(now, window, view)), CONFIG);
   };
 
   const draw = () => {
     frame = 0;
     if (!scene) return;
     const began = performance.now();
-    if (!window || !covers(window, view)) rebuild(scene);
-    else {
+    if (!window || !covers(window, view)) {
+      rebuild(scene);
+      placed = view;
+    } else if (placed?.[0] !== view[0] || placed[1] !== view[1]) {
+      placed = view;
       void lib.relayout(element, moveTo(view));
       clearTimeout(rest);
       rest = setTimeout(refresh, REST_MS);
@@ -90,9 +101,11 @@ export async function createSpectrumPlot(
   return {
     show(next, at, number) {
       chosen = number;
+      const same = scene !== undefined && hasSameCurves(scene, next);
       scene = next;
       view = at;
-      refresh();
+      if (same) schedule();
+      else refresh();
     },
     move(at, number) {
       chosen = number;
@@ -106,6 +119,23 @@ export async function createSpectrumPlot(
       lib.purge(element);
     },
   };
+}
+
+/** Whether only marks and shadings differ, which are painted anew in any case: verdicts and names change more often than curves, and cost a fifth. */
+function hasSameCurves(a: SpectrumScene, b: SpectrumScene): boolean {
+  return (
+    a.samples !== undefined &&
+    a.samples === b.samples &&
+    a.fluxUnit === b.fluxUnit &&
+    a.axis.frame === b.axis.frame &&
+    a.axis.medium === b.axis.medium &&
+    a.axis.shownMedium === b.axis.shownMedium &&
+    (a.axis.frame === 'observed' || a.axis.z === b.axis.z) &&
+    a.scale.kind === b.scale.kind &&
+    a.gain === b.gain &&
+    a.ink.isDark === b.ink.isDark &&
+    a.layout === b.layout
+  );
 }
 
 const covers = ({ window, viewWidth }: DrawnWindow, view: Range) =>
