@@ -9,7 +9,7 @@ export const USAGE = `linewright: names the emission lines of thin, glowing gas
                                            lifetimes, critical densities and survival of an ion's thin-gas lines
 
   --out DIR              one file a spectrum in DIR instead of stdout
-  --format FORMAT        csv (default), latex, mrt, votable, ecsv or json
+  --format FORMAT        csv (default), latex, deluxetable, mrt, votable, ecsv, fits or json
   --z Z | --velocity KMS redshift, or velocity in the optical convention; without either it is found from the lines
   --medium air|vacuum    medium of the wavelengths, where the file does not say
   --resolution R         lambda / FWHM of the instrument

@@ -1,3 +1,4 @@
+import { lineFluxUnit, type UnitStyle } from './fluxUnit.ts';
 import type { LineRow } from './lineTable.ts';
 
 /** One column of the full table: what it is called in files, what it means, its unit, and the text of a cell (blank when unknown). */
@@ -48,9 +49,8 @@ const text = (key: string, meaning: string, ucd: string, cell: (row: LineRow) =>
 });
 
 /** Unit of a column in this table: flux columns carry the spectrum's flux unit times Angstrom, where it is known. */
-export function unitOf(column: Column, fluxUnit: string): string {
-  if (column.unit !== 'flux') return column.unit;
-  return fluxUnit === '' ? '' : `${fluxUnit} Angstrom`;
+export function unitOf(column: Column, fluxUnit: string, style: UnitStyle): string {
+  return column.unit === 'flux' ? lineFluxUnit(fluxUnit, style) : column.unit;
 }
 
 /** All columns of the machine-readable table, in their order. */

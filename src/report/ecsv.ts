@@ -21,7 +21,7 @@ export function ecsvTable(table: LineTable): string {
 }
 
 function columnYaml(column: Column, fluxUnit: string): string {
-  const unit = unitOf(column, fluxUnit);
+  const unit = unitOf(column, fluxUnit, 'fits');
   return `{name: ${column.key}, datatype: ${DATATYPE[column.kind]}${unit ? `, unit: ${quoted(unit)}` : ''}, description: ${quoted(column.meaning)}}`;
 }
 

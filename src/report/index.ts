@@ -1,7 +1,20 @@
 // The finished line table and its writers; one file a format. A writer sees the table and nothing else.
-// Deliberately not here: any measuring, naming or physics. Standards: RFC 4180 (CSV).
+// Deliberately not here: any measuring, naming or physics. Standards: RFC 4180 (CSV), CDS 2.0 (MRT), VOTable 1.4, ECSV 1.0, FITS 4.0.
 export { COLUMNS, type Column, decimals, significant } from './columns.ts';
+export {
+  DEFAULT_DESIGN,
+  type FluxScale,
+  type PaperColumnKey,
+  PRESETS,
+  type PresetName,
+  type RowChoice,
+  type RowOrder,
+  type TableDesign,
+} from './design.ts';
 export { TABLE_FORMATS, type TableFormat, type TableFormatName } from './formats.ts';
 export { gasCsv } from './gasCsv.ts';
-export { latexText, withError } from './latex.ts';
+export { type Inline, type InlineText, plainText } from './inline.ts';
+export { latexText } from './latex.ts';
 export { acceptedRows, type LineRow, type LineTable, withoutArtefacts } from './lineTable.ts';
+export { PAPER_COLUMNS } from './paperColumns.ts';
+export { chosenRows, type PaperTable, paperTable } from './paperTable.ts';

@@ -31,7 +31,7 @@ export function mrtTable(table: LineTable): string {
   const description: string[] = [];
   for (const { column, format, width, hasBlank } of laid) {
     const bytes = width === 1 ? `${byte}`.padStart(9) : `${String(byte).padStart(4)}-${String(byte + width - 1).padStart(4)}`;
-    const unit = (unitOf(column, table.fluxUnit) || '---').replaceAll(' ', '.');
+    const unit = (unitOf(column, table.fluxUnit, 'cds') || '---').replaceAll(' ', '.');
     const words = `${hasBlank ? '? ' : ''}${plain(column.meaning)}`;
     description.push(`${bytes} ${format.padEnd(7)} ${unit.padEnd(12)} ${column.key.padEnd(22)} ${words}`.trimEnd());
     byte += width + 1;

@@ -39,7 +39,7 @@ export function votableTable(table: LineTable): string {
 }
 
 function fieldElement(column: Column, fluxUnit: string): string {
-  const unit = unitOf(column, fluxUnit);
+  const unit = unitOf(column, fluxUnit, 'vounits');
   const words = [`name="${column.key}"`, DATATYPE[column.kind], column.ucd && `ucd="${column.ucd}"`, unit && `unit="${xml(unit)}"`].filter(
     Boolean,
   );

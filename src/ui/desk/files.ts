@@ -79,11 +79,12 @@ async function tableToExport() {
   return undefined;
 }
 
-const stem = () => (desk().history.document.source?.name ?? 'lines').replace(/\.[^.]+$/, '');
+export const stem = () => (desk().history.document.source?.name ?? 'lines').replace(/\.[^.]+$/, '');
 
-function download(name: string, text: string, mediaType: string): void {
+/** Hands a file to the user. */
+export function download(name: string, content: string | Uint8Array<ArrayBuffer> | Blob, mediaType: string): void {
   const link = document.createElement('a');
-  link.href = URL.createObjectURL(new Blob([text], { type: mediaType }));
+  link.href = URL.createObjectURL(new Blob([content], { type: mediaType }));
   link.download = name;
   link.click();
   setTimeout(() => URL.revokeObjectURL(link.href), 10_000);
