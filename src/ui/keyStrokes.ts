@@ -42,6 +42,10 @@ function isTextInput(target: HTMLElement): boolean {
   return target instanceof HTMLInputElement && !['checkbox', 'radio', 'button', 'range'].includes(target.type);
 }
 
-/** A control that Enter, Space or arrows belong to. */
-export const isControl = (target: EventTarget | null): boolean =>
-  target instanceof HTMLElement && target.closest('button, a[href], summary, input, [role="tab"]') !== null;
+/** Whether a key belongs to the control that has the focus: Enter to all that can be pressed, arrows to what is walked with them. */
+export function belongsTo(target: EventTarget | null, key: string): boolean {
+  if (!(target instanceof HTMLElement)) return false;
+  if (key === 'Enter') return target.closest('button, a[href], summary, input, [role="tab"]') !== null;
+  if (key === 'ArrowLeft' || key === 'ArrowRight') return target.closest('input:not([type="checkbox"]), [role="tab"]') !== null;
+  return key.startsWith('Arrow') && target.closest('input:not([type="checkbox"])') !== null;
+}

@@ -1,9 +1,7 @@
 import { useEffect } from 'react';
 import { COMMANDS } from './commands.ts';
 import { desk } from './desk/deskStore.ts';
-import { isControl, strokeName, takesText } from './keyStrokes.ts';
-
-const OWN_KEYS = /^(Enter|Arrow)/;
+import { belongsTo, strokeName, takesText } from './keyStrokes.ts';
 
 /** Leaves a field as it is: a search field would be emptied. */
 function leave(event: KeyboardEvent): void {
@@ -23,8 +21,7 @@ export function useKeys(): void {
         return;
       }
       if (single && !desk().singleKeys && event.key.length === 1) return;
-      if (OWN_KEYS.test(event.key) && isControl(event.target) && !(event.target instanceof HTMLElement && event.target.dataset.walks))
-        return;
+      if (belongsTo(event.target, event.key)) return;
       const command = COMMANDS.find(({ keys }) => keys.includes(stroke));
       if (!command?.canRun()) return;
       event.preventDefault();

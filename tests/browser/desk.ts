@@ -45,6 +45,12 @@ export class Desk {
     await filter.blur();
   }
 
+  /** Leaves a picture to be looked at. */
+  async picture(name: string): Promise<void> {
+    await this.page.waitForTimeout(250);
+    await this.page.screenshot({ path: `test-results/screens/${name}.png` });
+  }
+
   row(words: string) {
     return this.page.locator('.body-row', { hasText: words });
   }

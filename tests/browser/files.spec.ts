@@ -16,6 +16,7 @@ test('a file that cannot be read is refused in words and takes nothing away; a g
   await expect(page.locator('.facts')).toContainText('1 accepted');
   await desk.openText('notes.txt', 'dear diary\nthere are no numbers in here\n');
   await expect(page.locator('.strip-problem')).toContainText('notes.txt');
+  await desk.picture('files-refused');
   await expect(page.locator('.facts')).toContainText('lantern-nebula.csv');
   await expect(page.locator('.facts')).toContainText('1 accepted');
   await page.getByRole('button', { name: 'Dismiss' }).click();
@@ -23,6 +24,8 @@ test('a file that cannot be read is refused in words and takes nothing away; a g
 
   await desk.openText('second.csv', UNSTATED);
   await expect(page.locator('.facts')).toContainText('second.csv', { timeout: 30_000 });
+  await desk.isIdle();
+  await desk.picture('files-good-after-refused');
   await expect(page.locator('.facts')).toContainText('0 accepted');
   await page.keyboard.press('ControlOrMeta+z');
   await expect(page.locator('.facts')).toContainText('lantern-nebula.csv', { timeout: 30_000 });
@@ -41,10 +44,12 @@ test('a spectrum dropped on the window is opened, and air or vacuum is asked whe
   }, UNSTATED);
   await page.dispatchEvent('.app', 'dragover', { dataTransfer: transfer });
   await expect(page.getByText('Let go to open the file')).toBeVisible();
+  await desk.picture('files-dropping');
   await page.dispatchEvent('.app', 'drop', { dataTransfer: transfer });
   await desk.isReady();
   const question = page.getByRole('region', { name: 'Air or vacuum wavelengths?' });
   await expect(question).toContainText('Taken as');
+  await desk.picture('files-air-or-vacuum');
   await question.getByRole('button', { name: 'They are air' }).click();
   await expect(question).toHaveCount(0);
   await desk.isIdle();
@@ -131,6 +136,7 @@ test('several files opened at once form a list, and each comes back as it was le
   await expect(page.locator('.facts')).toContainText('third.csv', { timeout: 30_000 });
   await desk.isIdle();
   await expect(page.locator('.facts')).toContainText('+ 2 more');
+  await desk.picture('files-third');
   await page.getByRole('tab', { name: 'Reading' }).click();
   await page.getByRole('button', { name: 'Go to lantern-nebula.csv' }).click();
   await expect(page.locator('.facts')).toContainText('1 accepted', { timeout: 30_000 });

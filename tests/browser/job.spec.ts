@@ -25,6 +25,7 @@ test('the sample is measured and named, accepted by peak, row and key, undone, k
     .getByRole('button', { name: /^Accept/ })
     .click();
   await expect(desk.status()).toHaveText(/accepted \[O III\] 5006\.84/);
+  await desk.picture('job-accepted-by-click');
 
   // by its row
   await page.getByRole('searchbox').fill('4958');
@@ -43,8 +44,10 @@ test('the sample is measured and named, accepted by peak, row and key, undone, k
   await expect(desk.status()).toHaveText(/accepted H I 6562/);
   await expect(page.locator('.facts')).toContainText('3 accepted');
 
+  await desk.picture('job-accepted-by-key');
   await page.keyboard.press('ControlOrMeta+z');
   await expect(page.locator('.facts')).toContainText('2 accepted');
+  await desk.picture('job-undone');
   await page.keyboard.press('ControlOrMeta+Shift+z');
   await expect(page.locator('.facts')).toContainText('3 accepted');
   await desk.isIdle();
@@ -52,6 +55,7 @@ test('the sample is measured and named, accepted by peak, row and key, undone, k
   await page.reload();
   await desk.isReady();
   await expect(page.locator('.facts')).toContainText('3 accepted');
+  await desk.picture('job-reloaded');
   await page.getByRole('button', { name: 'Undo' }).first().click();
   await expect(page.locator('.facts')).toContainText('2 accepted');
   await page.getByRole('button', { name: 'Redo' }).first().click();
@@ -67,8 +71,34 @@ test('the sample is measured and named, accepted by peak, row and key, undone, k
   expect(rows[1].thin_gas).toBe('true');
   expect(Number(rows[1].n_crit)).toBeGreaterThan(1e5);
 
-  const latex = await desk.save(/Save as LaTeX/);
+  const latex = await desk.save(/Save as LaTeX \(longtable/);
   expect(latex.text).toContain('\\begin{longtable}');
+  expect(desk.faults).toEqual([]);
+});
+
+test('a refit keeps every verdict on its feature', async ({ page }) => {
+  const desk = new Desk(page);
+  await desk.openSample();
+  for (const name of ['[O III] 5006.84', '[N II] 6583.45', 'He I 7065']) {
+    await desk.chooseRow(name);
+    await page.keyboard.press('Enter');
+    await expect(desk.status()).toHaveText(/accepted/);
+  }
+  await expect(page.locator('.facts')).toContainText('3 accepted');
+  const count = page.locator('.fact-count b').first();
+  const before = Number(await count.textContent());
+  await page.keyboard.press('s');
+  await page.getByLabel('Detection threshold').fill('25');
+  await page.getByLabel('Detection threshold').press('Enter');
+  await expect(async () => expect(Number(await count.textContent())).toBeLessThan(before)).toPass({ timeout: 30_000 });
+  await desk.isIdle();
+  await expect(page.locator('.facts')).toContainText('3 accepted');
+  for (const name of ['[O III] 5006.84', '[N II] 6583.45', 'He I 7065']) {
+    await page.getByRole('searchbox').fill(name);
+    await expect(page.locator('.body-row').first()).toContainText('accepted');
+  }
+  await page.getByRole('searchbox').fill('');
+  await desk.picture('job-refitted');
   expect(desk.faults).toEqual([]);
 });
 
