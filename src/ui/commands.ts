@@ -164,6 +164,7 @@ export const COMMANDS: readonly Command[] = [
     run: () => void copyRows(rowsInHand()),
   },
   show('case', 'd'),
+  show('gas', 'g'),
   show('settings', 's'),
   show('reading', 'i'),
   show('list', 'l'),

@@ -8,7 +8,8 @@ import type { RowFilter } from '../table/rowFilter.ts';
 import type { Sorting } from '../table/sortRows.ts';
 import type { DeskRow } from './deskRows.ts';
 
-export type Tab = 'case' | 'settings' | 'reading' | 'list' | 'history' | 'keys';
+export type Tab = 'case' | 'gas' | 'settings' | 'reading' | 'list' | 'history' | 'keys';
+export type GasView = 'ladder' | 'reddening' | 'plasma' | 'motion';
 export type Theme = 'system' | 'light' | 'dark';
 export type ShownAnalysis = Omit<Analysis, 'samples'>;
 
@@ -57,6 +58,9 @@ export interface DeskFields {
   /** What the wavelength axis shows; absent = as in the file. */
   readonly axisMedium?: AxisMedium;
   readonly tab: Tab;
+  readonly gasView: GasView;
+  /** Density tried on the ladder, log10 cm^-3; absent = none. */
+  readonly ladderLogNe?: number;
   /** A place on the spectrum that something is to be done at by hand, Angstrom of the file. */
   readonly handPlace?: number;
   readonly filter: RowFilter;
@@ -88,6 +92,7 @@ const START: DeskFields = {
   gain: 1,
   frame: 'observed',
   tab: 'case',
+  gasView: 'ladder',
   filter: {},
   sorting: { column: 'wavelength', direction: 'ascending' },
   theme: 'system',

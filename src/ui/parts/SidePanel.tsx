@@ -1,5 +1,6 @@
 import type { KeyboardEvent } from 'react';
 import { setDesk, type Tab, useDesk } from '../desk/deskStore.ts';
+import { GasPanel } from '../gas/GasPanel.tsx';
 import { words } from '../words.ts';
 import { CaseView } from './CaseView.tsx';
 import { HistoryPanel } from './HistoryPanel.tsx';
@@ -8,8 +9,16 @@ import { ListPanel } from './ListPanel.tsx';
 import { ReadingPanel } from './ReadingPanel.tsx';
 import { SettingsPanel } from './SettingsPanel.tsx';
 
-const TABS: readonly Tab[] = ['case', 'settings', 'reading', 'list', 'history', 'keys'];
-const PANELS = { case: CaseView, settings: SettingsPanel, reading: ReadingPanel, list: ListPanel, history: HistoryPanel, keys: KeysPanel };
+const TABS: readonly Tab[] = ['case', 'gas', 'settings', 'reading', 'list', 'history', 'keys'];
+const PANELS = {
+  case: CaseView,
+  gas: GasPanel,
+  settings: SettingsPanel,
+  reading: ReadingPanel,
+  list: ListPanel,
+  history: HistoryPanel,
+  keys: KeysPanel,
+};
 
 /** Right of the spectrum: the case of the chosen feature, or what stands beside it. */
 export function SidePanel() {

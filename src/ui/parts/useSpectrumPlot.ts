@@ -2,6 +2,7 @@ import { type RefObject, useEffect, useMemo, useRef, useState } from 'react';
 import { rangeOf, useChosenRow } from '../desk/chosen.ts';
 import { useDesk } from '../desk/deskStore.ts';
 import { useWaveAxis } from '../desk/waveAxis.ts';
+import { useFading } from '../gas/useFading.ts';
 import { fluxScale } from '../plot/fluxScale.ts';
 import { inkOf } from '../plot/inkOf.ts';
 import { layoutOf } from '../plot/layoutOf.ts';
@@ -26,6 +27,7 @@ export function useSpectrumPlot(
   const scale = useDesk((desk) => desk.scale);
   const gain = useDesk((desk) => desk.gain);
   const axis = useWaveAxis();
+  const fading = useFading();
   const chosen = useChosenRow()?.feature.number;
   const dark = useDarkness();
   const layout = useMemo(() => size && layoutOf(size.width, size.height, samples !== undefined), [size, samples]);
@@ -65,8 +67,9 @@ export function useSpectrumPlot(
       gain,
       ink: inkOf(canvas.current, dark),
       layout,
+      ...(fading ? { fading } : {}),
     };
-  }, [analysis, layout, canvas, samples, rows, axis, scale, gain, dark]);
+  }, [analysis, layout, canvas, samples, rows, axis, scale, gain, dark, fading]);
 
   const shown = useRef<SpectrumScene>(undefined);
   useEffect(() => {

@@ -3,6 +3,7 @@ import type { SkyView } from '../../engine/index.ts';
 import type { DeskRow } from '../desk/deskRows.ts';
 import { words } from '../words.ts';
 import { decimate, type Points } from './decimate.ts';
+import { faded } from './faded.ts';
 import { fitCurve } from './fitCurve.ts';
 import { commonExponent, type FluxScale, fluxTicks, tickText } from './fluxScale.ts';
 import type { Ink } from './inkOf.ts';
@@ -27,6 +28,8 @@ export interface SpectrumScene {
   readonly gain: number;
   readonly ink: Ink;
   readonly layout: PanelLayout;
+  /** What is left of features, by number, at a density that is tried; absent = none is tried. */
+  readonly fading?: ReadonlyMap<number, number>;
 }
 
 /** Decimated curves of a window that is wider than the view, so that moving inside it needs no new ones. */
@@ -57,14 +60,20 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
   const residual = samples ? cut(samples.residual) : { x: [], y: [] };
   const isSparse = samples !== undefined && flux.x.length < STEPS_BELOW * inner;
   const model = isSparse ? fitBetween(scene.rows, continuum, window, 3 * inner) : samples ? cut(samples.model) : { x: [], y: [] };
-  const line = (points: Points, yaxis: 'y2' | 'y3', color: string, width: number, stroke: 'solid' | 'dot' | 'steps' = 'solid'): Data => ({
+  const line = (
+    points: Points,
+    yaxis: 'y2' | 'y3',
+    color: string,
+    width: number,
+    stroke: 'solid' | 'dot' | 'dash' | 'steps' = 'solid',
+  ): Data => ({
     type: 'scatter',
     mode: 'lines',
     x: points.x,
     y: yaxis === 'y2' ? points.y.map(scene.scale.forward) : points.y,
     xaxis: 'x',
     yaxis,
-    line: { color, width, dash: stroke === 'dot' ? 'dot' : 'solid', shape: stroke === 'steps' ? 'hvh' : 'linear' },
+    line: { color, width, dash: stroke === 'steps' ? 'solid' : stroke, shape: stroke === 'steps' ? 'hvh' : 'linear' },
     hoverinfo: 'skip',
   });
   return {
@@ -78,6 +87,17 @@ export function drawWindow(scene: SpectrumScene, view: Range): DrawnWindow {
       line(continuum, 'y2', ink.muted, 1, 'dot'),
       line(model, 'y2', ink.fit, 2.5),
       line(flux, 'y2', ink.ink, samples ? 1 : 1.5, isSparse ? 'steps' : 'solid'),
+      ...(scene.fading
+        ? [
+            line(
+              samples ? faded(model, continuum, scene.rows, scene.fading) : sticks(scene.rows, window, scene.fading),
+              'y2',
+              ink.accent,
+              2,
+              'dash',
+            ),
+          ]
+        : []),
     ],
   };
 }
@@ -91,12 +111,12 @@ function fitBetween(rows: readonly DeskRow[], continuum: Points, window: Range, 
 }
 
 /** A list of lines as sticks from zero. */
-function sticks(rows: readonly DeskRow[], window: Range): Points {
+function sticks(rows: readonly DeskRow[], window: Range, left?: ReadonlyMap<number, number>): Points {
   const points: Points = { x: [], y: [] };
   for (const { feature } of rows) {
     if (feature.centroid < window[0] || feature.centroid > window[1]) continue;
     points.x.push(feature.centroid, feature.centroid, feature.centroid);
-    points.y.push(0, feature.measured.flux, Number.NaN);
+    points.y.push(0, feature.measured.flux * (left?.get(feature.number) ?? 1), Number.NaN);
   }
   return points;
 }

@@ -134,7 +134,8 @@ function hasSameCurves(a: SpectrumScene, b: SpectrumScene): boolean {
     a.scale.kind === b.scale.kind &&
     a.gain === b.gain &&
     a.ink.isDark === b.ink.isDark &&
-    a.layout === b.layout
+    a.layout === b.layout &&
+    a.fading === b.fading
   );
 }
 
