@@ -1,4 +1,4 @@
-import { decayRate, type LevelModel, levelPopulations } from '../atomic/index.ts';
+import { collisionRates, decayRate, type LevelModel, populationsFromRates } from '../atomic/index.ts';
 
 /** Nodes of the grid: even steps in ln Te (3000 ... 30000 K) and ln ne (1 ... 10^8 cm^-3). */
 const LOWEST_TE = 3_000;
@@ -31,8 +31,10 @@ function populationsOf(model: LevelModel): Float64Array {
   if (known) return known;
   const n = model.levels.length;
   const all = new Float64Array(TE_NODES * NE_NODES * n);
-  for (let i = 0; i < TE_NODES; i++)
-    for (let j = 0; j < NE_NODES; j++) all.set(levelPopulations(model, TE_GRID[i], NE_GRID[j]), (i * NE_NODES + j) * n);
+  for (let i = 0; i < TE_NODES; i++) {
+    const q = collisionRates(model, TE_GRID[i]);
+    for (let j = 0; j < NE_NODES; j++) all.set(populationsFromRates(model, q, NE_GRID[j]), (i * NE_NODES + j) * n);
+  }
   populations.set(model, all);
   return all;
 }

@@ -1,4 +1,4 @@
-import { type LevelModel, levelPopulations } from '../atomic/index.ts';
+import { collisionRates, type LevelModel, populationsFromRates } from '../atomic/index.ts';
 
 /** Densities at which survival is tabulated, log10 cm^-3. */
 export const LADDER_LOG_NE: readonly number[] = Array.from({ length: 53 }, (_, k) => -1 + k * 0.4);
@@ -19,10 +19,11 @@ const kept = new WeakMap<LevelModel, { readonly te: number; readonly curves: rea
 export function survivalCurves(model: LevelModel, te: number): readonly Float64Array[] {
   const known = kept.get(model);
   if (known?.te === te) return known.curves;
-  const thin = levelPopulations(model, te, NO_DENSITY_CM3).map((share) => share / NO_DENSITY_CM3);
+  const q = collisionRates(model, te);
+  const thin = populationsFromRates(model, q, NO_DENSITY_CM3).map((share) => share / NO_DENSITY_CM3);
   const curves = model.levels.map(() => new Float64Array(LADDER_LOG_NE.length));
   LADDER_LOG_NE.forEach((log, k) => {
-    const shares = levelPopulations(model, te, 10 ** log);
+    const shares = populationsFromRates(model, q, 10 ** log);
     for (let level = 0; level < curves.length; level++)
       curves[level][k] = thin[level] > 0 ? shares[level] / 10 ** log / thin[level] : Number.NaN;
   });
