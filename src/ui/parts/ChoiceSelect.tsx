@@ -1,6 +1,8 @@
 interface Props<Value extends string> {
   readonly label: string;
   readonly value: Value | undefined;
+  /** A sentence about what the choice does. */
+  readonly hint?: string;
   /** Text of the first entry, which leaves the choice to the program. */
   readonly otherwise: string;
   readonly options: readonly (readonly [Value, string])[];
@@ -8,7 +10,7 @@ interface Props<Value extends string> {
 }
 
 /** One choice out of a few, or none of one's own. */
-export function ChoiceSelect<Value extends string>({ label, value, otherwise, options, choose }: Props<Value>) {
+export function ChoiceSelect<Value extends string>({ label, hint, value, otherwise, options, choose }: Props<Value>) {
   return (
     <label className="field">
       <span>{label}</span>
@@ -26,6 +28,7 @@ export function ChoiceSelect<Value extends string>({ label, value, otherwise, op
           </option>
         ))}
       </select>
+      {hint && <span className="hint">{hint}</span>}
     </label>
   );
 }

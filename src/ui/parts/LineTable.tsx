@@ -14,14 +14,13 @@ import { Mark, Ring } from './Mark.tsx';
 import { RowVerdict } from './RowVerdict.tsx';
 
 const ROW_PX = 26;
-const VERDICT_PX = 56;
 const PICK_PX = 28;
 const GROWING: Record<string, string> = { name: '320px', note: '1fr' };
 const trackOf = ({ key, width }: TableColumn) => (GROWING[key] ? `minmax(${width}px, ${GROWING[key]})` : `${width}px`);
 const gridOf = (columns: readonly TableColumn[]) => ({
-  gridTemplateColumns: [`${PICK_PX}px`, ...columns.map(trackOf), `${VERDICT_PX}px`].join(' '),
+  gridTemplateColumns: [`${PICK_PX}px`, ...columns.map(trackOf)].join(' '),
 });
-const leastWidth = (columns: readonly TableColumn[]) => columns.reduce((sum, { width }) => sum + width, PICK_PX + VERDICT_PX);
+const leastWidth = (columns: readonly TableColumn[]) => columns.reduce((sum, { width }) => sum + width, PICK_PX);
 
 /** Every feature as a row: sorted, filtered, only what is in sight drawn. */
 export function LineTable() {
@@ -61,7 +60,6 @@ export function LineTable() {
               {columns.map((column) => (
                 <Head key={column.key} column={column} />
               ))}
-              <td />
             </tr>
           </thead>
           <tbody style={{ height: virtual.getTotalSize() }}>
@@ -86,6 +84,8 @@ export function LineTable() {
 }
 
 const rowId = (row: DeskRow) => `line-${row.feature.number}`;
+
+const cellClass = ({ key, numeric }: TableColumn) => (key === 'standing' ? 'cell verdict-cell' : numeric ? 'cell right number' : 'cell');
 
 function Head({ column }: { column: TableColumn }) {
   const sorting = useDesk((state) => state.sorting);
@@ -147,18 +147,14 @@ function Row({ row, columns, grid, place, start, isChosen, isPicked }: RowProps)
         />
       </td>
       {columns.map((column) => (
-        <td
-          key={column.key}
-          className={column.numeric ? 'cell right number' : 'cell'}
-          title={column.key === 'note' ? column.text(row) : undefined}
-        >
+        <td key={column.key} className={cellClass(column)} title={column.key === 'note' ? column.text(row) : undefined}>
           {column.key === 'standing' && <Mark standing={row.standing} />}
           {column.text(row)}
+          {column.key === 'standing' && <RowVerdict row={row} />}
           {column.key === 'name' && thinGasOf(row.name) && <Ring title={words.case.thinGas} />}
           {column.key === 'name' && row.name && isOfTheAir(row.name) && <span className="tag">{words.sky}</span>}
         </td>
       ))}
-      <RowVerdict row={row} />
     </tr>
   );
 }

@@ -19,6 +19,7 @@ export function ReadingForm({ reading, choices }: { reading: ReadingView; choice
     <>
       <ChoiceSelect
         label={label.medium}
+        hint={label.mediumHint}
         value={choices.medium}
         otherwise={`${label.asFound} (${words.medium[reading.medium]})`}
         options={[
@@ -29,6 +30,7 @@ export function ReadingForm({ reading, choices }: { reading: ReadingView; choice
       />
       <ChoiceSelect
         label={label.unit}
+        hint={label.unitHint}
         value={choices.wavelengthUnit}
         otherwise={label.asFound}
         options={UNITS.map((unit) => [unit, unit] as const)}
@@ -39,6 +41,7 @@ export function ReadingForm({ reading, choices }: { reading: ReadingView; choice
       ))}
       <ChoiceSelect
         label={label.errorMeaning}
+        hint={label.errorMeaningHint}
         value={choices.errorMeaning}
         otherwise={label.asFound}
         options={entries(label.errorMeanings)}
@@ -46,6 +49,7 @@ export function ReadingForm({ reading, choices }: { reading: ReadingView; choice
       />
       <ChoiceSelect
         label={label.maskMeaning}
+        hint={label.maskMeaningHint}
         value={choices.maskMeaning}
         otherwise={label.asFound}
         options={entries(label.maskMeanings)}
@@ -88,7 +92,7 @@ function ColumnChoice({ column, reading, chosen, take }: ColumnProps) {
         label={label[column]}
         value={chosen ?? ''}
         placeholder={reading.choices[column] ?? label.asFound}
-        hint={column === 'errorColumn' ? label.columnHint : undefined}
+        hint={`${label.columnHints[column]} ${label.columnHint}`}
         commit={(text) => take({ [column]: text || undefined }, `${label[column].toLowerCase()} ${text || label.asFound}`)}
       />
     );
@@ -100,6 +104,7 @@ function ColumnChoice({ column, reading, chosen, take }: ColumnProps) {
   return (
     <ChoiceSelect
       label={label[column]}
+      hint={label.columnHints[column]}
       value={chosen}
       otherwise={reading.choices[column] ? `${label.asFound} (${reading.choices[column]})` : label.asFound}
       options={withNone}

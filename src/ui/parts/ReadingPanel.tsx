@@ -8,6 +8,9 @@ import { ShelfBox } from './ShelfBox.tsx';
 
 const { reading: label } = words;
 
+/** A remark begins and ends as a sentence wherever it was written. */
+const sentence = (text: string) => `${text.charAt(0).toUpperCase()}${text.slice(1)}${/[.!?]$/.test(text) ? '' : '.'}`;
+
 /** How the file was read, what was assumed, and what can be read differently. */
 export function ReadingPanel() {
   const analysis = useDesk((state) => state.analysis);
@@ -35,7 +38,7 @@ export function ReadingPanel() {
       <ul className="remarks">
         {remarks.map((remark) => (
           <li key={`${remark.code} ${remark.found}`} className={`remark-${remark.weight}`}>
-            {remark.found}
+            {sentence(remark.found)}
             {remark.where.excerpt && <code>{remark.where.excerpt}</code>}
             {wordPlace(remark.where) && <span> ({wordPlace(remark.where)})</span>}
             {remark.doThis && <span> {remark.doThis}</span>}

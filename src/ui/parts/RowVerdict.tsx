@@ -3,11 +3,11 @@ import type { DeskRow } from '../desk/deskRows.ts';
 import { words } from '../words.ts';
 import { Icon } from './Icon.tsx';
 
-/** Accept and turn down at the end of a row: by mouse; the keys of the desk do the same. */
+/** Accept and turn down beside the verdict of a row: by mouse; the keys of the desk do the same. */
 export function RowVerdict({ row }: { row: DeskRow }) {
   const best = row.name ?? row.candidates[0];
   return (
-    <td className="row-verdict">
+    <span className="row-verdict">
       {best && (
         <>
           <button
@@ -17,7 +17,10 @@ export function RowVerdict({ row }: { row: DeskRow }) {
             aria-pressed={row.standing === 'accepted'}
             aria-label={`${words.case.accept} ${best.label}`}
             title={`${words.case.accept} ${best.label}`}
-            onClick={() => acceptCandidate(row, best, 'stay')}
+            onClick={(event) => {
+              event.stopPropagation();
+              acceptCandidate(row, best, 'stay');
+            }}
           >
             <Icon name="check" />
           </button>
@@ -27,12 +30,15 @@ export function RowVerdict({ row }: { row: DeskRow }) {
             tabIndex={-1}
             aria-label={`${words.case.reject} ${best.label}`}
             title={`${words.case.reject} ${best.label}`}
-            onClick={() => rejectCandidate(row, best)}
+            onClick={(event) => {
+              event.stopPropagation();
+              rejectCandidate(row, best);
+            }}
           >
             <Icon name="close" />
           </button>
         </>
       )}
-    </td>
+    </span>
   );
 }

@@ -53,7 +53,7 @@ export function SidePanel() {
           </button>
         ))}
       </div>
-      <div role="tabpanel" id="side-panel" aria-labelledby={`tab-${tab}`} className="panel" tabIndex={-1}>
+      <div key={tab} role="tabpanel" id="side-panel" aria-labelledby={`tab-${tab}`} className="panel" tabIndex={-1}>
         <Panel />
       </div>
     </section>

@@ -27,7 +27,7 @@ export const TABLE_COLUMNS: readonly TableColumn[] = [
   ),
   number(
     'wavelength',
-    140,
+    132,
     'Å',
     (r) => wavelengthText(r.feature.centroid, finite(r.feature.centroidErr)),
     (r) => r.feature.centroid,
@@ -40,20 +40,20 @@ export const TABLE_COLUMNS: readonly TableColumn[] = [
   ),
   number(
     'probability',
-    68,
+    64,
     '',
     (r) => probabilityText(r.name?.probability),
     (r) => r.name?.probability,
   ),
   word(
     'standing',
-    100,
+    144,
     (r) => words.standing[r.standing],
     (r) => r.standing,
   ),
   number(
     'flux',
-    112,
+    108,
     '',
     (r) => fluxText(r.feature.measured.flux, r.feature.measured.fluxErr),
     (r) => r.feature.measured.flux,
