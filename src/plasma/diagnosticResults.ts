@@ -10,11 +10,10 @@ import { nearestZones, ZONES, type Zone } from './zones.ts';
 export function diagnosticResults(
   ratios: readonly MeasuredRatio[],
   ln: readonly LnRatio[],
-  { zones, solutions }: ZonesSolved,
+  { zones, solutions, members }: ZonesSolved,
   drawn: Drawn,
   numbers: (indices: readonly number[]) => number[],
 ): DiagnosticResult[] {
-  const members = membersOf(ratios, solutions);
   return ratios.map((ratio, k) => {
     const { diagnostic, zone, over, under } = ratio;
     const range = diagnostic.tells === 'density' ? NE_RANGE : TE_RANGE;
@@ -32,24 +31,10 @@ export function diagnosticResults(
       features: numbers([...over, ...under]),
       ratio: { value: ratioValue, err: ratioValue * ln[k].err },
       result: boundedEstimate(value, beyond, drawn.diagnostics[k], range),
-      counts: members.has(k),
+      counts: members[diagnostic.tells][zone].includes(k),
       assumption: `Level populations of ${diagnostic.ion} at ${at} of its zone; both lines from the same gas.${diagnostic.caution ? ` ${diagnostic.caution}` : ''}`,
     };
   });
-}
-
-/** The diagnostics that make up the means: the primary ones of their zone, else the others. */
-function membersOf(ratios: readonly MeasuredRatio[], solutions: ZonesSolved['solutions']): Set<number> {
-  const members = new Set<number>();
-  for (const zone of ZONES)
-    for (const tells of ['temperature', 'density'] as const) {
-      const all = ratios.flatMap((ratio, k) =>
-        ratio.zone === zone && ratio.diagnostic.tells === tells && solutions[k].ended === 'value' ? [k] : [],
-      );
-      const primary = all.filter((k) => !ratios[k].diagnostic.secondary);
-      for (const k of primary.length > 0 ? primary : all) members.add(k);
-    }
-  return members;
 }
 
 /**
@@ -57,47 +42,31 @@ function membersOf(ratios: readonly MeasuredRatio[], solutions: ZonesSolved['sol
  * (the practice of the Particle Data Group's averages).
  */
 export function zoneResults(ratios: readonly MeasuredRatio[], solved: ZonesSolved, drawn: Drawn, settings: ZoneSettings): ZoneResult[] {
-  const members = membersOf(ratios, solved.solutions);
-  const has = (tells: 'temperature' | 'density', zone: Zone) =>
-    ratios.some((ratio, k) => members.has(k) && ratio.zone === zone && ratio.diagnostic.tells === tells);
+  const { members } = solved;
   const quantity = (zone: Zone, tells: 'temperature' | 'density'): ZoneQuantity => {
     const name = tells === 'temperature' ? 'te' : 'ne';
     const value = solved.zones[zone][name];
     const given = settings[name];
     if (given !== undefined) return { estimate: estimateOf(given, []), from: 'given' };
-    const source = nearestZones(zone).find((each) => has(tells, each));
+    const source = nearestZones(zone).find((each) => members[tells][each].length > 0);
     if (source === undefined) return unmeasured(ratios, drawn, tells, value);
     const range = tells === 'density' ? NE_RANGE : TE_RANGE;
-    const estimate = widened(
-      boundedEstimate(value, undefined, drawn[name][zone], range),
-      disagreement(solved, members, ratios, source, tells),
-    );
-    const labels = ratios.flatMap((ratio, k) =>
-      members.has(k) && ratio.zone === source && ratio.diagnostic.tells === tells ? [ratio.diagnostic.label] : [],
-    );
+    const estimate = widened(boundedEstimate(value, undefined, drawn[name][zone], range), disagreement(solved, source, tells));
+    const labels = members[tells][source].map((k) => ratios[k].diagnostic.label);
     return { estimate, from: source === zone ? labels.join(', ') : `taken from the ${source} zone` };
   };
   return ZONES.map((zone) => ({ zone, te: quantity(zone, 'temperature'), ne: quantity(zone, 'density') }));
 }
 
 /** How much more than their errors allow the diagnostics of a zone disagree: sqrt(chi2/dof) of their mean in the logarithm, at least 1. */
-function disagreement(
-  { solutions, weights, zones }: ZonesSolved,
-  members: ReadonlySet<number>,
-  ratios: readonly MeasuredRatio[],
-  zone: Zone,
-  tells: 'temperature' | 'density',
-): number {
+function disagreement({ solutions, weights, zones, members }: ZonesSolved, zone: Zone, tells: 'temperature' | 'density'): number {
   const mean = Math.log(zones[zone][tells === 'temperature' ? 'te' : 'ne']);
-  let chi2 = 0;
-  let count = 0;
-  ratios.forEach((ratio, k) => {
+  const solved = members[tells][zone].flatMap((k) => {
     const solution = solutions[k];
-    if (!members.has(k) || ratio.zone !== zone || ratio.diagnostic.tells !== tells || solution.ended !== 'value') return;
-    chi2 += weights[k] * (Math.log(solution.x) - mean) ** 2;
-    count++;
+    return solution.ended === 'value' ? [weights[k] * (Math.log(solution.x) - mean) ** 2] : [];
   });
-  return count > 1 ? Math.max(1, Math.sqrt(chi2 / (count - 1))) : 1;
+  const chi2 = solved.reduce((sum, part) => sum + part, 0);
+  return solved.length > 1 ? Math.max(1, Math.sqrt(chi2 / (solved.length - 1))) : 1;
 }
 
 /** An interval made wider about its value by a factor, in the logarithm. */

@@ -56,14 +56,16 @@ export function drawGas(input: DrawInput): Drawn {
   const lnI = new Float64Array(fluxes.length);
   const spread = spreadNormals(draws);
   const normals = independent(fluxes.map(() => shuffled(spread.slice(), random)));
+  const lnFlux = fluxes.map(({ flux }) => Math.log(flux));
+  const relative = fluxes.map(({ flux, fluxErr }) => fluxErr / flux);
   for (let draw = 0; draw < draws; draw++) {
     let c = input.c;
-    const ln = fluxes.map(({ flux, fluxErr }, k) => {
-      const moved = Math.log(Math.max(LEAST_SHARE, 1 + (fluxErr / flux) * normals[k][draw]));
+    for (let k = 0; k < fluxes.length; k++) {
+      const moved = Math.log(Math.max(LEAST_SHARE, 1 + relative[k] * normals[k][draw]));
       c += input.cSlopes[k] * moved;
-      return Math.log(flux) + moved;
-    });
-    for (let k = 0; k < ln.length; k++) lnI[k] = ln[k] + Math.LN10 * c * f[k];
+      lnI[k] = lnFlux[k] + moved;
+    }
+    for (let k = 0; k < fluxes.length; k++) lnI[k] += Math.LN10 * c * f[k];
     const lnRatios = ratios.map((ratio): LnRatio => ({ value: lnRatioOf(ratio, lnI), err: 1 }));
     const { zones, solutions } = solveZones(ratios, lnRatios, input.settings, solved);
     for (const zone of ZONES) {

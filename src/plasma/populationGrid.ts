@@ -102,10 +102,11 @@ export interface Profile {
   readonly values: Float64Array;
 }
 
-export function profileAlong({ values }: PlasmaGrid, along: 'te' | 'ne', other: number): Profile {
+/** @param into takes the values when given, one a node */
+export function profileAlong({ values }: PlasmaGrid, along: 'te' | 'ne', other: number, into?: Float64Array): Profile {
   const nodes = along === 'ne' ? NE_NODES : TE_NODES;
   const at = along === 'ne' ? placeOfTe(other) : placeOfNe(other);
-  const found = new Float64Array(nodes);
+  const found = into ?? new Float64Array(nodes);
   for (let k = 0; k < nodes; k++)
     found[k] = along === 'ne' ? between(values, k, NE_NODES, TE_NODES, at) : between(values, k * NE_NODES, 1, NE_NODES, at);
   return { along, values: found };

@@ -1,5 +1,5 @@
 import type { MeasuredRatio } from './measuredRatios.ts';
-import { NE_RANGE, profileAlong, type Solution, slopeAt, solveProfile, TE_RANGE } from './populationGrid.ts';
+import { NE_GRID, NE_RANGE, profileAlong, type Solution, slopeAt, solveProfile, TE_GRID, TE_RANGE } from './populationGrid.ts';
 import { nearestZones, ZONES, type Zone } from './zones.ts';
 
 /** Temperature and density of one zone. */
@@ -32,10 +32,16 @@ export interface ZonesSolved {
   /** One a ratio, at the other quantity of its zone. */
   readonly solutions: readonly Solution[];
   readonly weights: Weights;
+  readonly members: Members;
 }
+
+/** Which ratios make up the mean of a zone: the primary ones, else the secondary ones that weigh something. */
+type Members = Readonly<Record<'temperature' | 'density', Readonly<Record<Zone, readonly number[]>>>>;
 
 const MOST_ROUNDS = 12;
 const SETTLED = 3e-4;
+/** A draw of the noise need not be known better. */
+const SETTLED_DRAW = 1e-3;
 /** A ratio where it moves this little with what it tells (d ln ratio / d ln x) is flat: it only sets a limit. */
 const FLAT_SLOPE = 0.02;
 
@@ -52,30 +58,35 @@ export function solveZones(
   ratios: readonly MeasuredRatio[],
   ln: readonly LnRatio[],
   settings: ZoneSettings,
-  fixed?: { readonly weights: Weights; readonly zones: ZoneStates },
+  fixed?: Pick<ZonesSolved, 'weights' | 'zones' | 'members'>,
 ): ZonesSolved {
   let zones: ZoneStates = fixed?.zones ?? everywhere({ te: settings.te ?? settings.startTe, ne: settings.ne ?? settings.startNe });
+  const enough = fixed ? SETTLED_DRAW : SETTLED;
   let solved: ZonesSolved | undefined;
   for (let round = 0; round < MOST_ROUNDS; round++) {
     const solutions = ratios.map((ratio, k) => solveOne(ratio, zones[ratio.zone], ln[k].value));
     const weights = fixed?.weights ?? ratios.map((ratio, k) => weightOf(ratio, zones[ratio.zone], solutions[k], ln[k].err));
-    const next = statesOf(ratios, solutions, weights, settings, zones);
-    solved = { zones: next, solutions, weights };
-    const moved = Math.max(
-      ...ZONES.flatMap((zone) => [Math.abs(Math.log(next[zone].te / zones[zone].te)), Math.abs(Math.log(next[zone].ne / zones[zone].ne))]),
-    );
+    const members = fixed?.members ?? membersOf(ratios, weights);
+    const next = statesOf(ratios, solutions, weights, members, settings, zones);
+    solved = { zones: next, solutions, weights, members };
+    let moved = 0;
+    for (const zone of ZONES)
+      moved = Math.max(moved, Math.abs(next[zone].te / zones[zone].te - 1), Math.abs(next[zone].ne / zones[zone].ne - 1));
     zones = next;
-    if (moved < SETTLED) break;
+    if (moved < enough) break;
   }
   return solved as ZonesSolved;
 }
 
 const everywhere = (state: ZoneState): ZoneStates => ({ neutral: state, low: state, medium: state, high: state });
 
+/** Room for a profile that is read and forgotten: draws solve thousands. */
+const SCRATCH = { te: new Float64Array(TE_GRID.length), ne: new Float64Array(NE_GRID.length) };
+
 /** Solves one ratio at the other quantity of its zone. */
-export function solveOne({ diagnostic, grid }: MeasuredRatio, state: ZoneState, lnRatio: number): Solution {
+function solveOne({ diagnostic, grid }: MeasuredRatio, state: ZoneState, lnRatio: number): Solution {
   const along = diagnostic.tells === 'density' ? 'ne' : 'te';
-  return solveProfile(profileAlong(grid, along, along === 'ne' ? state.te : state.ne), lnRatio);
+  return solveProfile(profileAlong(grid, along, along === 'ne' ? state.te : state.ne, SCRATCH[along]), lnRatio);
 }
 
 /** Inverse square of the error of ln x; a flat or unsolved ratio weighs nothing. */
@@ -86,26 +97,34 @@ function weightOf({ diagnostic, grid }: MeasuredRatio, state: ZoneState, solutio
   return Math.abs(slope) < FLAT_SLOPE ? 0 : (slope / err) ** 2;
 }
 
+function membersOf(ratios: readonly MeasuredRatio[], weights: Weights): Members {
+  const of = (tells: 'temperature' | 'density', zone: Zone): readonly number[] => {
+    const all = ratios.flatMap((ratio, k) => (ratio.zone === zone && ratio.diagnostic.tells === tells && weights[k] > 0 ? [k] : []));
+    const primary = all.filter((k) => !ratios[k].diagnostic.secondary);
+    return primary.length > 0 ? primary : all;
+  };
+  const zonal = (tells: 'temperature' | 'density') => ({
+    neutral: of(tells, 'neutral'),
+    low: of(tells, 'low'),
+    medium: of(tells, 'medium'),
+    high: of(tells, 'high'),
+  });
+  return { temperature: zonal('temperature'), density: zonal('density') };
+}
+
+const NEAREST = { neutral: nearestZones('neutral'), low: nearestZones('low'), medium: nearestZones('medium'), high: nearestZones('high') };
+
 function statesOf(
   ratios: readonly MeasuredRatio[],
   solutions: readonly Solution[],
   weights: Weights,
+  members: Members,
   settings: ZoneSettings,
   before: ZoneStates,
 ): ZoneStates {
-  const own = (tells: 'temperature' | 'density', zone: Zone): number | undefined => {
-    const members = ratios
-      .map((_, k) => k)
-      .filter((k) => ratios[k].zone === zone && ratios[k].diagnostic.tells === tells && weights[k] > 0);
-    const primary = members.filter((k) => !ratios[k].diagnostic.secondary);
-    return weightedMean(primary.length > 0 ? primary : members, solutions, weights, tells);
-  };
   const found = (tells: 'temperature' | 'density', zone: Zone): number | undefined => {
-    for (const near of nearestZones(zone)) {
-      const value = own(tells, near);
-      if (value !== undefined) return value;
-    }
-    return undefined;
+    const source = NEAREST[zone].find((near) => members[tells][near].length > 0);
+    return source && weightedMean(members[tells][source], solutions, weights, tells);
   };
   const state = (zone: Zone): ZoneState => ({
     te: settings.te ?? found('temperature', zone) ?? settings.startTe,
@@ -131,8 +150,7 @@ function weightedMean(
   solutions: readonly Solution[],
   weights: Weights,
   tells: 'temperature' | 'density',
-): number | undefined {
-  if (members.length === 0) return undefined;
+): number {
   const [low, high] = tells === 'density' ? NE_RANGE : TE_RANGE;
   let sum = 0;
   let total = 0;

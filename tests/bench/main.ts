@@ -4,6 +4,7 @@ import { deskBench } from './deskBench.ts';
 import { identifyBench } from './identifyBench.ts';
 import { namingBench } from './namingBench.ts';
 import { physicsBench } from './physicsBench.ts';
+import { plasmaBench } from './plasmaBench.ts';
 import { readersBench } from './readersBench.ts';
 import { seededBench } from './seededBench.ts';
 
@@ -17,6 +18,7 @@ for (const [title, bench] of [
   ['naming a simulated nebula', identifyBench],
   ['moving about the spectrum', deskBench],
   ['keeping the page alive while the worker computes', blockingBench],
+  ['the gas', plasmaBench],
   ['measuring, beside a script of numpy and scipy', seededBench],
 ] as const) {
   process.stdout.write(`\n${title}\n`);
