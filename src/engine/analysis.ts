@@ -3,7 +3,7 @@ import type { Feature, Group, MeasureSettings } from '../measure/index.ts';
 import type { Gas, GasSettings } from '../plasma/index.ts';
 import type { Remark } from '../problems/index.ts';
 import type { Offer, Reading, ReadingChoices } from '../readers/index.ts';
-import type { LineTable } from '../report/index.ts';
+import type { LineTable, MethodFacts } from '../report/index.ts';
 import type { LineKey, Verdict } from '../session/index.ts';
 import type { Medium } from '../spectrum/index.ts';
 
@@ -137,6 +137,8 @@ export interface Analysis {
   /** Verdicts that found no feature any more. */
   readonly lostVerdicts: readonly Verdict[];
   readonly table: LineTable;
+  /** What was done, for methods paragraph and provenance. */
+  readonly methods: MethodFacts;
   /** Seconds spent in each stage. */
   readonly timings: readonly { readonly stage: string; readonly seconds: number }[];
 }

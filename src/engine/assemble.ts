@@ -9,11 +9,14 @@ import { candidateViewer } from './candidateView.ts';
 import { lineLabel } from './lineNames.ts';
 import { lineTableOf } from './lineTableOf.ts';
 import type { Material } from './material.ts';
+import { methodFacts } from './methodFacts.ts';
 import { skyView } from './skyView.ts';
 
 /** The finished stages. */
 interface Parts {
   readonly data: AtomicData;
+  /** Lines of the list that are the user's own. */
+  readonly ownLines: number;
   /** Of the source's bytes. */
   readonly sha256: string;
   readonly material: Material;
@@ -56,6 +59,7 @@ export function featureViews(parts: Parts): FeatureView[] {
 export function assemble(parts: Parts, features: readonly FeatureView[], gas: Gas): Analysis {
   const { data, material, measurement, naming, namingSettings } = parts;
   const { medium, mediumStated, fluxUnit, name: title } = material.reading;
+  const remarks = [...material.reading.remarks, ...(measurement?.remarks ?? []), ...naming.remarks];
   return {
     reading: material.reading,
     ...(material.spectrum && measurement ? { samples: samplesOf(material.spectrum, measurement) } : {}),
@@ -79,7 +83,7 @@ export function assemble(parts: Parts, features: readonly FeatureView[], gas: Ga
       expectedAt: fromVacuum(m.expectedAt, medium),
       predictedFlux: m.predictedFlux,
     })),
-    remarks: [...material.reading.remarks, ...(measurement?.remarks ?? []), ...naming.remarks],
+    remarks,
     lostVerdicts: parts.lost,
     table: lineTableOf(
       features,
@@ -97,6 +101,7 @@ export function assemble(parts: Parts, features: readonly FeatureView[], gas: Ga
       },
       gas,
     ),
+    methods: methodFacts({ ...parts, features, gas, naming: { ...naming, remarks } }),
     timings: parts.timings,
   };
 }

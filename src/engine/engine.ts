@@ -128,6 +128,7 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
       last = fits && measurement && { fitted: fits, measurement, edits };
       const parts = {
         data: list,
+        ownLines: list.lines.count - data.lines.count,
         sha256,
         material: what,
         measurement,

@@ -109,7 +109,7 @@ export function openSource(document: SessionDocument, source: Source): Change {
 }
 
 /** Settings without what belongs to one source alone. */
-function forAnotherSource({ measure, naming, gas, ...rest }: Settings): Settings {
+function forAnotherSource({ measure, naming, gas, paper, ...rest }: Settings): Settings {
   const {
     resolvingPower: _power,
     instrumentFwhmA: _width,
@@ -120,7 +120,15 @@ function forAnotherSource({ measure, naming, gas, ...rest }: Settings): Settings
   } = measure;
   const { z: _z, ...namingKept } = naming;
   const { cHbeta: _c, stellarEwA: _stellar, te: _te, ne: _ne, ...gasKept } = gas ?? {};
-  return { ...rest, reading: {}, measure: measureKept, naming: namingKept, ...(gas ? { gas: gasKept } : {}) };
+  const { caption: _caption, ...design } = paper?.design ?? {};
+  return {
+    ...rest,
+    reading: {},
+    measure: measureKept,
+    naming: namingKept,
+    ...(gas ? { gas: gasKept } : {}),
+    ...(paper?.design ? { paper: { design: design as typeof paper.design } } : {}),
+  };
 }
 
 /** Takes a source off the shelf; its verdicts go with it, undo brings both back. */

@@ -2,6 +2,7 @@ import type { NamingSettings } from '../identify/index.ts';
 import type { MeasureSettings } from '../measure/index.ts';
 import type { GasSettings } from '../plasma/index.ts';
 import type { ReadingChoices } from '../readers/index.ts';
+import type { TableDesign } from '../report/index.ts';
 
 /** Choices of the user; what is absent is left to the engine's defaults and to what the file says. */
 export interface Settings {
@@ -10,8 +11,17 @@ export interface Settings {
   readonly naming: Partial<NamingSettings>;
   /** Absent = all left to the program. */
   readonly gas?: Partial<GasSettings>;
+  /** How the paper's table is printed and what its methods paragraph says. */
+  readonly paper?: PaperSettings;
   /** Lines the user adds to the bundled list: the CSV as it was read, so that it can be read again by another release. */
   readonly ownLines?: OwnLines;
+}
+
+/** Choices for the paper; what is absent is left to the program. */
+export interface PaperSettings {
+  readonly design?: TableDesign;
+  /** The methods paragraph as its authors edited it. */
+  readonly methods?: string;
 }
 
 export interface OwnLines {

@@ -26,6 +26,7 @@ const settingsShape = v.object({
   measure: v.record(v.string(), v.unknown()),
   naming: v.record(v.string(), v.unknown()),
   gas: v.optional(v.record(v.string(), v.unknown())),
+  paper: v.optional(v.record(v.string(), v.unknown())),
   ownLines: v.optional(v.object({ name: v.string(), text: v.string() })),
 });
 const sourceShape = v.object({

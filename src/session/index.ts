@@ -3,6 +3,7 @@
 
 export type { FeatureEdit } from '../measure/index.ts';
 export { applyChange, type Change, inverseOf, type Step } from './change.ts';
+export { compareSessions, type SessionComparison, type SettingDifference, type VerdictDifference } from './compareSessions.ts';
 export {
   accept,
   acceptMany,

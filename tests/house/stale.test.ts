@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { expect, it } from 'vitest';
+import { referencesJson } from '../../src/atomic/build/bibliography.ts';
 import { buildBundle } from '../../src/atomic/build/buildBundle.ts';
 import { readTables } from '../../src/atomic/build/readTables.ts';
 import { SAMPLE_RECIPES } from '../../src/atomic/build/sampleRecipes.ts';
@@ -21,4 +22,12 @@ it('the sample spectra are what their script gives today', () => {
       `public/samples/${recipe.file} is stale: run \`npm run data\` and commit the result`,
     ).toBe(true);
   }
+});
+
+it('public/references.json is what sources.bib gives today', () => {
+  const kept = readFileSync(new URL('../../public/references.json', import.meta.url), 'utf8');
+  expect(
+    kept === referencesJson(readTables().files.get('sources.bib') ?? ''),
+    'public/references.json is stale: run `npm run data` and commit the result',
+  ).toBe(true);
 });

@@ -19,6 +19,20 @@ function citation(entry: string): string {
   return [head, place || title, place ? '' : identifier].filter((t) => t !== '').join(', ');
 }
 
+/** Every citation as the line list prints it, with the BibTeX entries that stand for it: `public/references.json`. */
+export function referencesJson(text: string): string {
+  const entries: Record<string, string[]> = {};
+  for (const entry of text.split(/^@/m).slice(1)) {
+    // BibTeX wants "and" between authors; the tables print commas
+    const bibtex = `@${entry.replace(/\n%[\s\S]*$/, '').trim()}`.replace(/author=\{[^}]*\}/, (authors) =>
+      authors.replaceAll(/\., (?=[A-Z])/g, '. and '),
+    );
+    (entries[citation(entry)] ??= []).push(bibtex);
+  }
+  const sorted = Object.fromEntries(Object.entries(entries).sort(([a], [b]) => (a < b ? -1 : 1)));
+  return `${JSON.stringify(sorted, null, 0)}\n`;
+}
+
 /** Reads BibTeX entries with plain `{...}` fields (no nesting), as `sources.bib` is written. */
 export function readBibliography(text: string): Bibliography {
   const entries = new Map<string, string>();

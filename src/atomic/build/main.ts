@@ -3,6 +3,7 @@ import { mkdirSync, writeFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { gzipSync } from 'node:zlib';
 import { loadAtomicData } from '../loadAtomicData.ts';
+import { referencesJson } from './bibliography.ts';
 import { buildBundle } from './buildBundle.ts';
 import { readTables } from './readTables.ts';
 import { SAMPLE_RECIPES } from './sampleRecipes.ts';
@@ -14,6 +15,10 @@ const bytes = buildBundle(tables);
 writeFileSync(target, bytes);
 const compressed = gzipSync(bytes, { level: 9 }).length;
 console.log(`${tables.files.size} tables -> public/atomic.bin: ${bytes.length} bytes, ${compressed} compressed`);
+
+const references = referencesJson(tables.files.get('sources.bib') ?? '');
+writeFileSync(fileURLToPath(new URL('../../../public/references.json', import.meta.url)), references);
+console.log(`public/references.json: ${references.length} bytes`);
 
 const samples = fileURLToPath(new URL('../../../public/samples/', import.meta.url));
 mkdirSync(samples, { recursive: true });
