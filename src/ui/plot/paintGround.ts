@@ -44,7 +44,10 @@ export function paintGround(canvas: HTMLCanvasElement, { sky, masked, ink, layou
     pen.fillRect(from, top, Math.max(to - from, 1), bottom - top);
     wishes.push({ x: (from + to) * MIDDLE, lane: 0, text: molecules(band.species), importance: to - from });
   }
-  paintMasked(pen, masked, view, xOf, top, bottom, ink);
+  for (const [from, to] of maskedSpans(masked, view, xOf)) {
+    hatch(pen, from, to, top, bottom, ink);
+    wishes.push({ x: (from + to) * MIDDLE, lane: 0, text: words.spectrum.masked, importance: to - from });
+  }
   pen.strokeStyle = ink.faint;
   pen.lineWidth = 1;
   pen.setLineDash([1, 5]);
@@ -73,37 +76,35 @@ function label(pen: Pen, wishes: readonly Wish[], y: number, ink: Ink): void {
   for (const k of labelsThatFit(wishes, (text) => pen.measureText(text).width, MOST_LABELS)) pen.fillText(wishes[k].text, wishes[k].x, y);
 }
 
-/** Slanted strokes over the masked stretches in view; those thinner than a pixel join. */
-function paintMasked(
-  pen: Pen,
-  masked: Float64Array,
-  view: Range,
-  xOf: (at: number) => number,
-  top: number,
-  bottom: number,
-  ink: Ink,
-): void {
+/** Masked stretches in view, pixels; those less than a pixel apart join. */
+function maskedSpans(masked: Float64Array, view: Range, xOf: (at: number) => number): [from: number, to: number][] {
+  const spans: [number, number][] = [];
   // pairs are disjoint and ascending: the first whose end is in view
-  let k = sampleAt(masked, view[0]) & ~1;
+  for (let k = sampleAt(masked, view[0]) & ~1; k < masked.length && masked[k] < view[1]; k += 2) {
+    const [from, to] = [xOf(masked[k]), xOf(masked[k + 1])];
+    const last = spans.at(-1);
+    if (last && from <= last[1] + 1) last[1] = Math.max(last[1], to);
+    else spans.push([from, to]);
+  }
+  return spans;
+}
+
+/** Slanted strokes, which stand in one pattern over all stretches. */
+function hatch(pen: Pen, from: number, to: number, top: number, bottom: number, ink: Ink): void {
+  pen.save();
+  pen.beginPath();
+  pen.rect(from, top, Math.max(to - from, 1), bottom - top);
+  pen.clip();
   pen.strokeStyle = ink.hairline;
   pen.lineWidth = 1;
-  while (k < masked.length && masked[k] < view[1]) {
-    const from = xOf(masked[k]);
-    let to = xOf(masked[k + 1]);
-    for (k += 2; k < masked.length && xOf(masked[k]) <= to + 1; k += 2) to = Math.max(to, xOf(masked[k + 1]));
-    pen.save();
-    pen.beginPath();
-    pen.rect(from, top, Math.max(to - from, 1), bottom - top);
-    pen.clip();
-    pen.beginPath();
-    const slant = bottom - top;
-    for (let x = Math.floor((from - slant) / HATCH_PX) * HATCH_PX; x < to; x += HATCH_PX) {
-      pen.moveTo(x, bottom);
-      pen.lineTo(x + slant, top);
-    }
-    pen.stroke();
-    pen.restore();
+  pen.beginPath();
+  const slant = bottom - top;
+  for (let x = Math.floor((from - slant) / HATCH_PX) * HATCH_PX; x < to; x += HATCH_PX) {
+    pen.moveTo(x, bottom);
+    pen.lineTo(x + slant, top);
   }
+  pen.stroke();
+  pen.restore();
 }
 
 const LOWERED = '₀₁₂₃₄₅₆₇₈₉';
