@@ -35,7 +35,7 @@ export function abundanceResults({ data, fluxes, lnI, hBeta, ions, zones, drawn 
       low,
       high,
       lines: ion.parts.map(({ index }) => fluxes[index].label),
-      assumption: `Collisionally excited lines at Te = ${Math.round(state.te)} K and ne = ${Number(state.ne.toPrecision(2))} cm⁻³ throughout the ${ion.zone} zone, H⁺ at the same temperature; no temperature fluctuations.`,
+      assumption: `Te = ${Math.round(state.te)} K, ne = ${Number(state.ne.toPrecision(2))} cm⁻³ all over the ${ion.zone} zone, for H⁺ too.`,
     };
   });
   const recombination = recombinationAbundances(data, fluxes, perHbeta, relativeErr).map(
@@ -47,8 +47,7 @@ export function abundanceResults({ data, fluxes, lnI, hBeta, ions, zones, drawn 
       low: Math.max(0, abundance - abundanceErr),
       high: abundance + abundanceErr,
       lines,
-      assumption:
-        'Recombination lines with coefficients at 10⁴ K (they fall with temperature almost as Hβ does); no fluorescence, levels of a multiplet filled by statistical weight.',
+      assumption: 'Coefficients at 10⁴ K; no fluorescence, sublevels filled by weight.',
     }),
   );
   return [...collisional, ...recombination].sort((a, b) => order(data, a.ion) - order(data, b.ion) || a.from.localeCompare(b.from));

@@ -32,7 +32,7 @@ export function diagnosticResults(
       ratio: { value: ratioValue, err: ratioValue * ln[k].err },
       result: boundedEstimate(value, beyond, drawn.diagnostics[k], range),
       counts: members[diagnostic.tells][zone].includes(k),
-      assumption: `Level populations of ${diagnostic.ion} at ${at} of its zone; both lines from the same gas.${diagnostic.caution ? ` ${diagnostic.caution}` : ''}`,
+      assumption: `${diagnostic.ion} level populations at ${at} of its zone, one gas.${diagnostic.caution ? ` ${diagnostic.caution}` : ''}`,
     };
   });
 }

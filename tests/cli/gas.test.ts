@@ -16,7 +16,7 @@ describe('linewright gas', () => {
     expect(of('Te', 'medium')?.note).toContain('[O III] 4363');
     expect(lines.find((row) => row.item === '[S II] 6716/6731')).toMatchObject({
       unit: 'cm-3',
-      note: expect.stringContaining('Level populations'),
+      note: expect.stringContaining('level populations'),
     });
     expect(new Set(lines.map((row) => row.section))).toEqual(
       new Set(['reddening', 'zone', 'diagnostic', 'abundance', 'ladder', 'kinematics']),

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { DEFAULT_GAS_SETTINGS, describeGas } from '../../src/plasma/index.ts';
 import { gasCsv } from '../../src/report/index.ts';
 import { bandsFigure } from '../../src/ui/gas/bandsFigure.ts';
+import { chargedIon } from '../../src/ui/gas/chargedIon.ts';
 import { abundanceText, estimateText } from '../../src/ui/gas/estimateText.ts';
 import { fadingOf } from '../../src/ui/gas/fading.ts';
 import type { Figure } from '../../src/ui/gas/figure.ts';
@@ -77,6 +78,18 @@ describe('numbers in words', () => {
     expect(estimateText({ ended: 'below', limit: 384.4 }, 'cm⁻³')).toBe('< 380 cm⁻³');
     expect(estimateText({ ended: 'none', reason: 'x' }, 'K')).toBe('no value');
     expect(abundanceText(2.643e-4, 2.63e-4, 2.66e-4)).toBe('2.643 +0.017 −0.013 × 10⁻⁴');
+  });
+
+  it('an abundance names its ion by the charge', () => {
+    expect(['O III', 'H II', 'N I', 'Fe VII', 'Ar X', 'Ar XIV', 'Fe IX'].map(chargedIon)).toEqual([
+      'O²⁺',
+      'H⁺',
+      'N⁰',
+      'Fe⁶⁺',
+      'Ar⁹⁺',
+      'Ar¹³⁺',
+      'Fe⁸⁺',
+    ]);
   });
 
   it('the CSV holds every view’s numbers, a row each, with as many cells as its head', () => {

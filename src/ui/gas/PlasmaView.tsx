@@ -4,6 +4,7 @@ import { fixed, withError } from '../figures.ts';
 import { NumberSetting } from '../parts/NumberSetting.tsx';
 import { words } from '../words.ts';
 import { bandsFigure, letterOf } from './bandsFigure.ts';
+import { chargedIon } from './chargedIon.ts';
 import { abundanceText, estimateText } from './estimateText.ts';
 import { FigureBox } from './FigureBox.tsx';
 import { setGas } from './setGas.ts';
@@ -73,24 +74,15 @@ function Diagnostics({ gas }: { readonly gas: Gas }) {
           <DiagnosticRow key={diagnostic.label} diagnostic={diagnostic} letter={letterOf(k)} />
         ))}
         {jumps.map((jump) => (
-          <tr key={jump.label}>
-            <th scope="row">
-              {jump.label}
-              <span className="reason">{jump.assumption}</span>
-            </th>
-            <td>{withError(jump.ratio.value, jump.ratio.err, 4)}</td>
-            <td>{estimateText(jump.result, 'K')}</td>
-          </tr>
+          <NumberRow
+            key={jump.label}
+            name={jump.label}
+            cells={[withError(jump.ratio.value, jump.ratio.err, 4), estimateText(jump.result, 'K')]}
+            why={`${jump.result.ended === 'none' ? `${jump.result.reason}. ` : ''}${jump.assumption}`}
+          />
         ))}
         {unused.map(({ label: name, reason }) => (
-          <tr key={name}>
-            <th scope="row">
-              {name}
-              <span className="reason">{reason}</span>
-            </th>
-            <td>–</td>
-            <td>–</td>
-          </tr>
+          <NumberRow key={name} name={name} cells={['–', '–']} why={reason} />
         ))}
       </tbody>
     </table>
@@ -99,15 +91,38 @@ function Diagnostics({ gas }: { readonly gas: Gas }) {
 
 function DiagnosticRow({ diagnostic, letter }: { readonly diagnostic: DiagnosticResult; readonly letter: string }) {
   const { label: name, ratio, result, tells, counts, assumption } = diagnostic;
+  const why = `${result.ended === 'none' ? `${result.reason}. ` : ''}${assumption}${counts ? '' : ` ${label.aside}`}`;
   return (
-    <tr>
-      <th scope="row">
-        <b>{letter}</b> {name}
-        <span className="reason">{`${result.ended === 'none' ? `${result.reason}. ` : ''}${assumption}${counts ? '' : ` ${label.aside}`}`}</span>
-      </th>
-      <td>{withError(ratio.value, ratio.err, 4)}</td>
-      <td>{estimateText(result, UNIT[tells])}</td>
-    </tr>
+    <NumberRow letter={letter} name={name} cells={[withError(ratio.value, ratio.err, 4), estimateText(result, UNIT[tells])]} why={why} />
+  );
+}
+
+interface NumberRowProps {
+  readonly letter?: string;
+  readonly name: string;
+  readonly cells: readonly string[];
+  readonly why: string;
+}
+
+/** A row of numbers, and below it in small what they assume. */
+function NumberRow({ letter, name, cells, why }: NumberRowProps) {
+  const [first, ...others] = cells;
+  return (
+    <>
+      <tr>
+        <th scope="row">
+          {letter && <b>{`${letter} `}</b>}
+          {name}
+        </th>
+        <td>{first}</td>
+        {others.map((cell) => (
+          <td key={cell}>{cell}</td>
+        ))}
+      </tr>
+      <tr className="why">
+        <td colSpan={1 + cells.length}>{why}</td>
+      </tr>
+    </>
   );
 }
 
@@ -161,7 +176,7 @@ function Abundances({ gas }: { readonly gas: Gas }) {
       {discrepancies.length > 0 && <h3>{label.discrepancies}</h3>}
       {discrepancies.map(({ ion, factor, low, high }) => (
         <p key={ion} className="number">
-          {label.discrepancy(ion, fixed(factor, 2), fixed(low, 2), fixed(high, 2))}
+          {label.discrepancy(chargedIon(ion), fixed(factor, 2), fixed(low, 2), fixed(high, 2))}
         </p>
       ))}
     </>
@@ -170,12 +185,10 @@ function Abundances({ gas }: { readonly gas: Gas }) {
 
 function AbundanceRow({ abundance: { ion, from, abundance, low, high, lines, assumption } }: { readonly abundance: AbundanceResult }) {
   return (
-    <tr>
-      <th scope="row">
-        {label.ionOf(ion, from)}
-        <span className="reason">{`${lines.join(', ')}. ${assumption}`}</span>
-      </th>
-      <td>{abundanceText(abundance, low, high)}</td>
-    </tr>
+    <NumberRow
+      name={label.ionOf(chargedIon(ion), from)}
+      cells={[abundanceText(abundance, low, high)]}
+      why={`${lines.join(', ')}. ${assumption}`}
+    />
   );
 }
