@@ -16,6 +16,7 @@ export { type AtlasChoices, atlasFigures } from './figures/atlas.ts';
 export { featureFitFigure } from './figures/featureFit.ts';
 export { COLUMN_WIDTHS_MM, type ColumnWidth, type Figure } from './figures/figure.ts';
 export { atlasInput, type FigureSamples, featureFitInput } from './figures/inputs.ts';
+export { textAt } from './figures/svgText.ts';
 export { TABLE_FORMATS, type TableFormat, type TableFormatName } from './formats.ts';
 export { gasCsv } from './gasCsv.ts';
 export { type Inline, type InlineText, plainText } from './inline.ts';

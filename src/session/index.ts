@@ -23,6 +23,7 @@ export {
   EMPTY_DOCUMENT,
   type LineKey,
   type OwnLines,
+  type PaperSettings,
   type SessionDocument,
   type Settings,
   type Source,

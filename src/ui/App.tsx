@@ -1,4 +1,4 @@
-import { type DragEvent, useState } from 'react';
+import { type DragEvent, lazy, Suspense, useState } from 'react';
 import { useDesk } from './desk/deskStore.ts';
 import { openAll } from './desk/files.ts';
 import { Alerts } from './parts/Alerts.tsx';
@@ -13,6 +13,8 @@ import { StatusBar } from './parts/StatusBar.tsx';
 import { TopBar } from './parts/TopBar.tsx';
 import { useKeys } from './useKeys.ts';
 import { words } from './words.ts';
+
+const PaperSheet = lazy(() => import('./paper/PaperSheet.tsx'));
 
 /** The whole screen: one desk, or an empty one that says what to do. */
 export function App() {
@@ -34,9 +36,15 @@ export function App() {
       )}
       {atDesk ? (
         <main className="desk">
-          <SpectrumView />
+          {tab === 'paper' ? (
+            <Suspense>
+              <PaperSheet />
+            </Suspense>
+          ) : (
+            <SpectrumView />
+          )}
           <SidePanel />
-          <LineTable />
+          {tab !== 'paper' && <LineTable />}
         </main>
       ) : (
         <main className={tab === 'keys' && stage !== 'starting' ? 'desk desk-empty' : 'desk-alone'}>

@@ -165,6 +165,7 @@ export const COMMANDS: readonly Command[] = [
   },
   show('case', 'd'),
   show('gas', 'g'),
+  show('paper', 'p'),
   show('settings', 's'),
   show('reading', 'i'),
   show('list', 'l'),

@@ -8,8 +8,18 @@ import type { RowFilter } from '../table/rowFilter.ts';
 import type { Sorting } from '../table/sortRows.ts';
 import type { DeskRow } from './deskRows.ts';
 
-export type Tab = 'case' | 'gas' | 'settings' | 'reading' | 'list' | 'history' | 'keys';
+export type Tab = 'case' | 'gas' | 'paper' | 'settings' | 'reading' | 'list' | 'history' | 'keys';
 export type GasView = 'ladder' | 'reddening' | 'plasma' | 'motion';
+export type PaperSheetName = 'table' | 'figures' | 'methods' | 'opinion';
+
+/** How the figures of the paper are drawn. */
+export interface PaperFigures {
+  readonly width: 'single' | 'double';
+  readonly panels: number;
+  /** Whether the archive holds a picture of the fit of every accepted feature. */
+  readonly fits: boolean;
+}
+
 export type Theme = 'system' | 'light' | 'dark';
 export type ShownAnalysis = Omit<Analysis, 'samples'>;
 
@@ -59,6 +69,8 @@ export interface DeskFields {
   readonly axisMedium?: AxisMedium;
   readonly tab: Tab;
   readonly gasView: GasView;
+  readonly paperSheet: PaperSheetName;
+  readonly paperFigures: PaperFigures;
   /** Density tried on the ladder, log10 cm^-3; absent = none. */
   readonly ladderLogNe?: number;
   /** A place on the spectrum that something is to be done at by hand, Angstrom of the file. */
@@ -93,6 +105,8 @@ const START: DeskFields = {
   frame: 'observed',
   tab: 'case',
   gasView: 'ladder',
+  paperSheet: 'table',
+  paperFigures: { width: 'double', panels: 5, fits: false },
   filter: {},
   sorting: { column: 'wavelength', direction: 'ascending' },
   theme: 'system',

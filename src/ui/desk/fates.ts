@@ -13,6 +13,8 @@ export const FATES = {
   frame: 'browser',
   axisMedium: 'browser',
   tab: 'browser',
+  paperSheet: 'browser',
+  paperFigures: 'browser',
   gasView: 'browser',
   ladderLogNe: 'browser',
   filter: 'browser',

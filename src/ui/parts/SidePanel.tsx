@@ -1,4 +1,4 @@
-import type { KeyboardEvent } from 'react';
+import { type KeyboardEvent, lazy, Suspense } from 'react';
 import { setDesk, type Tab, useDesk } from '../desk/deskStore.ts';
 import { GasPanel } from '../gas/GasPanel.tsx';
 import { words } from '../words.ts';
@@ -9,10 +9,12 @@ import { ListPanel } from './ListPanel.tsx';
 import { ReadingPanel } from './ReadingPanel.tsx';
 import { SettingsPanel } from './SettingsPanel.tsx';
 
-const TABS: readonly Tab[] = ['case', 'gas', 'settings', 'reading', 'list', 'history', 'keys'];
+const PaperPanel = lazy(() => import('../paper/PaperPanel.tsx'));
+const TABS: readonly Tab[] = ['case', 'gas', 'paper', 'settings', 'reading', 'list', 'history', 'keys'];
 const PANELS = {
   case: CaseView,
   gas: GasPanel,
+  paper: PaperPanel,
   settings: SettingsPanel,
   reading: ReadingPanel,
   list: ListPanel,
@@ -54,7 +56,9 @@ export function SidePanel() {
         ))}
       </div>
       <div key={tab} role="tabpanel" id="side-panel" aria-labelledby={`tab-${tab}`} className="panel" tabIndex={-1}>
-        <Panel />
+        <Suspense>
+          <Panel />
+        </Suspense>
       </div>
     </section>
   );

@@ -1,0 +1,61 @@
+import {
+  DEFAULT_DESIGN,
+  designedRows,
+  type Figure,
+  paperFiles,
+  provenanceJson,
+  TABLE_FORMATS,
+  type TableFormatName,
+  zipArchive,
+} from '../../report/index.ts';
+import { desk, raiseAlert } from '../desk/deskStore.ts';
+import { settled } from '../desk/engineRuns.ts';
+import { download, stem } from '../desk/files.ts';
+import { words } from '../words.ts';
+import { paperMaterial } from './paperMaterial.ts';
+
+const DOTS_PER_MM = 300 / 25.4;
+
+/** Saves the table by its design in one format. */
+export async function saveDesigned(name: TableFormatName): Promise<void> {
+  await settled();
+  const { analysis, history } = desk();
+  if (!analysis) return;
+  const design = history.document.settings.paper?.design ?? DEFAULT_DESIGN;
+  const table = designedRows(analysis.table, design);
+  if (table.rows.length === 0) return raiseAlert(words.paper.noRows);
+  const format = TABLE_FORMATS[name];
+  download(`${stem()}-lines.${format.ending}`, format.write(table, design), format.mediaType);
+}
+
+/** Saves a figure as SVG, or as PNG of 300 dots an inch at its printed size. */
+export async function saveFigure(figure: Figure, as: 'svg' | 'png'): Promise<void> {
+  if (as === 'svg') return download(`${stem()}-${figure.name}.svg`, figure.svg, 'image/svg+xml');
+  const png = await pngOf(figure.svg, figure.widthMm, figure.heightMm);
+  if (png) download(`${stem()}-${figure.name}.png`, png, 'image/png');
+}
+
+async function pngOf(svg: string, widthMm: number, heightMm: number): Promise<Blob | null> {
+  const image = new Image();
+  image.src = URL.createObjectURL(new Blob([svg], { type: 'image/svg+xml' }));
+  await image.decode();
+  const canvas = document.createElement('canvas');
+  canvas.width = Math.round(widthMm * DOTS_PER_MM);
+  canvas.height = Math.round(heightMm * DOTS_PER_MM);
+  canvas.getContext('2d')?.drawImage(image, 0, 0, canvas.width, canvas.height);
+  URL.revokeObjectURL(image.src);
+  return new Promise((resolve) => canvas.toBlob(resolve, 'image/png'));
+}
+
+/** Saves everything for the paper as one ZIP archive. */
+export async function saveArchive(): Promise<void> {
+  await settled();
+  const material = await paperMaterial();
+  if (material) download(`${stem()}-paper.zip`, zipArchive(paperFiles(material)), 'application/zip');
+}
+
+export async function saveProvenance(): Promise<void> {
+  await settled();
+  const { analysis } = desk();
+  if (analysis) download(`${stem()}-provenance.json`, provenanceJson(analysis.methods, new Date().toISOString()), 'application/json');
+}
