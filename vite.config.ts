@@ -36,7 +36,7 @@ const offlineList: Plugin = {
       const hash = createHash('sha256');
       for (const name of names) hash.update(name).update(contents.get(name) ?? '');
       worker.code = worker.code
-        .replace('__KEPT_FILES__', JSON.stringify(names))
+        .replace('__KEPT_FILES__', JSON.stringify(names.map((name) => (name === 'index.html' ? './' : name))))
         .replace('__BUILD_HASH__', JSON.stringify(hash.digest('hex').slice(0, 16)));
     },
   },

@@ -14,15 +14,24 @@ const TYPES: Record<string, string> = {
   '.webmanifest': 'application/manifest+json',
 };
 
-/** The plainest of hosts: files below a sub-path, nothing else. */
-async function plainHost(path: string): Promise<{ server: Server; url: string; asked: string[] }> {
+/** The plainest of hosts: files below a sub-path, nothing else; `index.html` is led to its folder, as some do. `build` puts another hash in place of the build's own. */
+async function plainHost(
+  path: string,
+  build: () => string | undefined = () => undefined,
+): Promise<{ server: Server; url: string; asked: string[] }> {
   const asked: string[] = [];
   const server = createServer((request, response) => {
     const { pathname } = new URL(request.url ?? '/', 'http://host');
     asked.push(pathname);
-    const file = pathname.startsWith(path) ? pathname.slice(path.length) || 'index.html' : '';
+    const asks = pathname.startsWith(path) ? pathname.slice(path.length) : '?';
+    if (asks === 'index.html') return response.writeHead(301, { location: path }).end();
+    const file = asks || 'index.html';
     readFile(join('dist/web', file)).then(
-      (bytes) => response.writeHead(200, { 'content-type': TYPES[extname(file)] ?? 'application/octet-stream' }).end(bytes),
+      (bytes) => {
+        const other = file === 'offline.js' ? build() : undefined;
+        const body = other ? bytes.toString('utf8').replace(/(?<=[`"'])[0-9a-f]{16}(?=[`"'])/, other) : bytes;
+        response.writeHead(200, { 'content-type': TYPES[extname(file)] ?? 'application/octet-stream' }).end(body);
+      },
       () => response.writeHead(404).end(),
     );
   });
@@ -53,6 +62,37 @@ test('the built page opens from a sub-path of a plain host, and after the first 
   await expect(page.locator('.facts')).toContainText('1 accepted');
   await page.screenshot({ path: 'test-results/screens/offline.png' });
   expect(desk.faults).toEqual([]);
+});
+
+test('a newer build waits until it is asked for, and the work is still there under it', async ({ page }) => {
+  let build: string | undefined;
+  const { server, url } = await plainHost('/', () => build);
+  const desk = new Desk(page);
+  await page.goto(url);
+  await expect(async () => expect(await page.evaluate(isKept)).toBe(true)).toPass({ timeout: 20_000 });
+  await page.getByRole('button', { name: /Try the sample/ }).click();
+  await desk.isReady();
+  await desk.chooseRow('[O III] 5006.84');
+  await page.keyboard.press('Enter');
+  await expect(page.locator('.facts')).toContainText('1 accepted');
+  await desk.isIdle();
+  const stores = () => page.evaluate(() => caches.keys());
+  const [old] = await stores();
+  build = '0123456789abcdef';
+  await page.reload();
+  const offer = page.getByRole('button', { name: /A newer release is here/ });
+  await expect(offer).toBeVisible({ timeout: 20_000 });
+  await desk.isReady();
+  await desk.picture('newer-build');
+  expect(await stores()).toContain(old);
+  await offer.click();
+  await expect(offer).toHaveCount(0);
+  await desk.isReady();
+  await expect(page.locator('.facts')).toContainText('1 accepted');
+  await expect(async () => expect(await stores()).toEqual([expect.stringContaining('0123456789abcdef')])).toPass();
+  expect(desk.faults).toEqual([]);
+  server.closeAllConnections();
+  server.close();
 });
 
 test('the page says what it is to be installed', async ({ page }) => {

@@ -48,3 +48,26 @@ test('rows are picked by Ctrl, Shift and keys, decided on at once, taken back at
   await expect(bar).toHaveCount(0);
   expect(desk.faults).toEqual([]);
 });
+
+test('of three thousand rows only those in sight are drawn, and the last is as near as the first', async ({ page }) => {
+  test.setTimeout(120_000);
+  const desk = new Desk(page);
+  await page.goto('/');
+  const lines = Array.from(
+    { length: 3000 },
+    (_, k) => `${(3600 + 2 * k + ((k * 37) % 11) / 10).toFixed(2)},0.05,${1 + ((k * 7919) % 97)},0.5`,
+  );
+  await desk.openText('many.csv', `# air wavelengths\nwavelength,wavelength_err,flux,flux_err\n${lines.join('\n')}\n`);
+  await expect(page.locator('.body-row').first()).toBeVisible({ timeout: 90_000 });
+  await expect(page.locator('.filter')).toContainText('3000 lines');
+  expect(await page.locator('.body-row').count()).toBeLessThan(60);
+  await page.locator('.table-scroll').evaluate((element) => element.scrollTo(0, element.scrollHeight));
+  await page.locator('.body-row', { hasText: '3000' }).last().click();
+  await expect(desk.chosen()).toContainText('Feature 3000');
+  const head = await page.locator('.lines thead').boundingBox();
+  const top = await page.locator('.table-scroll').boundingBox();
+  expect(head && top && Math.abs(head.y - top.y)).toBeLessThan(3);
+  expect(await page.locator('.body-row').count()).toBeLessThan(60);
+  await desk.picture('three-thousand-rows');
+  expect(desk.faults).toEqual([]);
+});

@@ -12,7 +12,8 @@ declare const __BUILD_HASH__: string;
 /** Stores of this page only: several copies may live under one origin. */
 const FAMILY = `linewright ${self.registration.scope} `;
 const STORE = FAMILY + __BUILD_HASH__;
-const page = () => new URL('index.html', self.registration.scope).href;
+/** The page under the address that every host answers without sending elsewhere: some lead from `index.html` to it. */
+const page = () => self.registration.scope;
 
 self.addEventListener('install', (event) => event.waitUntil(keepAll()));
 self.addEventListener('activate', (event) => event.waitUntil(takeOver()));

@@ -25,7 +25,9 @@ export function CompanionStrips({ row, candidate }: { row: DeskRow; candidate: C
   const fwhmKms = Number.isFinite(fwhm) ? (SPEED_OF_LIGHT_KMS * fwhm) / row.feature.centroid : LEAST_KMS / HALF_FWHM;
   return (
     <section className="companions" aria-label={label.companions}>
-      <h3 title={label.companionStrips}>{label.companions}</h3>
+      <h3 title={label.companionStrips}>
+        {label.companions} <span className="companion-outcome">{samples && label.companionsScale}</span>
+      </h3>
       <ul>
         {candidate.companions.map((companion) => (
           <li key={`${companion.label} ${companion.expectedAt}`} className={`companion outcome-${companion.outcome}`}>
