@@ -55,6 +55,16 @@ export function featureViews(parts: Parts): FeatureView[] {
   });
 }
 
+/** The same features with other verdicts, before the candidates are weighed anew. */
+export function withVerdicts(features: readonly FeatureView[], byFeature: readonly (Verdict | undefined)[]): FeatureView[] {
+  return features.map(({ verdict: _verdict, name: _name, ...feature }, k) => {
+    const verdict = byFeature[k];
+    const candidates = feature.candidates.filter((each) => !verdict?.turnedDown?.some((keys) => sameKeys(keys, each.keys)));
+    const name = nameInForce(candidates, feature.noneProbability, feature.measured, verdict);
+    return { ...feature, ...(verdict ? { verdict } : {}), ...(name ? { name } : {}) };
+  });
+}
+
 /** Stages, verdicts and names put together as they are shown and printed. */
 export function assemble(parts: Parts, features: readonly FeatureView[], gas: Gas): Analysis {
   const { data, material, measurement, naming, namingSettings } = parts;

@@ -16,8 +16,8 @@ import { DEFAULT_GAS_SETTINGS, type Gas, type GasSettings } from '../plasma/inde
 import { ProblemError } from '../problems/index.ts';
 import type { ByteSource, ReadingChoices } from '../readers/index.ts';
 import { matchVerdicts, type OwnLines, type Settings, type Verdict } from '../session/index.ts';
-import type { Analysis, Progress } from './analysis.ts';
-import { assemble, featureViews } from './assemble.ts';
+import type { Analysis, FeatureView, Progress } from './analysis.ts';
+import { assemble, featureViews, withVerdicts } from './assemble.ts';
 import { fixedNames } from './fixedNames.ts';
 import { marksOf } from './marksOf.ts';
 import { guessKind, type Material, readMaterial, type SourceKind } from './material.ts';
@@ -29,6 +29,8 @@ import { sourceHash } from './sourceHash.ts';
 /** How a run is watched and stopped. */
 export interface RunControl {
   readonly progress?: (progress: Progress) => void;
+  /** Told what the names of before say of the gas under the new verdicts and settings, at once: the candidates are weighed after that. */
+  readonly gas?: (gas: Gas) => void;
   readonly signal?: AbortSignal;
 }
 
@@ -63,6 +65,9 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
   let last: { readonly fitted: FittedSpectrum; readonly measurement: Measurement; readonly edits: MeasureSettings['edits'] } | undefined;
   const named = stage<Naming>();
   const described = stage<Gas>();
+  let before:
+    | { readonly views: readonly FeatureView[]; readonly measured: number; readonly z: number; readonly measurement?: Measurement }
+    | undefined;
 
   return {
     dataWith: lists,
@@ -117,6 +122,16 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
       );
       const namingSettings: NamingSettings = { ...DEFAULT_NAMING_SETTINGS, ...settings.naming, medium: what.reading.medium };
       const fixed = fixedNames(byFeature, list);
+      const gasSettings: GasSettings = { ...DEFAULT_GAS_SETTINGS, ...settings.gas };
+      const { medium } = what.reading;
+      const gasUnder = (views: readonly FeatureView[], z: number, measurement: Measurement | undefined): Promise<Gas> => {
+        const lines = plasmaLines(views, { data: list, medium, z, leastProbability: gasSettings.leastProbability });
+        return described.of([measured.stamp(), tied.stamp(), lines, gasSettings, namingSettings, settings.ownLines], () =>
+          run('gas', () => plasmaStage({ data: list, lines, spectrum, measurement, medium, z, settings: gasSettings, namingSettings })),
+        );
+      };
+      if (control.gas && before?.measured === measured.stamp())
+        control.gas(await gasUnder(withVerdicts(before.views, byFeature), before.z, before.measurement));
       const naming = await named.of([material.stamp(), measured.stamp(), namingSettings, fixed, settings.ownLines], () =>
         run('naming', (progress) => nameMarks(marks, list, namingSettings, fixed, { progress, signal: control.signal })),
       );
@@ -142,15 +157,8 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
         timings,
       };
       const views = featureViews(parts);
-      const gasSettings: GasSettings = { ...DEFAULT_GAS_SETTINGS, ...settings.gas };
-      const { medium } = what.reading;
-      const lines = plasmaLines(views, { data: list, medium, z: naming.z, leastProbability: gasSettings.leastProbability });
-      const gas = await described.of([measured.stamp(), tied.stamp(), lines, gasSettings, namingSettings, settings.ownLines], () =>
-        run('gas', () =>
-          plasmaStage({ data: list, lines, spectrum, measurement, medium, z: naming.z, settings: gasSettings, namingSettings }),
-        ),
-      );
-      return assemble(parts, views, gas);
+      before = { views, measured: measured.stamp(), z: naming.z, measurement };
+      return assemble(parts, views, await gasUnder(views, naming.z, measurement));
     },
     shapesAt: (at) => (last ? shapesOfFeature(last.fitted, last.edits ?? [], at) : []),
     limitAt: (at) => last && fluxLimit(last.fitted, last.measurement.model, at),

@@ -1,4 +1,5 @@
 import type { FeatureShape, FluxLimit } from '../measure/index.ts';
+import type { Gas } from '../plasma/index.ts';
 import type { Problem, Remark } from '../problems/index.ts';
 import type { OwnLines, Settings, Verdict } from '../session/index.ts';
 import type { Analysis, Progress, SamplesView } from './analysis.ts';
@@ -58,6 +59,8 @@ export type WorkerAnswer =
   /** `sha256`: of the file's bytes, hex. */
   | { readonly say: 'opened'; readonly id: number; readonly kind: 'spectrum' | 'line-list'; readonly sha256: string }
   | { readonly say: 'progress'; readonly id: number; readonly progress: Progress }
+  /** While an analysis is going: the gas under its verdicts, by the names of before. */
+  | { readonly say: 'gas'; readonly id: number; readonly gas: Gas }
   /** `samples` is absent when the screen already holds those of `samplesStamp`. */
   | {
       readonly say: 'analysed';

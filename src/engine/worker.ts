@@ -69,6 +69,7 @@ async function start(id: number, bundleUrl: string): Promise<void> {
 async function analyse(running: Engine, request: Extract<WorkerRequest, { ask: 'analyse' }>): Promise<void> {
   const { samples, ...analysis } = await running.analyse(request.settings, request.verdicts, {
     progress: (progress) => say({ say: 'progress', id: request.id, progress }),
+    gas: (gas) => say({ say: 'gas', id: request.id, gas }),
   });
   if (samples?.model !== lastSamples.samples?.model) lastSamples = { samples, stamp: lastSamples.stamp + 1 };
   const known = request.samplesKnown === lastSamples.stamp;

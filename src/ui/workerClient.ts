@@ -8,6 +8,7 @@ import type {
   WorkerAnswer,
   WorkerRequest,
 } from '../engine/index.ts';
+import type { Gas } from '../plasma/index.ts';
 import type { Problem } from '../problems/index.ts';
 import type { OwnLines, Settings, Verdict } from '../session/index.ts';
 
@@ -56,9 +57,10 @@ interface Pending {
 /**
  * @param bundleUrl where the line list is
  * @param progress  told how far a run is
+ * @param gas       told what the verdicts of a run mean for the gas, before its names are weighed
  * @param fault     words for a thread that ended by itself
  */
-export function workerClient(bundleUrl: string, progress: (p: Progress) => void, fault: string): WorkerClient {
+export function workerClient(bundleUrl: string, progress: (p: Progress) => void, gas: (gas: Gas) => void, fault: string): WorkerClient {
   let worker: Worker | undefined;
   let pending = new Map<number, Pending>();
   let samples: { readonly samples?: SamplesView; readonly stamp?: number } = {};
@@ -82,6 +84,7 @@ export function workerClient(bundleUrl: string, progress: (p: Progress) => void,
 
   const hear = (answer: WorkerAnswer) => {
     if (answer.say === 'progress') return progress(answer.progress);
+    if (answer.say === 'gas') return gas(answer.gas);
     const waiting = pending.get(answer.id);
     pending.delete(answer.id);
     if (answer.say === 'problem') waiting?.reject(new AnsweredProblem(answer.problem));

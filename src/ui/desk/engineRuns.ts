@@ -18,6 +18,10 @@ function client(): WorkerClient {
       const { run } = desk();
       if (run) setDesk({ run: { ...run, stage, share } });
     },
+    (gas) => {
+      const { analysis } = desk();
+      if (analysis) setDesk({ analysis: { ...analysis, gas } });
+    },
     words.run.failed,
   );
   return made;
