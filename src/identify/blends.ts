@@ -1,11 +1,12 @@
-import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
-import type { Mark } from './naming.ts';
 import type { Option } from './options.ts';
 
 /** An option with the flux that the rest of the spectrum predicts for it. */
 export interface Single extends Option {
   readonly logPredicted: number;
+  /** One sigma of `logPredicted`, dex: over all, upwards, downwards. */
   readonly err: number;
+  readonly errUp: number;
+  readonly errDown: number;
   /** Weighted number of other lines of the ion that were seen. */
   readonly seen: number;
   /** Nats against every name of the mark that leaves this line out. */
@@ -16,15 +17,14 @@ export interface Single extends Option {
 const LEAST_SHARE = 0.07;
 /** Parts of a blend stand within this many FWHM of each other. */
 const BLEND_REACH_FWHM = 1.1;
-/** Width of a mark whose width is unknown, in units of its error times this, and at least this many km/s. */
-const UNKNOWN_FWHM_SIGMAS = 3;
-const UNKNOWN_FWHM_KMS = 25;
 
-/** Pairs and triples of lines near enough to be measured as one, each carrying a share that matters. */
-export function blendsOf(mark: Mark, singles: readonly Single[]): Single[][] {
-  const reach =
-    BLEND_REACH_FWHM *
-    (mark.fwhm ?? Math.max(UNKNOWN_FWHM_SIGMAS * mark.wavelengthErr, (UNKNOWN_FWHM_KMS / SPEED_OF_LIGHT_KMS) * mark.wavelength));
+/**
+ * Pairs and triples of lines near enough to be measured as one, each carrying a share that matters.
+ *
+ * @param width FWHM of the feature, or what is unresolved, Angstrom
+ */
+export function blendsOf(width: number, singles: readonly Single[]): Single[][] {
+  const reach = BLEND_REACH_FWHM * width;
   const strong = [...singles].sort((a, b) => b.logPredicted - a.logPredicted).slice(0, 6);
   const blends: Single[][] = [];
   for (let a = 0; a < strong.length; a++) {

@@ -28,8 +28,8 @@ interface Version {
 }
 
 /**
- * The case of one mark. Names with the same leading line (the line alone, or with fainter neighbours blended in) are versions of one candidate: the best
- * stands for them with their joint probability, that of the feature being this line in the main.
+ * The case of one mark. Names that hold the same line (alone, or blended with neighbours) are versions of one candidate: the best stands for them with their
+ * joint probability, that of this line carrying at least a quarter of the feature.
  *
  * @param mark   with the drift of the calibration taken off
  * @param measured its wavelength as measured, vacuum Angstrom
@@ -57,7 +57,7 @@ export function caseOf(
     .map((weighed): Version => {
       const looked = !isLocal(data, weighed.lines[0]) && mark.flux > 0;
       const companions = looked ? findCompanions(mark, weighed.lines[0], weighed.shares[0], marks, kin, data, survey, model, settings) : [];
-      const evidence = evidenceOf(mark, weighed, companions, data, survey, settings.medium);
+      const evidence = evidenceOf(mark, weighed, companions, data, survey, model.strangers, settings.medium);
       return {
         weighed,
         companions: companions.map(({ finding }) => ({ ...finding, expectedAt: asMeasured(inferred.drift, finding.expectedAt) })),
@@ -71,7 +71,7 @@ export function caseOf(
     const accepted: Evidence = { kind: 'verdict', nats: 0, sentence: 'You accepted this name.' };
     return { candidates: [candidateOf(mark, { ...only, evidence: [...only.evidence, accepted] }, 1, measured, data)], noneProbability: 0 };
   }
-  const joined = joinVersions(versions, data, UNRESOLVED_FWHM * (mark.fwhm ?? 0));
+  const joined = joinVersions(versions, data, UNRESOLVED_FWHM * (mark.fwhm ?? 0)).map(tempered);
   const top = Math.max(0, ...joined.map((v) => v.odds));
   const none = Math.exp(-top);
   const weights = joined.map((v) => Math.exp(v.odds - top));
@@ -84,6 +84,22 @@ export function caseOf(
       .filter((c, i) => i < ALWAYS_SHOWN || c.probability >= LEAST_PROBABILITY),
     noneProbability: none / sum,
   };
+}
+
+/**
+ * The pieces of a case are weighed as if they were independent; they are not: the ion's scale, the velocity and what the list leaves out are learned from the
+ * same names. What the pieces are worth together was measured on the simulated nebulae of tests/identify (reliability), the only number taken from them.
+ */
+const WORTH = 0.85;
+
+function tempered(version: Version): Version {
+  const nats = (WORTH - 1) * version.odds;
+  const piece: Evidence = {
+    kind: 'prior',
+    nats,
+    sentence: `The pieces lean on the same names: together they are worth ${WORTH} of their sum, as simulated nebulae show.`,
+  };
+  return { ...version, evidence: [...version.evidence, piece], odds: version.odds + nats };
 }
 
 /**
@@ -110,11 +126,14 @@ function joinVersions(versions: readonly Version[], data: AtomicData, unresolved
   });
 }
 
-/** Same leading line, or leading lines of one multiplet that this mark cannot tell apart. */
+/** A line that carries this much of a feature names it. */
+const NAMING_SHARE = 0.25;
+
+/** The leading line of the first names the second too, or their leading lines are of one multiplet and this mark cannot tell them apart. */
 function isOneName(a: Weighed, b: Weighed, { lines }: AtomicData, unresolved: number): boolean {
   const [p] = a.lines;
   const [q] = b.lines;
-  if (p === q) return true;
+  if (b.lines.some((line, k) => line === p && b.shares[k] >= NAMING_SHARE)) return true;
   if (lines.ion[p] !== lines.ion[q]) return false;
   const kin = (lines.multiplet[p] > 0 && lines.multiplet[p] === lines.multiplet[q]) || lines.upperId[p] === lines.upperId[q];
   return kin && Math.abs(lines.wavelengthVac[p] - lines.wavelengthVac[q]) < Math.max(Math.min(a.sigma, b.sigma), unresolved);

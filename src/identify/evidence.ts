@@ -14,6 +14,7 @@ export function evidenceOf(
   companions: readonly WeighedCompanion[],
   data: AtomicData,
   survey: Survey,
+  strangers: number,
   medium: 'air' | 'vacuum' = 'vacuum',
 ): Evidence[] {
   const evidence: Evidence[] = [
@@ -25,15 +26,18 @@ export function evidenceOf(
     evidence.push({ kind: 'companion', nats, sentence: companionSentence(mark, finding, sameUpper, data, medium) });
   }
   const further: Evidence[] = [
+    { kind: 'ion', nats: weighed.familyNats, sentence: familySentence(weighed, data) },
     { kind: 'ion', nats: weighed.owedNats, sentence: owedSentence(mark, weighed, data) },
     { kind: 'width', nats: weighed.widthNats, sentence: widthSentence(mark, weighed, survey) },
     { kind: 'prior', nats: weighed.claimNats, sentence: claimSentence(weighed) },
   ];
   const told = further.filter(({ nats }) => Math.abs(nats) >= LEAST_TOLD);
   const untold = further.reduce((sum, { nats }) => sum + (Math.abs(nats) < LEAST_TOLD ? nats : 0), 0);
-  return [...evidence, ...told, { kind: 'prior', nats: weighed.priorNats + untold, sentence: priorSentence(weighed, data) }];
+  return [...evidence, ...told, { kind: 'prior', nats: weighed.priorNats + untold, sentence: priorSentence(weighed, data, strangers) }];
 }
 
+/** Weighted sightings from which an ion counts as seen elsewhere. */
+const ION_SEEN = 0.7;
 /** Pieces below this many nats have no sentence of their own. */
 const LEAST_TOLD = 0.02;
 
@@ -50,7 +54,7 @@ function strengthSentence(mark: Mark, { lines, logPredicted, logPredictedErr, io
   const ratio = 10 ** (Math.log10(Math.abs(mark.flux)) - logPredicted);
   const factor = 10 ** logPredictedErr;
   const basis =
-    ionSeen > 0.7
+    ionSeen > ION_SEEN
       ? `from what ${ionName(data, lines[0])} shows in other features`
       : `from typical abundances (no other line of ${ionName(data, lines[0])} is recognised)`;
   return `The flux is ${ratio >= 100 || ratio < 0.01 ? ratio.toExponential(1) : Number(ratio.toPrecision(2))} times the one expected ${basis}, which is known within a factor ${factor.toFixed(factor < 3 ? 1 : 0)}.`;
@@ -79,10 +83,10 @@ function companionSentence(
   }
 }
 
-function priorSentence({ lines }: Weighed, data: AtomicData): string {
+function priorSentence({ lines }: Weighed, data: AtomicData, strangers: number): string {
   const blend = lines.length > 1 ? ` A blend of ${lines.length} is less common than one line.` : '';
   const local = isLocal(data, lines[0]) ? ' Reduced spectra have most of their sky taken off.' : '';
-  return `About six features in a hundred belong to no line of the list.${blend}${local}`;
+  return `About ${Math.max(1, Math.round(100 * strangers))} features in a hundred belong to no line of the list.${blend}${local}`;
 }
 
 const claimSentence = ({ lines }: Weighed) =>
@@ -93,6 +97,13 @@ function owedSentence(mark: Mark, { lines, logPredicted, logPredictedErr }: Weig
   const share = Number((10 ** (logPredicted - Math.log10(Math.abs(mark.flux)))).toPrecision(2));
   const sure = 10 ** logPredictedErr;
   return `What is known of ${names} predicts ${share} of this flux here, within a factor ${sure.toFixed(sure < 3 ? 1 : 0)}, and no other feature at this place can be that line.`;
+}
+
+function familySentence({ lines, ionSeen }: Weighed, data: AtomicData): string {
+  const name = ionName(data, lines[0]);
+  return ionSeen > ION_SEEN
+    ? `${name} is recognised by other features too.`
+    : `No other feature is recognised as ${name}: an ion known by one line alone is less often there.`;
 }
 
 function widthSentence(mark: Mark, { lines }: Weighed, { fwhmKms: typical }: Survey): string {

@@ -9,7 +9,7 @@ import { factsOf } from './lineFacts.ts';
 import type { SystemModel } from './model.ts';
 import type { FixedName, Mark, NamingSettings, ObjectKind } from './naming.ts';
 import { rulesOf } from './rules.ts';
-import { type FamilyScale, scalePosterior, summaryOf } from './scalePosterior.ts';
+import { type FamilyScale, logAbsent, scalePosterior, summaryOf } from './scalePosterior.ts';
 import { scalePriors } from './scalePriors.ts';
 import { sightingsOf } from './sightings.ts';
 import { startModel } from './startModel.ts';
@@ -25,10 +25,14 @@ export interface Inferred {
   /** The marks with the drift of the wavelength calibration taken off. */
   readonly placed: readonly Mark[];
   readonly drift: Drift;
+  /** Log likelihood of the marks, and of the strong lines that are not there, against features of no list, nats. */
+  readonly evidence: number;
   /** As set, or as estimated from the ion scales. */
   readonly kind: ObjectKind;
 }
 
+/** No single mark speaks louder than this for the redshift it is named at. */
+const LEAST_NONE = 1e-6;
 const MOST_ROUNDS = 7;
 const LEAST_ROUNDS = 4;
 /** Settled when no probability of a leading name moved more than this. */
@@ -49,6 +53,7 @@ export function infer(
   z0: number,
   zErr0: number,
   fixed: readonly FixedName[],
+  mostRounds = MOST_ROUNDS,
 ): Inferred {
   const facts = factsOf(data);
   const rules = rulesOf(marks.length, fixed);
@@ -59,7 +64,8 @@ export function infer(
   let scales: FamilyScale[] = [];
   let kind = settings.kind;
   let weighings: Weighing[] = [];
-  for (let round = 0; round < MOST_ROUNDS; round++) {
+  let missed = 0;
+  for (let round = 0; round < mostRounds; round++) {
     if (round > 0) {
       model = updateModel(model, placed, weighings, data, settings.z !== undefined);
       const coarse = fitDrift(startPoints(marks, data, model.z), survey.low, survey.high);
@@ -80,13 +86,15 @@ export function infer(
       scalePosterior(prior, sightings.byFamily.get(family) ?? [], absences[family], model.leftOut),
     );
     scales = posteriors.map((posterior) => summaryOf(posterior));
+    missed = scales.reduce((sum, scale, family) => sum + logAbsent(scale.mean, absences[family], model.leftOut), 0);
     const shared = { data, facts, settings, survey, model, sightings, posteriors, scales, claims: claimsOf(weighings) };
     const next = placed.map((mark, j) => weigh(mark, j, { ...shared, rule: rules[j] }));
     const moved = round + 1 < LEAST_ROUNDS ? 1 : largestMove(weighings, next);
     weighings = next;
     if (moved < SETTLED) break;
   }
-  return { model, weighings, scales, placed, drift, kind };
+  const named = weighings.reduce((sum, { noneProbability }) => sum - Math.log(Math.max(LEAST_NONE, noneProbability)), 0);
+  return { model, weighings, scales, placed, drift, kind, evidence: named + missed };
 }
 
 /** Raw velocities of the likely names against the systemic one. */

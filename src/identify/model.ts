@@ -13,6 +13,8 @@ export interface SystemModel {
   readonly logZero: number;
   /** Rough reddening, c(Hbeta). */
   readonly cHbeta: number;
+  /** Share of features that belong to no line of the list: missing entries, artefacts. */
+  readonly strangers: number;
   /** What the list leaves out. */
   readonly leftOut: LeftOut;
   /** The flux zero comes from lines of hydrogen. */

@@ -4,6 +4,7 @@ import { caseOf } from './caseOf.ts';
 import { kinOf, missingLines } from './companions.ts';
 import { asMeasured, shownDrift } from './drift.ts';
 import { infer } from './inference.ts';
+import { judgeRedshifts } from './judgeRedshifts.ts';
 import { factsOf } from './lineFacts.ts';
 import { predictedLog } from './model.ts';
 import type { FixedName, Mark, Naming, NamingSettings, ObjectKind } from './naming.ts';
@@ -38,7 +39,9 @@ export function nameMarks(
   const place = new Map(order.map((j, k) => [j, k]));
   const survey = surveyOf(sorted);
   const given = settings.z !== undefined;
-  const redshifts = given ? [{ z: settings.z ?? 0, zErr: 0, probability: 1, reason: 'given' }] : findRedshift(sorted, data, survey);
+  const redshifts = given
+    ? [{ z: settings.z ?? 0, zErr: 0, probability: 1, reason: 'given' }]
+    : judgeRedshifts(findRedshift(sorted, data, survey), sorted, data, settings);
   control.signal?.throwIfAborted();
   control.progress?.(0.3);
   if (!given && redshifts[0].probability < 0.9) {

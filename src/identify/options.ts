@@ -29,16 +29,23 @@ const BLEND_REACH_FWHM = 0.8;
 /**
  * All lines within the tolerance of a mark: `toleranceKms`, or `toleranceSigma` times the mark's error, or three errors of the line's own wavelength.
  *
+ * @param width FWHM of the feature, or what is unresolved, Angstrom
  * @param model systemic velocity, its trend with the ion, and the extra scatter of centroids
  */
-export function optionsOf(mark: Mark, data: AtomicData, settings: NamingSettings, { z, dispersionKms, trendKms }: SystemModel): Option[] {
+export function optionsOf(
+  mark: Mark,
+  width: number,
+  data: AtomicData,
+  settings: NamingSettings,
+  { z, dispersionKms, trendKms }: SystemModel,
+): Option[] {
   if (mark.artefact) return [];
   const { lines } = data;
   const { local, absorbs, hardness } = factsOf(data);
   const absorbing = mark.flux < 0 ? 1 : 0;
   const reach = Math.max((settings.toleranceKms / SPEED_OF_LIGHT_KMS) * mark.wavelength, settings.toleranceSigma * mark.wavelengthErr);
   // two unresolved lines make a feature between them: either may lie further off than the tolerance
-  const blendReach = absorbing === 1 ? 0 : BLEND_REACH_FWHM * (mark.fwhm ?? 0);
+  const blendReach = absorbing === 1 ? 0 : BLEND_REACH_FWHM * width;
   const widest = Math.max(reach, blendReach) + 2;
   const options: Option[] = [];
   const consider = (shift: number, inPlace: number) => {

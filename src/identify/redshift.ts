@@ -2,6 +2,7 @@ import type { AtomicData } from '../atomic/index.ts';
 import { median } from '../numeric/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import type { Mark, RedshiftHypothesis } from './naming.ts';
+import { roughDimming } from './roughReddening.ts';
 import type { Survey } from './survey.ts';
 
 const LOWEST_Z = -0.01;
@@ -18,13 +19,18 @@ const PATTERN_MARKS = 60;
 const AGREE_KMS = 120;
 /** Scatter of ln flux about the reference nebula: one sigma of a factor six. */
 const LOG_FLUX_SCATTER = 0.8;
-const MOST_HYPOTHESES = 6;
+const MOST_HYPOTHESES = 16;
 /**
  * Half of all spectra are of gas in our own and the nearest galaxies; the other half is spread over some two thousand distinguishable redshifts. A hypothesis
  * nearby starts with this advantage, nats (our estimate).
  */
 const NEARBY_Z = 0.005;
 const NEARBY_NATS = 4;
+/** Spectra of far objects are rarer, nats for a factor e in 1 + z (our estimate). */
+const FAR_NATS = 1;
+/** Bright marks that an object should explain, and what each costs that stays without a strong line, nats. */
+const BRIGHT_MARKS = 10;
+const UNEXPLAINED_NATS = 1.5;
 const FEW_MARKS = 3;
 const FEW_MARKS_TRUST = 0.4;
 
@@ -32,6 +38,7 @@ interface Anchor {
   readonly line: number;
   readonly wavelength: number;
   readonly logStrength: number;
+  readonly dimming: number;
 }
 
 /**
@@ -83,7 +90,12 @@ function anchorsOf(data: AtomicData): Anchor[] {
     const nature = lines.nature(line);
     if (nature === 'sky' || nature === 'telluric' || nature === 'interstellar' || nature === 'raman') continue;
     if (lines.logStrength[line] >= ANCHOR_LOG_STRENGTH)
-      anchors.push({ line, wavelength: lines.wavelengthVac[line], logStrength: lines.logStrength[line] });
+      anchors.push({
+        line,
+        wavelength: lines.wavelengthVac[line],
+        logStrength: lines.logStrength[line],
+        dimming: roughDimming(lines.wavelengthVac[line]),
+      });
   }
   return anchors.sort((a, b) => b.logStrength - a.logStrength).slice(0, MOST_ANCHORS);
 }
@@ -103,15 +115,15 @@ function scoreRedshift(z0: number, marks: readonly Mark[], anchors: readonly Anc
     matches = matchAnchors(z, marks, anchors, survey);
   }
   if (matches.length === 0) return { z: z0, zErr: 0, score: Number.NEGATIVE_INFINITY, matched: [] };
-  const offset = median(matches.map(({ mark, anchor }) => Math.log10(mark.flux) - anchor.logStrength));
+  const dimmed = dimmingOf(matches);
   const density = marks.length / Math.max(0.01, Math.log(survey.high / survey.low));
-  let score = Math.abs(z) < NEARBY_Z ? NEARBY_NATS : -0.15 * Math.log1p(Math.abs(z));
+  let score = Math.abs(z) < NEARBY_Z ? NEARBY_NATS : -FAR_NATS * Math.log1p(Math.abs(z));
   const used = new Set<Mark>();
   const ratios: number[] = [];
   for (const { mark, anchor, toleranceLog } of matches) {
     if (used.has(mark)) continue;
     used.add(mark);
-    const off = (Math.log10(mark.flux) - anchor.logStrength - offset) / LOG_FLUX_SCATTER;
+    const off = (Math.log10(mark.flux) - anchor.logStrength - dimmed(anchor)) / LOG_FLUX_SCATTER;
     // a chance mark within the tolerance has this probability; an agreement in flux is worth the rest
     const chance = Math.min(0.9, density * 2 * toleranceLog);
     score += Math.min(6, -Math.log(chance)) * Math.exp(-0.5 * off * off) - 0.25 * Math.min(9, off * off);
@@ -120,16 +132,35 @@ function scoreRedshift(z0: number, marks: readonly Mark[], anchors: readonly Anc
   for (const anchor of anchors) {
     const at = anchor.wavelength * (1 + z);
     if (at < survey.low || at > survey.high || matches.some((m) => m.anchor === anchor)) continue;
-    const above = anchor.logStrength + offset - survey.logLimitAt(at);
+    const above = anchor.logStrength + dimmed(anchor) - survey.logLimitAt(at);
     if (above > 0) score -= Math.min(2, above / LOG_FLUX_SCATTER) * 0.7;
   }
   // bright marks left without any explanation speak against
-  const brightest = [...marks].sort((a, b) => b.flux - a.flux).slice(0, 6);
-  for (const mark of brightest) if (!used.has(mark)) score -= 1.5;
+  const brightest = [...marks].sort((a, b) => b.flux - a.flux).slice(0, BRIGHT_MARKS);
+  for (const mark of brightest) if (!used.has(mark)) score -= UNEXPLAINED_NATS;
   const centre = median(ratios);
   const scatter = median(ratios.map((r) => Math.abs(r - centre))) * 1.4826;
   return { z, zErr: Math.max(scatter / Math.sqrt(ratios.length), 1e-7), score, matched: matches.map((m) => m.anchor.line) };
 }
+
+/** Reddening is looked for in these steps, c(Hbeta); more than the first costs that many nats a unit, on a scatter of one dex. */
+const REDDENINGS = [0, 0.5, 1, 1.5, 2, 2.5, 3] as const;
+const REDDENING_COST = 0.1;
+
+/** log10 flux minus log10 strength expected of an anchor: flux zero and reddening that bring the matched fluxes nearest to the strengths, by least absolute deviation. */
+function dimmingOf(matches: readonly { mark: Mark; anchor: Anchor }[]): (anchor: Anchor) => number {
+  let best = { spread: Number.POSITIVE_INFINITY, offset: 0, c: 0 };
+  for (const c of REDDENINGS) {
+    const excess = matches.map(({ mark, anchor }) => Math.log10(mark.flux) - anchor.logStrength + c * anchor.dimming);
+    const offset = median(excess);
+    const spread = excess.reduce((sum, e) => sum + Math.abs(e - offset), 0) / excess.length + REDDENING_COST * c;
+    if (spread < best.spread) best = { spread, offset, c };
+    if (matches.length < LEAST_FOR_REDDENING) break;
+  }
+  return ({ dimming }) => best.offset - best.c * dimming;
+}
+
+const LEAST_FOR_REDDENING = 4;
 
 function matchAnchors(
   z: number,

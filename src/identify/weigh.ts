@@ -27,11 +27,12 @@ export function weigh(mark: Mark, j: number, context: WeighContext): Weighing {
     cache.set(family, scale);
     return scale;
   };
-  const singles = likelyOnes(mark, optionsOf(mark, data, settings, model), context, scaleWithout).map((single) => ({
+  const width = mark.fwhm ?? context.survey.unresolvedAt(mark);
+  const singles = likelyOnes(mark, optionsOf(mark, width, data, settings, model), context, scaleWithout).map((single) => ({
     ...single,
     owed: owedBy(mark, j, single, context),
   }));
-  const names = [...singles.filter((s) => s.within).map((s) => [s]), ...blendsOf(mark, singles)].filter(
+  const names = [...singles.filter((s) => s.within).map((s) => [s]), ...blendsOf(width, singles)].filter(
     (parts) => !rule.not.some((not) => sameLines(not, parts)),
   );
   const forced = rule.lines;
@@ -67,11 +68,12 @@ function likelyOnes(mark: Mark, options: readonly Option[], context: WeighContex
   let best = Number.NEGATIVE_INFINITY;
   options.forEach((option, k) => {
     const scale = scaleOf(family[option.line]);
-    const excess = (logFlux - predictedLog(facts, option.line, model) - scale.mean) ** 2;
-    const variance = facts.errDex[option.line] ** 2 + scale.variance;
+    const excess = logFlux - predictedLog(facts, option.line, model) - scale.mean;
+    const squared = excess * excess;
+    const variance = facts.errDex[option.line] ** 2 + (excess > 0 ? scale.varianceUp : scale.varianceDown);
     // a line outside the tolerance can only be a part of a blend: its own place says nothing
     const pull = option.within ? option.off / option.sigma : 0;
-    rough[k] = -0.5 * pull * pull - Math.min((0.5 * excess) / variance, WIDE_NATS + (0.5 * excess) / (variance + WIDE_DEX * WIDE_DEX));
+    rough[k] = -0.5 * pull * pull - Math.min((0.5 * squared) / variance, WIDE_NATS + (0.5 * squared) / (variance + WIDE_DEX * WIDE_DEX));
     if (option.within && rough[k] > best) best = rough[k];
   });
   const wanted = context.rule.lines;
@@ -90,6 +92,8 @@ function likelyOnes(mark: Mark, options: readonly Option[], context: WeighContex
       within,
       logPredicted,
       err: Math.sqrt(facts.errDex[line] ** 2 + scale.variance),
+      errUp: Math.sqrt(facts.errDex[line] ** 2 + scale.varianceUp),
+      errDown: Math.sqrt(facts.errDex[line] ** 2 + scale.varianceDown),
       seen: scale.seen,
       owed: 0,
     });
@@ -125,6 +129,8 @@ function farSingle(mark: Mark, line: number, context: WeighContext, scaleOf: (fa
     sigma: Math.hypot(mark.wavelengthErr, data.lines.wavelengthErr[line], (model.dispersionKms / SPEED_OF_LIGHT_KMS) * mark.wavelength),
     logPredicted: predictedLog(facts, line, model) + scale.mean,
     err: Math.hypot(facts.errDex[line], Math.sqrt(scale.variance)),
+    errUp: Math.hypot(facts.errDex[line], Math.sqrt(scale.varianceUp)),
+    errDown: Math.hypot(facts.errDex[line], Math.sqrt(scale.varianceDown)),
     seen: scale.seen,
     owed: 0,
   };

@@ -16,6 +16,8 @@ export interface Weighed {
   readonly claimNats: number;
   /** What the place owes: a line that the rest of the spectrum predicts here, that no other feature can be, is missing if this name is wrong. */
   readonly owedNats: number;
+  /** An ion that shows nothing else here may not be here at all. */
+  readonly familyNats: number;
   /** Weighted number of other lines of the (main) ion that were seen. */
   readonly ionSeen: number;
   readonly probability: number;
@@ -24,7 +26,8 @@ export interface Weighed {
 }
 
 /** Log odds of a name against "none of these". */
-export const logOddsOf = (w: Weighed): number => w.wavelengthNats + w.strengthNats + w.widthNats + w.priorNats + w.claimNats + w.owedNats;
+export const logOddsOf = (w: Weighed): number =>
+  w.wavelengthNats + w.strengthNats + w.widthNats + w.priorNats + w.claimNats + w.owedNats + w.familyNats;
 
 export interface Weighing {
   readonly candidates: readonly Weighed[];

@@ -12,6 +12,9 @@ const UNKNOWN_SNR = 20;
 /** Widths of things that are no line, and of the few lines unlike the rest, in ln FWHM. */
 const STRANGE_SCATTER = 1;
 const STRANGE_SHARE = 0.1;
+/** Most features without a name are lines that no list holds, as wide as the others; the rest are artefacts. */
+const STRANGE_SHARE_OF_STRANGERS = 0.4;
+const LEAST_DENSITY = 0.01;
 const FWHM_PER_SIGMA = 2.3548;
 
 /** Median FWHM of the brighter half of the emission marks, km/s; undefined when too few have a width. */
@@ -35,6 +38,8 @@ export function widthNats(mark: Mark, spread: number, typical: number | undefine
   const snr = mark.fluxErr > 0 ? Math.abs(mark.flux) / mark.fluxErr : UNKNOWN_SNR;
   const s = Math.hypot(SCATTER, NOISE / snr);
   const off = Math.log(fwhmKms(mark) / expected);
+  const usual = Math.exp(-0.5 * (off / s) ** 2) / s;
   const strange = Math.exp(-0.5 * (off / STRANGE_SCATTER) ** 2) / STRANGE_SCATTER;
-  return Math.log(((1 - STRANGE_SHARE) * Math.exp(-0.5 * (off / s) ** 2)) / s + STRANGE_SHARE * strange) - Math.log(Math.max(0.1, strange));
+  const among = (share: number) => Math.log((1 - share) * usual + share * strange + LEAST_DENSITY);
+  return among(STRANGE_SHARE) - among(STRANGE_SHARE_OF_STRANGERS);
 }

@@ -6,6 +6,7 @@ import { namingBench } from './namingBench.ts';
 import { physicsBench } from './physicsBench.ts';
 import { plasmaBench } from './plasmaBench.ts';
 import { readersBench } from './readersBench.ts';
+import { reliabilityBench } from './reliabilityBench.ts';
 import { seededBench } from './seededBench.ts';
 
 // `npm run bench`: speed and quality of each part, beside a rival's in the same run where there is one. Never a test: figures depend on the machine.
@@ -16,6 +17,7 @@ for (const [title, bench] of [
   ['reading', readersBench],
   ['naming', namingBench],
   ['naming a simulated nebula', identifyBench],
+  ['what names claim and what is right', reliabilityBench],
   ['moving about the spectrum', deskBench],
   ['keeping the page alive while the worker computes', blockingBench],
   ['the gas', plasmaBench],

