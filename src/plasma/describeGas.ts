@@ -103,6 +103,7 @@ export function describeGas(named: readonly NamedLine[], context: GasContext): G
     settings,
     accepted: named.filter((line) => line.lines.length > 0 && line.accepted).length,
     probable: named.filter((line) => line.lines.length > 0 && !line.accepted).length,
+    withoutErr: named.filter((line) => line.lines.length > 0 && !(line.fluxErr > 0)).length,
     ...(hBeta === undefined ? {} : { hBeta: { value: fluxes[hBeta].flux, err: fluxes[hBeta].fluxErr, features: numbers([hBeta]) } }),
     reddening: reddeningView(data, named, fluxes, reddening as ReddeningResult, settings, te, ne),
     ...(intensities ? { intensities } : {}),

@@ -113,6 +113,8 @@ export interface Gas {
   /** How many names were taken: accepted by the user, and the program's best of open features. */
   readonly accepted: number;
   readonly probable: number;
+  /** Named lines whose flux came without an error. */
+  readonly withoutErr: number;
   /** Flux of H beta, all its components; absent when it has no name. */
   readonly hBeta?: WithErr & { readonly features: readonly number[] };
   readonly reddening: Reddening;

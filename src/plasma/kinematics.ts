@@ -95,10 +95,13 @@ function pointOf(data: AtomicData, line: NamedLine): KinematicPoint[] {
 
 type Valued = KinematicPoint & { readonly y: number; readonly err: number };
 
-/** Weighted straight line; the scatter of the points is added to their errors, what lies 4 sigma off is left out. */
+/** Weighted straight line; what the points scatter beyond their errors is added to these, what lies 4 sigma off is left out. */
 function trendOf(all: readonly Valued[], x: (p: KinematicPoint) => number): Trend | undefined {
   const centre = median(all.map((p) => p.y));
-  const spread = robustSigma(all.map((p) => p.y));
+  const spread = excessScatter(
+    all.map((p) => p.y - centre),
+    all.map((p) => p.err),
+  );
   const points = all.filter((p) => Math.abs(p.y - centre) <= CLIP_SIGMA * Math.hypot(spread, p.err));
   if (points.length < LEAST_POINTS) return undefined;
   const w = points.map((p) => 1 / (p.err ** 2 + spread ** 2));
@@ -110,6 +113,21 @@ function trendOf(all: readonly Valued[], x: (p: KinematicPoint) => number): Tren
   const slope = points.reduce((sum, p, k) => sum + w[k] * (x(p) - about) * p.y, 0) / lever;
   const chi2 = points.reduce((sum, p, k) => sum + w[k] * (p.y - at - slope * (x(p) - about)) ** 2, 0);
   return { slope, slopeErr: Math.sqrt((1 / lever) * Math.max(1, chi2 / (points.length - 2))), at, about, points: points.length };
+}
+
+const BISECTIONS = 40;
+
+/** Scatter that has to be added to the errors for the values to scatter as they do (median absolute deviation); 0 where the errors explain it. */
+function excessScatter(offsets: readonly number[], errs: readonly number[]): number {
+  const excess = (scatter: number) => robustSigma(offsets.map((offset, k) => offset / Math.hypot(errs[k], scatter))) > 1;
+  if (!excess(0)) return 0;
+  let [low, high] = [0, Math.max(...offsets.map(Math.abs))];
+  for (let step = 0; step < BISECTIONS; step++) {
+    const middle = (low + high) / 2;
+    if (excess(middle)) low = middle;
+    else high = middle;
+  }
+  return (low + high) / 2;
 }
 
 function ionMeans(points: readonly KinematicPoint[]): IonMean[] {

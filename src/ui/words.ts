@@ -268,6 +268,7 @@ export const words = {
     names: 'Names taken',
     used: (accepted: number, probable: number, least: number) =>
       `${accepted} accepted${least > 1 ? ' names only' : `, and ${probable} open features under their best name (probability ${least} and more)`}.`,
+    withoutErr: (n: number) => `${n} of them came without an error of the flux and are given 5 %.`,
     leastProbability: 'Open features from',
     leastProbabilityHint: 'Probability of their best name. Above 1: accepted names only.',
     calibration: 'Flux calibration error',

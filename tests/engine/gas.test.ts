@@ -75,6 +75,23 @@ describe('the gas of an analysis', () => {
     expect(ratioOf(after.gas, '[O III] 4363')).toBeUndefined();
   });
 
+  test('c(H beta) of the samples comes back within three errors, under the law and the case B they were made with', async () => {
+    for (const [file, truth] of [
+      ['lantern-nebula', 0.42],
+      ['heron-marsh', 0.61],
+      ['kiln-nebula', 0.17],
+    ] as const) {
+      const content = readFileSync(new URL(`../../public/samples/${file}.csv`, import.meta.url));
+      const other = createEngine(data, () => 0);
+      const read = async (start: number, end: number) => new Uint8Array(content.subarray(start, end));
+      await other.open({ name: `${file}.csv`, size: content.length, read }, 'spectrum');
+      const { gas } = await other.analyse({ ...EMPTY_DOCUMENT.settings, gas: { curve: 'ccm89', te: 10_000, ne: 10_000 } }, []);
+      const { value = Number.NaN, err = 0 } = gas.reddening.cHbeta ?? {};
+      expect(err, file).toBeLessThan(0.004);
+      expect(Math.abs(value - truth), file).toBeLessThan(3 * err);
+    }
+  });
+
   test('what belongs to one spectrum alone does not go over to the next one', () => {
     const settings = { ...EMPTY_DOCUMENT.settings, gas: { curve: 'ccm89' as const, rV: 4, te: 9000, ne: 50, cHbeta: 1, stellarEwA: 2 } };
     const source = (name: string) => ({ kind: 'spectrum' as const, name, size: 1 });

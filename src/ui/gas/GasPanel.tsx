@@ -27,6 +27,7 @@ export function GasPanel() {
       <Part gas={gas} />
       <h3>{label.names}</h3>
       <p>{label.used(gas.accepted, gas.probable, gas.settings.leastProbability)}</p>
+      {gas.withoutErr > 0 && <p className="hint">{label.withoutErr(gas.withoutErr)}</p>}
       <div className="two gas-settings">
         <NumberSetting
           label={label.leastProbability}
