@@ -2,7 +2,7 @@ import { parseArgs } from 'node:util';
 import type { ObjectKind } from '../identify/index.ts';
 import type { ExtinctionCurve } from '../plasma/index.ts';
 import { nearestWord } from '../problems/index.ts';
-import { TABLE_FORMATS, type TableFormatName } from '../report/index.ts';
+import { PRESETS, type PresetName, TABLE_FORMATS, type TableFormatName } from '../report/index.ts';
 import type { Settings } from '../session/index.ts';
 import { redshiftFromVelocity } from '../units/index.ts';
 
@@ -16,6 +16,7 @@ const CURVES: readonly ExtinctionCurve[] = ['ccm89-odonnell94', 'ccm89', 'fitzpa
 const OPTIONS = {
   out: { type: 'string' },
   format: { type: 'string' },
+  design: { type: 'string' },
   z: { type: 'string' },
   velocity: { type: 'string' },
   medium: { type: 'string' },
@@ -41,6 +42,8 @@ export interface Arguments {
   readonly words: readonly string[];
   readonly out?: string;
   readonly format: TableFormatName;
+  /** How printed tables are laid out. */
+  readonly design: PresetName;
   /** CSV file with the user's own lines. */
   readonly lines?: string;
   readonly timings: boolean;
@@ -68,6 +71,7 @@ export function parseArguments(args: readonly string[]): Arguments {
     words: positionals,
     out: values.out,
     format,
+    design: choice('--design', values.design ?? 'atlas', Object.keys(PRESETS) as PresetName[]),
     lines: values.lines,
     timings: values.timings === true,
     limits: (values.limit ?? '').split(',').flatMap((text) => (text === '' ? [] : (positive('--limit', text) ?? []))),

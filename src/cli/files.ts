@@ -6,17 +6,20 @@ import { type AtomicData, loadAtomicData } from '../engine/index.ts';
 import { ProblemError } from '../problems/index.ts';
 import type { ByteSource } from '../readers/index.ts';
 
-/** The line list as it lies beside the program: in `public` of the source tree, in the built page beside the built terminal. */
-export function openAtomicData(): AtomicData {
+/** The line list that comes with the program. */
+export const openAtomicData = (): AtomicData => loadAtomicData(readShipped('atomic.bin'));
+
+/** A file as it lies beside the program: in `public` of the source tree, in the built page beside the built terminal. */
+export function readShipped(name: string): Uint8Array {
   const here = dirname(fileURLToPath(import.meta.url));
-  for (const place of ['../../public/atomic.bin', '../web/atomic.bin', '../../dist/web/atomic.bin']) {
-    const bytes = readIfThere(resolve(here, place));
-    if (bytes) return loadAtomicData(bytes);
+  for (const folder of ['../../public', '../web', '../../dist/web']) {
+    const bytes = readIfThere(resolve(here, folder, name));
+    if (bytes) return bytes;
   }
   throw new ProblemError({
     code: 'no-line-list',
-    where: { file: 'public/atomic.bin' },
-    found: 'the line list is missing',
+    where: { file: `public/${name}` },
+    found: 'a file that comes with the program is missing',
     doThis: 'Run: npm run data',
   });
 }

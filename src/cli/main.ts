@@ -1,7 +1,8 @@
 #!/usr/bin/env node
+import { differences } from './differences.ts';
 import { limits } from './limits.ts';
 import { readCommand } from './read.ts';
-import { gasCommand, nameCommand, tableCommand } from './table.ts';
+import { gasCommand, nameCommand, paperCommand, tableCommand } from './table.ts';
 import { USAGE } from './usage.ts';
 
 // The terminal: the engine of the desk for batches and scripts. Results on stdout or in --out, everything else on stderr.
@@ -12,6 +13,8 @@ const COMMANDS: Readonly<Record<string, (args: readonly string[]) => Promise<num
   read: readCommand,
   limits,
   gas: gasCommand,
+  paper: paperCommand,
+  differences,
 };
 
 // a reader that has seen enough (`| head`) closes the pipe: that is no error

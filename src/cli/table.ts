@@ -1,17 +1,19 @@
 import { mkdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { basename, extname, join } from 'node:path';
-import { createEngine, type Engine, type SourceKind } from '../engine/index.ts';
+import { type Analysis, createEngine, type Engine, type SourceKind } from '../engine/index.ts';
 import { ProblemError, wordProblem } from '../problems/index.ts';
-import { gasCsv, TABLE_FORMATS, withoutArtefacts } from '../report/index.ts';
+import { gasCsv, PRESETS, TABLE_FORMATS, type TableDesign, withoutArtefacts } from '../report/index.ts';
 import type { Settings } from '../session/index.ts';
+import { archiveOf } from './archive.ts';
 import { type Arguments, parseArguments, UsageError } from './arguments.ts';
 import { openAtomicData, withFile } from './files.ts';
 
 /** What is written of each file. */
-type Product = 'table' | 'gas';
+type Product = 'table' | 'gas' | 'paper';
 
 export const tableCommand = (args: readonly string[]) => tables(args, 'spectrum', 'table');
 export const nameCommand = (args: readonly string[]) => tables(args, 'line-list', 'table');
+export const paperCommand = (args: readonly string[]) => tables(args, 'guess', 'paper');
 export const gasCommand = (args: readonly string[]) => tables(args, 'guess', 'gas');
 
 /** Exit code: 0 all done, 1 some file could not be read, 2 the command line could not be understood. */
@@ -22,6 +24,7 @@ async function tables(args: readonly string[], kind: SourceKind | 'guess', produ
     if (options.words.length === 0) throw new UsageError('no file was named');
     if (options.words.length > 1 && options.out === undefined) throw new UsageError('several files need --out DIR');
     if (product === 'gas' && options.format !== 'csv') throw new UsageError('gas is written as csv only');
+    if (product === 'paper' && options.out === undefined) throw new UsageError('paper needs --out DIR');
     refuseOverwriting(options, product);
   } catch (error) {
     if (!(error instanceof UsageError)) throw error;
@@ -60,8 +63,11 @@ function refuseOverwriting(options: Arguments, product: Product): void {
   }
 }
 
-const outputName = (path: string, options: Arguments, product: Product) =>
-  `${basename(path, extname(path))}${product === 'gas' ? '-gas' : ''}.${TABLE_FORMATS[options.format].ending}`;
+function outputName(path: string, options: Arguments, product: Product): string {
+  const stem = basename(path, extname(path));
+  if (product === 'paper') return `${stem}-paper.zip`;
+  return `${stem}${product === 'gas' ? '-gas' : ''}.${TABLE_FORMATS[options.format].ending}`;
+}
 
 /** Whether the file could be read. */
 async function oneFile(engine: Engine, path: string, kind: SourceKind | 'guess', product: Product, options: Arguments): Promise<boolean> {
@@ -71,9 +77,9 @@ async function oneFile(engine: Engine, path: string, kind: SourceKind | 'guess',
       await engine.open(source, kind);
       const analysis = await engine.analyse(options.settings, [], { progress: ({ stage, share }) => tell(stage, share) });
       tell();
-      const text = product === 'gas' ? gasCsv(analysis.gas) : TABLE_FORMATS[options.format].write(withoutArtefacts(analysis.table));
-      if (options.out === undefined) process.stdout.write(text);
-      else writeFileSync(join(options.out, outputName(path, options, product)), text);
+      const content = contentOf(analysis, options, product);
+      if (options.out === undefined) process.stdout.write(content);
+      else writeFileSync(join(options.out, outputName(path, options, product)), content);
       const named = analysis.features.filter((f) => f.name).length;
       process.stderr.write(
         `${basename(path)}: ${analysis.features.length} features, ${named} named, z = ${analysis.z.toFixed(6)} +/- ${analysis.zErr.toFixed(6)}\n`,
@@ -89,6 +95,14 @@ async function oneFile(engine: Engine, path: string, kind: SourceKind | 'guess',
     process.stderr.write(`linewright: ${wordProblem(error.problem)}\n`);
     return false;
   }
+}
+
+/** Nothing is accepted at the terminal: printed tables hold all lines, and say that their names are proposals. */
+function contentOf(analysis: Analysis, options: Arguments, product: Product): string | Uint8Array {
+  const design: TableDesign = { ...PRESETS[options.design], rows: 'all' };
+  if (product === 'gas') return gasCsv(analysis.gas);
+  if (product === 'table') return TABLE_FORMATS[options.format].write(withoutArtefacts(analysis.table), design);
+  return archiveOf(analysis, design);
 }
 
 /** The limit at a wavelength in words; the flux unit is that of the table. */

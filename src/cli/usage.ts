@@ -8,8 +8,14 @@ export const USAGE = `linewright: names the emission lines of thin, glowing gas
   linewright limits ION... [--te K] [--ne CM3]
                                            lifetimes, critical densities and survival of an ion's thin-gas lines
 
+  linewright paper SPECTRUM... --out DIR [options]
+                                           one ZIP a spectrum: tables in every format, atlas, methods, references, provenance
+  linewright differences FIRST.json SECOND.json
+                                           verdicts and settings in which two session files differ
+
   --out DIR              one file a spectrum in DIR instead of stdout
   --format FORMAT        csv (default), latex, deluxetable, mrt, votable, ecsv, fits or json
+  --design DESIGN        letter, atlas (default) or appendix: columns of the printed formats
   --z Z | --velocity KMS redshift, or velocity in the optical convention; without either it is found from the lines
   --medium air|vacuum    medium of the wavelengths, where the file does not say
   --resolution R         lambda / FWHM of the instrument

@@ -99,10 +99,14 @@ function gasFacts({ settings, reddening, zones }: Gas): MethodFacts['gas'] {
     given: reddening.ended === 'given',
     hydrogenLines: reddening.lines.filter((line) => line.state === 'used').length,
     zones: zones
+      .filter(({ te, ne }) => !(isBorrowed(te.from) && isBorrowed(ne.from)))
       .map(({ zone, te, ne }) => ({ zone: `${zone} ionisation`, te: shown(te.estimate, 'K'), ne: shown(ne.estimate, 'cm^-3') }))
       .filter(({ te, ne }) => te && ne),
   };
 }
+
+/** Taken from another zone, or assumed: not measured. */
+const isBorrowed = (from: string) => from.startsWith('taken') || from.startsWith('assumed');
 
 function countsOf(features: readonly FeatureView[]): MethodFacts['counts'] {
   const of = (decision: string) => features.filter((f) => f.verdict?.decision === decision).length;

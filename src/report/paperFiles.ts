@@ -1,10 +1,14 @@
+import type { Gas } from '../plasma/index.ts';
 import type { ArchiveFiles } from './archive.ts';
 import { DEFAULT_DESIGN, type TableDesign } from './design.ts';
 import { atlasFigures } from './figures/atlas.ts';
+import { densityLadderFigure } from './figures/densityLadder.ts';
 import { featureFitFigure } from './figures/featureFit.ts';
-import type { ColumnWidth } from './figures/figure.ts';
+import type { ColumnWidth, Figure } from './figures/figure.ts';
 import { atlasInput, type FigureSamples, featureFitInput } from './figures/inputs.ts';
+import { temperatureDensityFigure } from './figures/temperatureDensity.ts';
 import { TABLE_FORMATS, type TableFormatName } from './formats.ts';
+import { gasCsv } from './gasCsv.ts';
 import type { LineTable } from './lineTable.ts';
 import { citedMethods, type MethodFacts, methodsText } from './methods.ts';
 import { chosenRows } from './paperTable.ts';
@@ -23,9 +27,10 @@ export interface PaperMaterial {
   readonly figures: { readonly width: ColumnWidth; readonly panels: number };
   /** Numbers of the features whose fits are drawn. */
   readonly fits: readonly number[];
+  readonly gas?: Gas;
   /** The session file. */
   readonly session?: string;
-  /** Further files, such as figures of the gas. */
+  /** Further files, such as figures as pixels. */
   readonly more?: ArchiveFiles;
   /** ISO 8601 of the export; absent = left out. */
   readonly date?: string;
@@ -36,23 +41,32 @@ export const designedRows = (table: LineTable, design: TableDesign): LineTable =
 
 /** Table in every format, figures, session, provenance, methods paragraph and references, by path. The same material gives the same bytes. */
 export function paperFiles(material: PaperMaterial): ArchiveFiles {
-  const { table, design = DEFAULT_DESIGN, methods, samples, figures } = material;
+  const { table, design = DEFAULT_DESIGN, methods } = material;
   const rows = designedRows(table, design);
   const files: Record<string, string | Uint8Array> = {};
   for (const name of Object.keys(TABLE_FORMATS) as TableFormatName[]) {
     const { ending, write } = TABLE_FORMATS[name];
     files[`tables/lines.${ending}`] = write(rows, design);
   }
-  if (samples) {
-    for (const { name, svg } of atlasFigures(atlasInput(table, samples, design), figures)) files[`figures/${name}.svg`] = svg;
-    for (const feature of material.fits) {
-      const input = featureFitInput(table, samples, feature);
-      if (input) files[`figures/${input.name}.svg`] = featureFitFigure(input).svg;
-    }
-  }
+  for (const { name, svg } of paperFigures(material)) files[`figures/${name}.svg`] = svg;
+  if (material.gas) files['tables/gas.csv'] = gasCsv(material.gas);
   files['methods.txt'] = `${material.methodsEdited ?? methodsText(methods)}\n`;
   files['references.bib'] = bibtex(material.references, methods.citations, citedMethods(methods));
   files['provenance.json'] = provenanceJson(methods, material.date);
   if (material.session) files['session.linewright.json'] = material.session;
   return { ...files, ...material.more };
 }
+
+/** Every figure of a paper: the atlas, the fits asked for, the density ladder, the plane of temperature and density. */
+export function paperFigures({ table, design = DEFAULT_DESIGN, samples, figures, fits, gas }: FigureMaterial): Figure[] {
+  const drawn = samples ? [...atlasFigures(atlasInput(table, samples, design), figures)] : [];
+  for (const feature of fits) {
+    const input = samples && featureFitInput(table, samples, feature);
+    if (input) drawn.push(featureFitFigure(input));
+  }
+  const ofGas = gas ? [densityLadderFigure(gas.ladder, 'single'), temperatureDensityFigure(gas, 'single')] : [];
+  return [...drawn, ...ofGas.filter((figure) => figure !== undefined)];
+}
+
+/** What figures are drawn from. */
+export type FigureMaterial = Pick<PaperMaterial, 'table' | 'design' | 'samples' | 'figures' | 'fits' | 'gas'>;

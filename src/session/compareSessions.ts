@@ -1,5 +1,5 @@
 import type { LineKey, SessionDocument, Settings, Verdict } from './document.ts';
-import { matchVerdicts } from './matchVerdicts.ts';
+import { findVerdict, matchVerdicts, type Place } from './matchVerdicts.ts';
 
 /** A feature on which two sessions differ; `at` in vacuum Angstrom. */
 export interface VerdictDifference {
@@ -26,8 +26,22 @@ export interface SessionComparison {
   readonly settings: readonly SettingDifference[];
 }
 
-/** Differences between two sessions on one spectrum: a second opinion. Verdicts are brought together by their places, as after a refit. */
-export function compareSessions(first: SessionDocument, second: SessionDocument): SessionComparison {
+/** A feature with the probabilities of its names, as the analysis of either session gives them; `at` in vacuum Angstrom. */
+export interface WeighedFeature extends Place {
+  readonly noneProbability: number;
+  readonly candidates: readonly { readonly keys: readonly LineKey[]; readonly probability: number }[];
+}
+
+/**
+ * Differences between two sessions on one spectrum: a second opinion. Verdicts are brought together by their places, as after a refit.
+ *
+ * @param weighed features of an analysis of the spectrum: with them every difference says how probable the names are
+ */
+export function compareSessions(
+  first: SessionDocument,
+  second: SessionDocument,
+  weighed: readonly WeighedFeature[] = [],
+): SessionComparison {
   const places = first.verdicts.map(({ at, atErr }) => ({ at, atErr }));
   const { byFeature, lost } = matchVerdicts(second.verdicts, places);
   const verdicts: VerdictDifference[] = [];
@@ -43,7 +57,9 @@ export function compareSessions(first: SessionDocument, second: SessionDocument)
   return {
     sameSource: a?.sha256 !== undefined && a.sha256 === b?.sha256 ? true : a?.size === b?.size && a?.sha256 === undefined,
     agreeing,
-    verdicts: verdicts.sort((p, q) => p.at - q.at),
+    verdicts: verdicts
+      .sort((p, q) => p.at - q.at)
+      .map((difference) => ({ ...difference, sentence: `${difference.sentence}${odds(difference, weighed)}` })),
     settings: settingDifferences(first.settings, second.settings),
   };
 }
@@ -72,6 +88,22 @@ function why(first: Verdict, second: Verdict): string {
   const turned = (a: Verdict, b: Verdict) => a.accepted && b.turnedDown?.some((keys) => names(keys) === names(a.accepted));
   if (turned(first, second)) return ` The second turned ${names(first.accepted)} down.`;
   return turned(second, first) ? ` The first turned ${names(second.accepted)} down.` : '';
+}
+
+/** ` The weighing gives He II 4686.991 0.93, Ar IV 4686.9 0.02, no name 0.01.`; empty where no feature is near. */
+function odds({ first, second }: VerdictDifference, weighed: readonly WeighedFeature[]): string {
+  const verdict = first ?? second;
+  if (!verdict) return '';
+  const near = weighed.filter((each) => findVerdict([verdict], each));
+  const [feature] = near.sort((a, b) => Math.abs(a.at - verdict.at) - Math.abs(b.at - verdict.at));
+  if (!feature) return '';
+  const asked = [first?.accepted, second?.accepted].filter((keys) => keys !== undefined);
+  const distinct = asked.filter((keys, k) => asked.findIndex((other) => names(other) === names(keys)) === k);
+  const said = distinct.map((keys) => {
+    const found = feature.candidates.find((candidate) => names(candidate.keys) === names(keys));
+    return `${names(keys)} ${found ? found.probability.toFixed(3) : 'no place among the candidates'}`;
+  });
+  return ` The weighing gives ${[...said, `no name ${feature.noneProbability.toFixed(3)}`].join(', ')}.`;
 }
 
 const names = (keys: readonly LineKey[] | undefined) => [...(keys ?? [])].sort().join(' + ');

@@ -46,3 +46,15 @@ test('a session agrees with itself, and one on other bytes is told', () => {
   expect(compareSessions(one, one)).toEqual({ sameSource: true, agreeing: 1, verdicts: [], settings: [] });
   expect(compareSessions(one, { ...one, source: { ...source, sha256: 'cd' } }).sameSource).toBe(false);
 });
+
+test('with an analysis at hand every difference says how probable the names are', () => {
+  const first = session([at(4686.5, { decision: 'accepted', accepted: ['He II 4686.991'] })]);
+  const second = session([at(4686.52, { decision: 'accepted', accepted: ['Ar IV 4686.9'] })]);
+  const weighed = [
+    { at: 4600, atErr: 0.01, noneProbability: 0.5, candidates: [] },
+    { at: 4686.51, atErr: 0.01, noneProbability: 0.01, candidates: [{ keys: ['He II 4686.991'], probability: 0.93 }] },
+  ];
+  expect(compareSessions(first, second, weighed).verdicts[0].sentence).toMatch(
+    / The weighing gives He II 4686\.991 0\.930, Ar IV 4686\.9 no place among the candidates, no name 0\.010\.$/,
+  );
+});

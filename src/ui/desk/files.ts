@@ -1,5 +1,5 @@
 import { ProblemError, wordProblem } from '../../problems/index.ts';
-import { acceptedRows, TABLE_FORMATS, type TableFormatName } from '../../report/index.ts';
+import { acceptedRows, DEFAULT_DESIGN, TABLE_FORMATS, type TableFormatName } from '../../report/index.ts';
 import { readSession, writeSession } from '../../session/index.ts';
 import { tsvTable } from '../table/tsvTable.ts';
 import { words } from '../words.ts';
@@ -47,7 +47,9 @@ export function saveSession(): void {
 export async function saveTable(name: TableFormatName): Promise<void> {
   const table = await tableToExport();
   const format = TABLE_FORMATS[name];
-  if (table) download(`${stem()}-lines.${format.ending}`, format.write(table), format.mediaType);
+  const design = desk().history.document.settings.paper?.design ?? DEFAULT_DESIGN;
+  // the menu says which lines: the design chooses only how they are printed
+  if (table) download(`${stem()}-lines.${format.ending}`, format.write(table, { ...design, rows: 'all' }), format.mediaType);
 }
 
 /** The rows that would be saved, as tab-separated text on the clipboard. */
