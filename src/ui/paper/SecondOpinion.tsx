@@ -10,8 +10,9 @@ const { opinion: label } = words.paper;
 /** Another session on the same spectrum beside this one: where they differ, and why. */
 export function SecondOpinion() {
   const document = useDesk((state) => state.history.document);
+  const features = useDesk((state) => state.analysis?.features);
   const [other, setOther] = useState<{ readonly name: string; readonly document: SessionDocument }>();
-  const found = other && compareSessions(document, other.document);
+  const found = other && compareSessions(document, other.document, features);
   const take = async (file: File | undefined) => {
     if (!file) return;
     try {
