@@ -35,8 +35,9 @@ export interface Inferred {
 const LEAST_NONE = 1e-6;
 const MOST_ROUNDS = 7;
 const LEAST_ROUNDS = 4;
-/** Settled when no probability of a leading name moved more than this. */
-const SETTLED = 0.02;
+/** Settled when no more than this share of the leading names moved by more than this in probability. */
+const SETTLED_SHARE = 0.01;
+const SETTLED = 0.05;
 /** No single line tells of the drift more closely than this. */
 const LEAST_ERR_KMS = 2;
 
@@ -89,9 +90,9 @@ export function infer(
     missed = scales.reduce((sum, scale, family) => sum + logAbsent(scale.mean, absences[family], model.leftOut), 0);
     const shared = { data, facts, settings, survey, model, sightings, posteriors, scales, claims: claimsOf(weighings) };
     const next = placed.map((mark, j) => weigh(mark, j, { ...shared, rule: rules[j] }));
-    const moved = round + 1 < LEAST_ROUNDS ? 1 : largestMove(weighings, next);
+    const moved = round + 1 < LEAST_ROUNDS ? 1 : shareMoved(weighings, next);
     weighings = next;
-    if (moved < SETTLED) break;
+    if (moved <= SETTLED_SHARE) break;
   }
   const named = weighings.reduce((sum, { noneProbability }) => sum - Math.log(Math.max(LEAST_NONE, noneProbability)), 0);
   return { model, weighings, scales, placed, drift, kind, evidence: named + missed };
@@ -107,13 +108,16 @@ function driftPoints(marks: readonly Mark[], weighings: readonly Weighing[], dat
   });
 }
 
-function largestMove(before: readonly Weighing[], after: readonly Weighing[]): number {
-  return after.reduce((most, { candidates, noneProbability }, j) => {
+function shareMoved(before: readonly Weighing[], after: readonly Weighing[]): number {
+  const moved = after.filter(({ candidates, noneProbability }, j) => {
     const [best] = candidates;
-    if (!best) return most;
+    if (!best) return false;
     const same = before[j].candidates.find(
       (c) => c.lines.length === best.lines.length && c.lines.every((line, k) => line === best.lines[k]),
     );
-    return Math.max(most, Math.abs(noneProbability - before[j].noneProbability), same ? Math.abs(best.probability - same.probability) : 1);
-  }, 0);
+    return (
+      Math.abs(noneProbability - before[j].noneProbability) > SETTLED || !same || Math.abs(best.probability - same.probability) > SETTLED
+    );
+  });
+  return moved.length / Math.max(1, after.length);
 }

@@ -10,4 +10,4 @@ export interface LeftOut {
 export const USUAL_LEFT_OUT: LeftOut = { share: 0.05, dex: 0.7 };
 
 /** Chance that a line `above` dex over the limit is left out. */
-export const chanceLeftOut = ({ share, dex }: LeftOut, above: number): number => share * 10 ** (-Math.max(0, above) / dex);
+export const chanceLeftOut = ({ share, dex }: LeftOut, above: number): number => share * Math.exp((-Math.LN10 * Math.max(0, above)) / dex);

@@ -39,8 +39,8 @@ export interface FamilyScale {
 }
 
 const GRID_LOW = -5;
-const GRID_STEP = 0.15;
-export const GRID_COUNT = 65;
+const GRID_STEP = 0.2;
+export const GRID_COUNT = 49;
 /** log10 scale at a place of the grid. */
 export const gridScale = (g: number): number => GRID_LOW + GRID_STEP * g;
 

@@ -35,18 +35,28 @@ const familyNats = ({ seen }: Single) => Math.log(1 - (1 - ALONE_IS_PRESENT) * M
 const strangersPerDex = (above: number) =>
   ((1 - ANY_FLUX_SHARE) * Math.exp(-Math.max(0, above) / STRANGER_DEX)) / STRANGER_DEX + ANY_FLUX_SHARE / ANY_FLUX_DEX;
 
+const ROOT_TWO_PI = Math.sqrt(2 * Math.PI);
+const normal = (x: number, s: number) => Math.exp(-0.5 * (x / s) ** 2) / (s * ROOT_TWO_PI);
+
+const ALONE = [1] as const;
+
+/** Parts of a name and their shares, strongest first. */
+function strongestFirst(parts: readonly Single[]): readonly [readonly Single[], readonly number[]] {
+  if (parts.length === 1) return [parts, ALONE];
+  const shares = sharesOf(parts);
+  const order = shares.map((_, k) => k).sort((a, b) => shares[b] - shares[a]);
+  return [order.map((k) => parts[k]), order.map((k) => shares[k])];
+}
+
 /** The nats of one name: a line, or a blend of `parts`. */
 export function scoreName(mark: Mark, j: number, parts: readonly Single[], context: WeighContext): Weighed {
   const { data, survey, claims } = context;
-  const shares = sharesOf(parts);
-  const order = shares.map((_, k) => k).sort((a, b) => shares[b] - shares[a]);
-  const sorted = order.map((k) => parts[k]);
-  const sortedShares = order.map((k) => shares[k]);
+  const [sorted, sortedShares] = strongestFirst(parts);
   const off = sorted.reduce((sum, p, k) => sum + sortedShares[k] * p.off, 0);
   // the shares themselves are uncertain: half the spread between the parts times their uncertainty
   const mixing = sorted.reduce((sum, p, k) => sum + sortedShares[k] * (p.off - off) ** 2, 0);
   const sigma = Math.sqrt(sorted.reduce((sum, p, k) => sum + sortedShares[k] * p.sigma ** 2, 0) + 0.3 * mixing);
-  const logPredicted = Math.log10(sorted.reduce((sum, p) => sum + 10 ** p.logPredicted, 0));
+  const logPredicted = sorted.length === 1 ? sorted[0].logPredicted : Math.log10(sorted.reduce((sum, p) => sum + 10 ** p.logPredicted, 0));
   const fluxErr = logFluxErr(mark);
   const mixed = (of: (part: Single) => number) =>
     Math.hypot(Math.sqrt(sorted.reduce((sum, p, k) => sum + sortedShares[k] * of(p) ** 2, 0)), fluxErr);
@@ -57,7 +67,6 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
   // two halves of normals that join at the prediction
   const sided = excess > 0 ? errUp : errDown;
   const join = (2 * sided) / (errUp + errDown);
-  const normal = (x: number, s: number) => Math.exp(-0.5 * (x / s) ** 2) / (s * Math.sqrt(2 * Math.PI));
   // against a stranger anywhere between the neighbours, and faint as strangers are
   const wavelengthNats =
     Math.log((1 - OUTLIER_SHARE) * normal(off, sigma) + OUTLIER_SHARE * normal(off, OUTLIER_SIGMAS * sigma)) +

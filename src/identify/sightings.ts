@@ -26,8 +26,9 @@ export function sightingsOf(weighings: readonly Weighing[], marks: readonly Mark
     const said = new Map<number, Sighting>();
     const weighing = weighings[j];
     if (!weighing) return said;
+    const odds = Float64Array.from(weighing.candidates, (candidate) => Math.exp(logOddsOf(candidate)));
     for (const family of familiesOf(weighing, facts)) {
-      const sighting = sightingOf(mark, j, weighing, family, facts, model);
+      const sighting = sightingOf(mark, j, weighing, odds, family, facts, model);
       if (!sighting) continue;
       said.set(family, sighting);
       const list = byFamily.get(family);
@@ -56,6 +57,7 @@ function sightingOf(
   mark: Mark,
   j: number,
   { candidates, noneProbability }: Weighing,
+  odds: Float64Array,
   family: number,
   facts: LineFacts,
   model: SystemModel,
@@ -64,37 +66,60 @@ function sightingOf(
   const certain = candidates.length === 1 && noneProbability === 0;
   let others = certain ? 0 : 1;
   let weight = 0;
-  let tells = false;
-  const likelihood = new Float64Array(GRID_COUNT);
-  for (const candidate of candidates) {
-    const k = candidate.lines.findIndex((line) => facts.family[line] === family);
+  let most = 0;
+  const ways: { bare: number; err: number; excess: number }[] = [];
+  for (let c = 0; c < candidates.length; c++) {
+    const candidate = candidates[c];
+    const k = placeOf(candidate.lines, family, facts);
     if (k < 0) {
-      others += Math.exp(logOddsOf(candidate));
+      others += odds[c];
       continue;
     }
     const share = candidate.shares[k];
     const err = Math.hypot(facts.errDex[candidate.lines[k]], fluxErr, blendErrDex(candidate, share));
-    const excess = Math.log10(Math.abs(mark.flux) * share) - predictedLog(facts, candidate.lines[k], model);
     // all that speaks for the name but for its strength, against a stranger of this flux
-    const odds = Math.exp(logOddsOf(candidate) - candidate.strengthNats - candidate.logStrangers);
+    const bare = odds[c] * Math.exp(-candidate.strengthNats - candidate.logStrangers);
     weight += candidate.probability * Math.sqrt(share);
-    for (let g = 0; g < GRID_COUNT; g++) {
-      const off = excess - gridScale(g);
-      likelihood[g] +=
-        (odds * ((1 - WIDE_SHARE) * Math.exp(-0.5 * (off / err) ** 2))) / (err * ROOT_TWO_PI) +
-        (odds * (WIDE_SHARE * Math.exp(-0.5 * (off / WIDE_DEX) ** 2))) / (WIDE_DEX * ROOT_TWO_PI);
-    }
-    tells ||= odds / (err * ROOT_TWO_PI) > LEAST_TELLING;
+    most += bare / (err * ROOT_TWO_PI);
+    ways.push({ bare, err, excess: Math.log10(Math.abs(mark.flux) * share) - predictedLog(facts, candidate.lines[k], model) });
   }
-  if (!tells) return undefined;
-  const most = Math.max(...likelihood);
-  if (most < LEAST_TELLING * others) return undefined;
+  if (most < LEAST_TELLING * others || most < LEAST_TELLING) return undefined;
+  const likelihood = new Float64Array(GRID_COUNT);
+  for (const { bare, err, excess } of ways) {
+    const core = (bare * (1 - WIDE_SHARE)) / (err * ROOT_TWO_PI);
+    const wide = (bare * WIDE_SHARE) / (WIDE_DEX * ROOT_TWO_PI);
+    for (let g = 0; g < GRID_COUNT; g++) {
+      const off = Math.abs(excess - gridScale(g));
+      likelihood[g] += core * bell(off / err) + wide * bell(off / WIDE_DEX);
+    }
+  }
+  let top = 0;
+  for (let g = 0; g < GRID_COUNT; g++) top = Math.max(top, likelihood[g]);
   const placing = placingOf(mark);
-  for (let g = 0; g < GRID_COUNT; g++) likelihood[g] = placing * Math.log((others + likelihood[g]) / (others + most));
+  for (let g = 0; g < GRID_COUNT; g++) likelihood[g] = Math.max(LEAST_LOG, placing * Math.log((others + likelihood[g]) / (others + top)));
   return { mark: j, weight: weight * placing, logLikelihood: likelihood };
 }
 
+const LEAST_LOG = -700;
+
+function placeOf(lines: readonly number[], family: number, facts: LineFacts): number {
+  for (let k = 0; k < lines.length; k++) if (facts.family[lines[k]] === family) return k;
+  return -1;
+}
+
 const ROOT_TWO_PI = Math.sqrt(2 * Math.PI);
+
+const BELL_STEP = 1 / 64;
+const BELL_END = 9;
+const BELL = Float64Array.from({ length: BELL_END / BELL_STEP + 2 }, (_, k) => Math.exp(-0.5 * (k * BELL_STEP) ** 2));
+
+/** exp(-x^2 / 2) for x >= 0 from a table, to 3e-5 of its peak: the grid asks for it millions of times. */
+function bell(x: number): number {
+  if (x >= BELL_END) return 0;
+  const place = x / BELL_STEP;
+  const k = Math.floor(place);
+  return BELL[k] + (place - k) * (BELL[k + 1] - BELL[k]);
+}
 
 /** A centroid worse than this share of the width is vague: wings and fillings of a crowded fit. */
 const VAGUE_FWHM = 0.2;
