@@ -32,6 +32,8 @@ for (const colorScheme of ['light', 'dark'] as const) {
       await desk.isIdle();
       await check(page, (await tab.textContent()) ?? '', colorScheme);
     }
+    await page.keyboard.press('?');
+    await check(page, 'keys', colorScheme);
     await desk.chooseRow('He I 5875');
     await page.keyboard.press('Shift+ArrowDown');
     await page.getByRole('region', { name: 'Picked rows' }).waitFor();

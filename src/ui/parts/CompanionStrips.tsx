@@ -21,12 +21,13 @@ const CURVE_POINTS = 60;
 /** The companions of a candidate: what was found at each one's place, and a look at it. */
 export function CompanionStrips({ row, candidate }: { row: DeskRow; candidate: CandidateView }) {
   const samples = useDesk((state) => state.samples);
+  const hasStrips = samples !== undefined && candidate.companions.some(({ outcome }) => outcome !== 'outside');
   const { fwhm } = row.feature.measured;
   const fwhmKms = Number.isFinite(fwhm) ? (SPEED_OF_LIGHT_KMS * fwhm) / row.feature.centroid : LEAST_KMS / HALF_FWHM;
   return (
     <section className="companions" aria-label={label.companions}>
       <h3 title={label.companionStrips}>
-        {label.companions} <span className="companion-outcome">{samples && label.companionsScale}</span>
+        {label.companions} {hasStrips && <span className="scale">{label.companionsScale}</span>}
       </h3>
       <ul>
         {candidate.companions.map((companion) => (

@@ -26,7 +26,8 @@ const PANELS = {
 export function SidePanel() {
   const tab = useDesk((state) => state.tab);
   const atDesk = useDesk((state) => state.stage === 'desk');
-  const tabs = atDesk ? TABS : (['keys'] as const);
+  // the keys have a button of their own on top: their tab only stands here while they are shown
+  const tabs: readonly Tab[] = atDesk ? TABS.filter((each) => each !== 'keys' || tab === 'keys') : ['keys'];
   const Panel = PANELS[atDesk ? tab : 'keys'];
   const walk = (event: KeyboardEvent) => {
     const by = { ArrowRight: 1, ArrowLeft: -1 }[event.key];

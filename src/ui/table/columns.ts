@@ -20,7 +20,7 @@ const finite = (value: number | undefined) => (value !== undefined && Number.isF
 export const TABLE_COLUMNS: readonly TableColumn[] = [
   number(
     'number',
-    40,
+    48,
     '',
     (r) => String(r.feature.number),
     (r) => r.feature.number,
