@@ -62,7 +62,7 @@ export function reddeningView(
       : {}),
     te,
     ne,
-    assumption: `Case B (Storey & Hummer 1995) at ${Math.round(te)} K and ${Number(ne.toPrecision(2))} cm⁻³; one screen of dust, ${CURVES[settings.curve]}, R(V) = ${settings.rV}; stellar absorption ${result.stellarEwA.toFixed(1)} Å under every Balmer line.`,
+    assumption: `Case B (Storey & Hummer 1995) at ${Math.round(te)} K and ${Number(ne.toPrecision(2))} cm⁻³; one screen of dust in the frame of the object, ${CURVES[settings.curve]}, R(V) = ${settings.rV}; stellar absorption ${result.stellarEwA.toFixed(1)} Å under every Balmer line.`,
   };
 }
 
