@@ -92,3 +92,39 @@ test('the first key after a reload opens the dialog for files', async ({ page })
   await page.keyboard.press('o');
   await expect(() => expect(dialogs).toBe(2)).toPass();
 });
+
+test('what was kept and is broken is set aside with a word, and the desk starts all the same', async ({ page }) => {
+  const desk = new Desk(page);
+  await desk.openSample();
+  await page.keyboard.press('Enter');
+  await expect(page.locator('.facts')).toContainText('1 accepted');
+  await desk.isIdle();
+  const kept = await page.evaluate(
+    () =>
+      new Promise<string[]>((resolve, reject) => {
+        const opening = indexedDB.open('linewright');
+        opening.onerror = () => reject(opening.error);
+        opening.onsuccess = () => {
+          const store = opening.result.transaction('desk', 'readwrite').objectStore('desk');
+          const reading = store.get('current');
+          reading.onsuccess = () => {
+            const { session, view } = reading.result;
+            const writing = store.put({ session: { ...session, document: { settings: 'gone' } }, view }, 'current');
+            writing.onsuccess = () => {
+              opening.result.close();
+              resolve(Object.keys(session));
+            };
+          };
+        };
+      }),
+  );
+  expect(kept).toContain('version');
+  await page.reload();
+  await expect(page.locator('.strip-problem')).toContainText('the work kept in this browser');
+  await expect(page.locator('.strip-problem')).toContainText('set aside');
+  await page.getByRole('button', { name: /Try the sample/ }).click();
+  await desk.isReady();
+  await page.reload();
+  await desk.isReady();
+  expect(desk.faults).toEqual([]);
+});
