@@ -1,9 +1,10 @@
 import { COLUMNS, type Column } from './columns.ts';
 import type { LineTable } from './lineTable.ts';
+import { spreadsheetSafe } from './spreadsheetSafe.ts';
 
 /**
  * The table as CSV by RFC 4180: one header row, CRLF line ends, cells quoted where they must be.
- * Text that a spreadsheet would run as a formula (leading = @, or + - before something that is no number) is kept from it by a leading apostrophe.
+ * Text that a spreadsheet would run as a formula is kept from it by a leading apostrophe.
  */
 export function csvTable(table: LineTable): string {
   const lines = [COLUMNS.map((c) => c.key).join(',')];
@@ -12,6 +13,6 @@ export function csvTable(table: LineTable): string {
 }
 
 function csvCell(column: Column, text: string): string {
-  const safe = column.kind === 'text' && /^[=@\t\r]|^[+-](?![\d.])/.test(text) ? `'${text}` : text;
+  const safe = column.kind === 'text' ? spreadsheetSafe(text) : text;
   return /[",\r\n]/.test(safe) ? `"${safe.replaceAll('"', '""')}"` : safe;
 }

@@ -13,10 +13,12 @@ export {
   type TableDesign,
 } from './design.ts';
 export { type AtlasChoices, atlasFigures } from './figures/atlas.ts';
+export { densityLadderFigure } from './figures/densityLadder.ts';
 export { featureFitFigure } from './figures/featureFit.ts';
 export { COLUMN_WIDTHS_MM, type ColumnWidth, type Figure } from './figures/figure.ts';
 export { atlasInput, type FigureSamples, featureFitInput } from './figures/inputs.ts';
-export { textAt } from './figures/svgText.ts';
+export { temperatureDensityFigure } from './figures/temperatureDensity.ts';
+export { withResolution } from './figures/withResolution.ts';
 export { TABLE_FORMATS, type TableFormat, type TableFormatName } from './formats.ts';
 export { gasCsv } from './gasCsv.ts';
 export { type Inline, type InlineText, plainText } from './inline.ts';
@@ -24,8 +26,9 @@ export { latexText } from './latex.ts';
 export { acceptedRows, type LineRow, type LineTable, withoutArtefacts } from './lineTable.ts';
 export { citedMethods, type MethodFacts, methodsText } from './methods.ts';
 export { PAPER_COLUMNS } from './paperColumns.ts';
-export { designedRows, type PaperMaterial, paperFiles } from './paperFiles.ts';
+export { designedRows, type PaperMaterial, paperFigures, paperFiles } from './paperFiles.ts';
 export { chosenRows, type PaperTable, paperTable } from './paperTable.ts';
 export { PROGRAM } from './program.ts';
 export { provenanceJson } from './provenance.ts';
 export { bibtex, type MethodReference, type References } from './references.ts';
+export { spreadsheetSafe } from './spreadsheetSafe.ts';

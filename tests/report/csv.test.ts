@@ -35,9 +35,22 @@ describe('the CSV table', () => {
     });
   });
 
-  test('keeps a note from being run as a formula by a spreadsheet', () => {
-    const { data } = read(TABLE_FORMATS.csv.write(table({ ...blend, note: '=HYPERLINK("http://x")' })));
-    expect(data[0].note).toBe('\'=HYPERLINK("http://x")');
+  test.each(['=HYPERLINK("http://x")', '+1+2', "-2+3+cmd|' /C calc'!A0", '@SUM(A1)', ' =1+1', '\t=1'])(
+    'keeps the note %j from being run as a formula by a spreadsheet',
+    (note) => {
+      const { data } = read(TABLE_FORMATS.csv.write(table({ ...blend, note })));
+      expect(data[0].note).toBe(`'${note}`);
+    },
+  );
+
+  test.each(['-1.5e-3', '+7', 'blend - see text', '[O III] = 5007'])('leaves the harmless note %j as it is', (note) => {
+    const { data } = read(TABLE_FORMATS.csv.write(table({ ...blend, note })));
+    expect(data[0].note).toBe(note);
+  });
+
+  test('leaves negative numbers numbers', () => {
+    const { data } = read(TABLE_FORMATS.csv.write(table({ ...oIII, velocity: -31.2, ew: -4 })));
+    expect([data[0].velocity, data[0].ew]).toEqual(['-31.20', '-4.0000']);
   });
 
   test('does not print a minus zero', () => {

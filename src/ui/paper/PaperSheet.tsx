@@ -2,12 +2,14 @@ import { useMemo } from 'react';
 import {
   atlasFigures,
   atlasInput,
+  densityLadderFigure,
   type Figure,
   featureFitFigure,
   featureFitInput,
   type LineTable,
   paperTable,
   type TableDesign,
+  temperatureDensityFigure,
 } from '../../report/index.ts';
 import { useChosenRow } from '../desk/chosen.ts';
 import { setDesk, useDesk } from '../desk/deskStore.ts';
@@ -17,7 +19,7 @@ import { MethodsSheet } from './MethodsSheet.tsx';
 import { PaperWords } from './PaperWords.tsx';
 import { SecondOpinion } from './SecondOpinion.tsx';
 import { saveFigure } from './savePaper.ts';
-import { useDesign } from './setPaper.ts';
+import { setDesign, useDesign } from './setPaper.ts';
 import './paper.css';
 
 const { paper: label } = words;
@@ -54,7 +56,15 @@ export default function PaperSheet() {
 
 function TableSheet({ table, design }: { readonly table: LineTable; readonly design: TableDesign }) {
   const paper = useMemo(() => paperTable(table, design), [table, design]);
-  if (paper.rows.length === 0) return <p className="hint">{label.noRows}</p>;
+  if (paper.rows.length === 0)
+    return (
+      <div className="paper-empty">
+        <p>{label.noRows}</p>
+        <button type="button" onClick={() => setDesign(design, { rows: 'all' }, label.changed(label.rowsLabel, label.rows.all))}>
+          {label.takeAll}
+        </button>
+      </div>
+    );
   return (
     <table className="typeset">
       <caption>{paper.caption}</caption>
@@ -120,13 +130,20 @@ function FigureSheet({ table, design }: { readonly table: LineTable; readonly de
     const input = samples && feature !== undefined ? featureFitInput(table, samples, feature) : undefined;
     return input && featureFitFigure(input);
   }, [table, samples, feature]);
-  if (!samples) return <p className="hint">{label.noSamples}</p>;
+  const gas = useDesk((state) => state.analysis?.gas);
+  const ladder = useMemo(() => gas && densityLadderFigure(gas.ladder, 'single'), [gas]);
+  const plane = useMemo(() => gas && temperatureDensityFigure(gas, 'single'), [gas]);
   return (
     <>
+      {!samples && <p className="hint">{label.noSamples}</p>}
       {fit && <FigureFrame figure={fit} words={label.fitOf(feature ?? 0)} />}
       {atlas.map((figure) => (
         <FigureFrame key={figure.name} figure={figure} words={label.atlas} />
       ))}
+      <div className="printed-row">
+        {ladder && <FigureFrame figure={ladder} words={label.ladder} />}
+        {plane && <FigureFrame figure={plane} words={label.plane} />}
+      </div>
     </>
   );
 }
@@ -137,10 +154,10 @@ function FigureFrame({ figure, words: said }: { readonly figure: Figure; readonl
     <figure className="printed">
       <figcaption>
         {`${said}: ${Math.round(figure.widthMm)} × ${Math.round(figure.heightMm)} mm`}
-        <button type="button" className="small" onClick={() => void saveFigure(figure, 'svg')}>
+        <button type="button" className="small" aria-label={label.saveSvgOf(said)} onClick={() => void saveFigure(figure, 'svg')}>
           {label.saveSvg}
         </button>
-        <button type="button" className="small" onClick={() => void saveFigure(figure, 'png')}>
+        <button type="button" className="small" aria-label={label.savePngOf(said)} onClick={() => void saveFigure(figure, 'png')}>
           {label.savePng}
         </button>
       </figcaption>

@@ -1,7 +1,6 @@
 import { bibtex, citedMethods, type MethodFacts, type PaperMaterial, type References } from '../../report/index.ts';
 import { writeSession } from '../../session/index.ts';
 import { desk } from '../desk/deskStore.ts';
-import { gasFigureFiles } from './gasFigures.ts';
 
 let loaded: Promise<References> | undefined;
 
@@ -36,7 +35,7 @@ export async function paperMaterial(): Promise<PaperMaterial | undefined> {
     figures: { width, panels },
     fits: fits ? rows.filter((row) => row.feature.verdict?.decision === 'accepted').map((row) => row.feature.number) : [],
     session: writeSession(history),
-    more: gasFigureFiles(analysis.gas),
+    gas: analysis.gas,
     date: new Date().toISOString(),
   };
 }

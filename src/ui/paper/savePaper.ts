@@ -2,10 +2,12 @@ import {
   DEFAULT_DESIGN,
   designedRows,
   type Figure,
+  paperFigures,
   paperFiles,
   provenanceJson,
   TABLE_FORMATS,
   type TableFormatName,
+  withResolution,
   zipArchive,
 } from '../../report/index.ts';
 import { desk, raiseAlert } from '../desk/deskStore.ts';
@@ -31,11 +33,11 @@ export async function saveDesigned(name: TableFormatName): Promise<void> {
 /** Saves a figure as SVG, or as PNG of 300 dots an inch at its printed size. */
 export async function saveFigure(figure: Figure, as: 'svg' | 'png'): Promise<void> {
   if (as === 'svg') return download(`${stem()}-${figure.name}.svg`, figure.svg, 'image/svg+xml');
-  const png = await pngOf(figure.svg, figure.widthMm, figure.heightMm);
-  if (png) download(`${stem()}-${figure.name}.png`, png, 'image/png');
+  download(`${stem()}-${figure.name}.png`, await pngOf(figure), 'image/png');
 }
 
-async function pngOf(svg: string, widthMm: number, heightMm: number): Promise<Blob | null> {
+/** The figure as pixels, with its printed size. */
+async function pngOf({ svg, widthMm, heightMm }: Figure): Promise<Uint8Array<ArrayBuffer>> {
   const image = new Image();
   image.src = URL.createObjectURL(new Blob([svg], { type: 'image/svg+xml' }));
   await image.decode();
@@ -44,14 +46,19 @@ async function pngOf(svg: string, widthMm: number, heightMm: number): Promise<Bl
   canvas.height = Math.round(heightMm * DOTS_PER_MM);
   canvas.getContext('2d')?.drawImage(image, 0, 0, canvas.width, canvas.height);
   URL.revokeObjectURL(image.src);
-  return new Promise((resolve) => canvas.toBlob(resolve, 'image/png'));
+  const blob = await new Promise<Blob | null>((resolve) => canvas.toBlob(resolve, 'image/png'));
+  if (!blob) throw new Error(`the browser could not draw ${widthMm} x ${heightMm} mm`);
+  return withResolution(new Uint8Array(await blob.arrayBuffer()), DOTS_PER_MM);
 }
 
-/** Saves everything for the paper as one ZIP archive. */
+/** Saves everything for the paper as one ZIP archive, each figure as SVG and as PNG. */
 export async function saveArchive(): Promise<void> {
   await settled();
   const material = await paperMaterial();
-  if (material) download(`${stem()}-paper.zip`, zipArchive(paperFiles(material)), 'application/zip');
+  if (!material) return;
+  const more: Record<string, Uint8Array> = {};
+  for (const figure of paperFigures(material)) more[`figures/${figure.name}.png`] = await pngOf(figure);
+  download(`${stem()}-paper.zip`, zipArchive(paperFiles({ ...material, more })), 'application/zip');
 }
 
 export async function saveProvenance(): Promise<void> {
