@@ -619,6 +619,7 @@ export const words = {
     standing: 'verdict',
     flux: 'flux',
     hBeta: 'Hβ = 100',
+    intensity: 'I, dereddened',
     fwhm: 'FWHM',
     snr: 'S/N',
     velocity: 'v',

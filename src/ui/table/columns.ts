@@ -66,6 +66,13 @@ export const TABLE_COLUMNS: readonly TableColumn[] = [
     (r) => finite(r.printed.fluxHbeta100),
   ),
   number(
+    'intensity',
+    112,
+    '',
+    (r) => (r.printed.intensityHbeta100 === undefined ? '' : fluxText(r.printed.intensityHbeta100, r.printed.intensityHbeta100Err)),
+    (r) => finite(r.printed.intensityHbeta100),
+  ),
+  number(
     'fwhm',
     92,
     'km/s',
