@@ -71,6 +71,7 @@ function meant(fits: readonly GroupFit[], at: number): { fit: GroupFit; line: nu
 /** The state after one edit; undefined when the edit finds nothing. */
 function applyEdit(samples: FitSamples, width: WidthPrior, now: Fits, edit: Exclude<FeatureEdit, TieEdit>): Fits | undefined {
   if (edit.edit === 'add') {
+    if (!hasSamples(samples, width, edit.at)) return undefined;
     const added = startAt(samples, now.fits, edit.at, width, edit.absorption ? -1 : 1, 'added by hand');
     return { ...now, fits: refit(samples, width, now.fits, [], [added]) };
   }
@@ -87,6 +88,7 @@ function applyEdit(samples: FitSamples, width: WidthPrior, now: Fits, edit: Excl
       return replace([-apart, apart].map((by) => ({ ...halfOf(component), centre: component.centre + by, byHand: 'split by hand' })));
     }
     case 'move': {
+      if (!hasSamples(samples, width, edit.to)) return undefined;
       const others = withoutComponent(now.fits, fit, component);
       const sign = Math.sign(component.flux) || 1;
       return replace([startAt(samples, others, edit.to, width, sign, 'moved by hand')]);
@@ -98,6 +100,16 @@ function applyEdit(samples: FitSamples, width: WidthPrior, now: Fits, edit: Excl
       return { ...now, fits: now.fits.map((f) => (f === fit ? changed : f)) };
     }
   }
+}
+
+/** A line needs this many usable samples within three sigma of its place. */
+const FEWEST_SAMPLES = 3;
+
+function hasSamples({ x, usable }: FitSamples, width: WidthPrior, at: number): boolean {
+  const reach = Math.max(3 * width.sigmaAt(at), x[1] - x[0]);
+  let count = 0;
+  for (let i = firstAtLeast(x, at - reach); i < x.length && x[i] <= at + reach; i++) count += usable[i];
+  return count >= FEWEST_SAMPLES;
 }
 
 const halfOf = (component: Component) => ({ flux: component.flux / 2, sigma: component.sigma });
