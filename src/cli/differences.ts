@@ -1,17 +1,23 @@
 import { readFileSync } from 'node:fs';
 import { basename } from 'node:path';
+import { createEngine, type FeatureView } from '../engine/index.ts';
 import { ProblemError, wordProblem } from '../problems/index.ts';
 import { compareSessions, readSession, type SessionDocument } from '../session/index.ts';
+import { openAtomicData, withFile } from './files.ts';
 
-/** Prints in what two session files on one spectrum differ: a second opinion. Exit code 0 when they agree, 1 when they differ or cannot be read, 2 without two files. */
+/**
+ * Prints in what two session files on one spectrum differ: a second opinion. With the spectrum at hand every difference says how probable the names are, by the settings of
+ * the first session and nobody's verdicts. Exit code 0 when they agree, 1 when they differ or cannot be read, 2 without two files.
+ */
 export async function differences(args: readonly string[]): Promise<number> {
-  const [first, second, ...more] = args;
+  const [first, second, spectrum, ...more] = args;
   if (first === undefined || second === undefined || more.length > 0) {
-    process.stderr.write('linewright: differences needs two session files\n');
+    process.stderr.write('linewright: differences needs two session files, and takes the spectrum as a third\n');
     return 2;
   }
   try {
-    const found = compareSessions(open(first), open(second));
+    const [one, other] = [open(first), open(second)];
+    const found = compareSessions(one, other, spectrum === undefined ? [] : await weighed(spectrum, one));
     if (!found.sameSource)
       process.stderr.write('linewright: the sessions are about different files; verdicts are compared by wavelength all the same\n');
     for (const { at, sentence } of found.verdicts) process.stdout.write(`${at.toFixed(3)} A (vacuum): ${sentence}\n`);
@@ -24,6 +30,14 @@ export async function differences(args: readonly string[]): Promise<number> {
     process.stderr.write(`linewright: ${wordProblem(error.problem)}\n`);
     return 1;
   }
+}
+
+async function weighed(path: string, { source, settings }: SessionDocument): Promise<readonly FeatureView[]> {
+  const engine = createEngine(openAtomicData(), () => 0);
+  return withFile(path, async (bytes) => {
+    await engine.open(bytes, source?.kind ?? 'guess');
+    return (await engine.analyse(settings, [])).features;
+  });
 }
 
 function open(path: string): SessionDocument {

@@ -77,7 +77,7 @@ async function oneFile(engine: Engine, path: string, kind: SourceKind | 'guess',
       await engine.open(source, kind);
       const analysis = await engine.analyse(options.settings, [], { progress: ({ stage, share }) => tell(stage, share) });
       tell();
-      const content = contentOf(analysis, options, product);
+      const content = contentOf(analysis, options, product, source.size);
       if (options.out === undefined) process.stdout.write(content);
       else writeFileSync(join(options.out, outputName(path, options, product)), content);
       const named = analysis.features.filter((f) => f.name).length;
@@ -98,11 +98,11 @@ async function oneFile(engine: Engine, path: string, kind: SourceKind | 'guess',
 }
 
 /** Nothing is accepted at the terminal: printed tables hold all lines, and say that their names are proposals. */
-function contentOf(analysis: Analysis, options: Arguments, product: Product): string | Uint8Array {
+function contentOf(analysis: Analysis, options: Arguments, product: Product, size: number): string | Uint8Array {
   const design: TableDesign = { ...PRESETS[options.design], rows: 'all' };
   if (product === 'gas') return gasCsv(analysis.gas);
   if (product === 'table') return TABLE_FORMATS[options.format].write(withoutArtefacts(analysis.table), design);
-  return archiveOf(analysis, design);
+  return archiveOf(analysis, design, options.settings, size);
 }
 
 /** The limit at a wavelength in words; the flux unit is that of the table. */

@@ -9,9 +9,9 @@ export const USAGE = `linewright: names the emission lines of thin, glowing gas
                                            lifetimes, critical densities and survival of an ion's thin-gas lines
 
   linewright paper SPECTRUM... --out DIR [options]
-                                           one ZIP a spectrum: tables in every format, atlas, methods, references, provenance
-  linewright differences FIRST.json SECOND.json
-                                           verdicts and settings in which two session files differ
+                                           one ZIP a spectrum: tables in every format, figures, methods, references, provenance, session
+  linewright differences FIRST.json SECOND.json [SPECTRUM]
+                                           verdicts and settings in which two session files differ; with the spectrum also how probable the names are
 
   --out DIR              one file a spectrum in DIR instead of stdout
   --format FORMAT        csv (default), latex, deluxetable, mrt, votable, ecsv, fits or json
