@@ -10,7 +10,7 @@ import { correctionOf, intensitiesOf } from './intensities.ts';
 import { collisionalIons } from './ionAbundances.ts';
 import { type Continuum, jumpResults } from './jumps.ts';
 import { kinematicsOf } from './kinematics.ts';
-import { lineFluxes } from './lineFluxes.ts';
+import { type LineFlux, lineFluxes } from './lineFluxes.ts';
 import { measuredRatios } from './measuredRatios.ts';
 import type { NamedLine } from './namedLine.ts';
 import { curveOf, type ReddeningResult, reddeningOf } from './reddening.ts';
@@ -76,11 +76,17 @@ export function describeGas(named: readonly NamedLine[], context: GasContext): G
   const { fit, zones } = { fit: (reddening as ReddeningResult).fit, zones: (solved as ZonesSolved).zones };
   const correction = correctionOf(named, fluxes, fit, settings.cHbeta);
   const hBetaLine = data.hydrogenicLine('H I', 2, 4);
-  const hBetaIndex = fluxes.findIndex((flux) => flux.lines.length === 1 && flux.lines[0] === hBetaLine);
+  const isHelium = (line: number) => data.lines.ions[data.lines.ion[line]].name === 'He II';
+  const hBetaIndex = fluxes.findIndex(
+    ({ lines }) => lines.includes(hBetaLine) && lines.every((line) => line === hBetaLine || isHelium(line)),
+  );
   const hBeta = hBetaIndex < 0 ? undefined : hBetaIndex;
+  const { shares } = reddening as ReddeningResult;
+  // from here on Balmer lines count with their stellar absorption filled, H beta also without the He II under it
+  const hydrogen = fluxes.map((flux, k) => scaled(flux, (k === hBeta ? shares.get(k)?.pure : shares.get(k)?.filled) ?? 1));
   const ions = collisionalIons(data, fluxes);
   const drawn: Drawn = drawGas({
-    fluxes,
+    fluxes: hydrogen,
     f,
     c,
     cSlopes: Float64Array.from(fluxes, ({ from }) => (correction ? from.reduce((sum, k) => sum + correction.slopes[k], 0) : 0)),
@@ -95,10 +101,12 @@ export function describeGas(named: readonly NamedLine[], context: GasContext): G
   const numbers = (indices: readonly number[]) => indices.flatMap((index) => fluxes[index].from.map((k) => named[k].feature));
   const diagnostics = diagnosticResults(ratios, ln, solved as ZonesSolved, drawn, numbers);
   const ladderTe = LADDER_TE_STEP * Math.round(zones.medium.te / LADDER_TE_STEP);
-  const lnI = fluxes.map(({ flux }, k) => lnIntensity(flux, c, f[k]));
-  const abundances = hBeta === undefined ? [] : abundanceResults({ data, fluxes, lnI, hBeta, ions, zones, drawn });
+  const lnI = hydrogen.map(({ flux }, k) => lnIntensity(flux, c, f[k]));
+  const abundances = hBeta === undefined ? [] : abundanceResults({ data, fluxes: hydrogen, lnI, hBeta, ions, zones, drawn });
   const intensities =
-    correction && hBeta !== undefined ? intensitiesOf(named, fluxes[hBeta], correction, settings.calibrationErr, curve) : undefined;
+    correction && hBeta !== undefined
+      ? intensitiesOf(filledLines(named, hydrogen), hydrogen[hBeta], correction, settings.calibrationErr, curve)
+      : undefined;
   return {
     settings,
     accepted: named.filter((line) => line.lines.length > 0 && line.accepted).length,
@@ -118,6 +126,19 @@ export function describeGas(named: readonly NamedLine[], context: GasContext): G
     kinematics: kinematicsOf(data, named),
     draws: context.draws ?? DRAWS,
   };
+}
+
+const scaled = (flux: LineFlux, share: number): LineFlux => ({ ...flux, flux: flux.flux * share, fluxErr: flux.fluxErr * share });
+
+/** The lines with their stellar absorption filled: each as its flux was. H beta counts as the pure hydrogen line. */
+function filledLines(named: readonly NamedLine[], fluxes: readonly LineFlux[]): NamedLine[] {
+  const lines = [...named];
+  fluxes.forEach(({ from, flux }) => {
+    const measured = from.reduce((sum, k) => sum + named[k].flux, 0);
+    for (const k of from)
+      lines[k] = { ...named[k], flux: (named[k].flux * flux) / measured, fluxErr: (named[k].fluxErr * flux) / measured };
+  });
+  return lines;
 }
 
 function measuredDensities(diagnostics: readonly DiagnosticResult[]): MeasuredDensity[] {

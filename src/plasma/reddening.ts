@@ -27,6 +27,8 @@ export interface ReddeningResult {
   /** Stellar absorption used, Angstrom of equivalent width; its error when it was fitted. */
   readonly stellarEwA: number;
   readonly stellarEwErrA?: number;
+  /** Of each hydrogen line, by its place among the fluxes: light of H I alone over the measured flux, and the flux with stellar absorption filled over it. */
+  readonly shares: ReadonlyMap<number, { readonly pure: number; readonly filled: number }>;
   /** The same from He II alone. */
   readonly helium?: ReddeningFit;
 }
@@ -61,10 +63,20 @@ export function reddeningOf(data: AtomicData, fluxes: readonly LineFlux[], setti
     }
     return fit;
   };
-  if (settings.stellarEwA !== 'fitted')
-    return { lines, fit: attempt(settings.stellarEwA), stellarEwA: settings.stellarEwA, ...(helium ? { helium } : {}) };
-  return { lines, ...fittedStellar(attempt), ...(helium ? { helium } : {}) };
+  const found =
+    settings.stellarEwA === 'fitted' ? fittedStellar(attempt) : { fit: attempt(settings.stellarEwA), stellarEwA: settings.stellarEwA };
+  const c = settings.cHbeta ?? found.fit?.cHbeta ?? 0;
+  const shares = lines.map((line) => {
+    const filled = filledFlux(line, found.stellarEwA);
+    const pure = filled - heliumUnder(line, he4686?.flux ?? 0, c, table, f);
+    return [line.index, { pure: pure / line.flux, filled: filled / line.flux }] as const;
+  });
+  return { lines, ...found, shares: new Map(shares), ...(helium ? { helium } : {}) };
 }
+
+/** Flux of a line with the stellar absorption under it filled: only Balmer lines over a known continuum have some. */
+const filledFlux = ({ flux, nLower, ew }: HydrogenicFlux, stellarEwA: number) =>
+  nLower === 2 && ew !== undefined && ew > 0 ? flux * (1 + stellarEwA / ew) : flux;
 
 function hydrogenFitLines(
   usable: readonly HydrogenicFlux[],
@@ -74,15 +86,12 @@ function hydrogenFitLines(
   table: Omit<Parameters<typeof fitLines>[2], 'ion'>,
   f: (wavelength: number) => number,
 ): FitLine[] {
-  const corrected = usable.map((line) => {
-    const filled = line.nLower === 2 && line.ew !== undefined && line.ew > 0 ? line.flux * (1 + stellarEwA / line.ew) : line.flux;
-    return filled - heliumUnder(line, flux4686, c, table, f);
-  });
+  const corrected = usable.map((line) => filledFlux(line, stellarEwA) - heliumUnder(line, flux4686, c, table, f));
   return fitLines(usable, corrected, { ...table, ion: 'H I' }, f);
 }
 
 /** Observed flux of the He II line under a Balmer line. */
-export function heliumUnder(
+function heliumUnder(
   line: HydrogenicFlux,
   flux4686: number,
   c: number,

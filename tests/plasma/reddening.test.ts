@@ -102,6 +102,23 @@ describe('c(H beta)', () => {
 });
 
 describe('corrected intensities', () => {
+  it('stand on an H beta without stellar absorption and without He II', () => {
+    const lines = simulatedGas({ ...clean, stellarEwA: 3 });
+    const oxygen = lines.findIndex(({ label }) => label === 'O III 5008');
+    const intensity = (settings: Partial<GasSettings>) =>
+      describeGas(lines, { data: bundled, settings: { ...DEFAULT_GAS_SETTINGS, ...settings }, startTe: 11_000, startNe: 1_500 })
+        .intensities?.[oxygen].value ?? 0;
+    expect(Math.abs(intensity({ stellarEwA: 3 }) / 500 - 1)).toBeLessThan(0.005);
+    expect(intensity({ stellarEwA: 0 }) / 500).toBeGreaterThan(1.01);
+  });
+
+  it('are there when H beta goes by the name of a blend with the He II line beside it', () => {
+    const pickering = bundled.hydrogenicLine('He II', 4, 8);
+    const blended = changed(simulatedGas(clean), 'H I 4863', { lines: [bundled.hydrogenicLine('H I', 2, 4), pickering] });
+    const { intensities } = describeGas(blended, { data: bundled, settings: DEFAULT_GAS_SETTINGS, startTe: 11_000, startNe: 1_500 });
+    expect(intensities).toHaveLength(blended.length);
+  });
+
   it('are those of the gas, and their errors carry that of c(H beta) with its correlation', () => {
     const lines = simulatedGas(SOME_GAS);
     const gas = describeGas(lines, { data: bundled, settings: DEFAULT_GAS_SETTINGS, startTe: 11_000, startNe: 1_500 });
