@@ -108,6 +108,15 @@ export interface SkyView {
   readonly lines: readonly { readonly at: number; readonly strength: number }[];
 }
 
+/** A name that a step brought, took or moved without deciding on it. */
+export interface NameChange {
+  /** Position in `Analysis.features`. */
+  readonly feature: number;
+  /** Absent: the feature had no name, or has none now. */
+  readonly from?: { readonly label: string; readonly probability: number };
+  readonly to?: { readonly label: string; readonly probability: number };
+}
+
 /** Everything derived from source, settings and verdicts. */
 export interface Analysis {
   readonly reading: ReadingView;
@@ -132,7 +141,17 @@ export interface Analysis {
   readonly settings: { readonly measure: MeasureSettings; readonly naming: NamingSettings; readonly gas: GasSettings };
   /** What the names in force say of the gas. */
   readonly gas: Gas;
-  readonly missing: readonly { readonly label: string; readonly expectedAt: number; readonly predictedFlux: number }[];
+  /** Strong lines that the names predict and that are not there; what each would imply, a sentence. */
+  readonly missing: readonly {
+    readonly label: string;
+    readonly expectedAt: number;
+    readonly predictedFlux: number;
+    readonly implies: string;
+  }[];
+  /** Features left without a name, by position in `features`; what each would imply, a sentence. */
+  readonly unnamed: readonly { readonly feature: number; readonly implies: string }[];
+  /** What the last step changed in names that it did not decide on. */
+  readonly changes: readonly NameChange[];
   readonly remarks: readonly Remark[];
   /** Verdicts that found no feature any more. */
   readonly lostVerdicts: readonly Verdict[];

@@ -66,7 +66,7 @@ export function withVerdicts(features: readonly FeatureView[], byFeature: readon
 }
 
 /** Stages, verdicts and names put together as they are shown and printed. */
-export function assemble(parts: Parts, features: readonly FeatureView[], gas: Gas): Analysis {
+export function assemble(parts: Parts & Pick<Analysis, 'changes'>, features: readonly FeatureView[], gas: Gas): Analysis {
   const { data, material, measurement, naming, namingSettings } = parts;
   const { medium, mediumStated, fluxUnit, name: title } = material.reading;
   const remarks = [...material.reading.remarks, ...(measurement?.remarks ?? []), ...naming.remarks];
@@ -92,7 +92,14 @@ export function assemble(parts: Parts, features: readonly FeatureView[], gas: Ga
       label: lineLabel(data, m.line, medium),
       expectedAt: fromVacuum(m.expectedAt, medium),
       predictedFlux: m.predictedFlux,
+      implies: m.implies,
     })),
+    unnamed: features.flatMap((feature, k) =>
+      feature.name || feature.verdict?.decision === 'artefact' || feature.measured.artefact
+        ? []
+        : [{ feature: k, implies: naming.features[k].implies }],
+    ),
+    changes: parts.changes,
     remarks,
     lostVerdicts: parts.lost,
     table: lineTableOf(

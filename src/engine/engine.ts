@@ -21,6 +21,7 @@ import { assemble, featureViews, withVerdicts } from './assemble.ts';
 import { fixedNames } from './fixedNames.ts';
 import { marksOf } from './marksOf.ts';
 import { guessKind, type Material, readMaterial, type SourceKind } from './material.ts';
+import { nameChanges } from './nameChanges.ts';
 import { namedPairs } from './namedPairs.ts';
 import { plasmaLines } from './plasmaLines.ts';
 import { plasmaStage } from './plasmaStage.ts';
@@ -157,8 +158,9 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
         timings,
       };
       const views = featureViews(parts);
+      const changes = before?.measured === measured.stamp() ? nameChanges(before.views, views) : [];
       before = { views, measured: measured.stamp(), z: naming.z, measurement };
-      return assemble(parts, views, await gasUnder(views, naming.z, measurement));
+      return assemble({ ...parts, changes }, views, await gasUnder(views, naming.z, measurement));
     },
     shapesAt: (at) => (last ? shapesOfFeature(last.fitted, last.edits ?? [], at) : []),
     limitAt: (at) => last && fluxLimit(last.fitted, last.measurement.model, at),

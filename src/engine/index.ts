@@ -8,6 +8,7 @@ export type {
   CandidateView,
   CompanionView,
   FeatureView,
+  NameChange,
   Progress,
   ReadingView,
   SamplesView,

@@ -48,7 +48,7 @@ export function caseOf(
   settings: NamingSettings,
   forced: boolean,
   measured: number,
-): FeatureNaming {
+): Omit<FeatureNaming, 'implies'> {
   const { candidates, noneProbability } = inferred.weighings[k];
   if (candidates.length === 0) return { candidates: [], noneProbability };
   const { model } = inferred;

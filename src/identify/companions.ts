@@ -156,19 +156,20 @@ export function missingLines(
   scaleOf: (line: number) => { mean: number; seen: number },
   logPredicted: (line: number) => number,
   toleranceKms: number,
-): { line: number; predictedFlux: number; expectedAt: number }[] {
+): { line: number; predictedFlux: number; expectedAt: number; above: number }[] {
   const { lines } = data;
   const [first, end] = linesBetween(lines, survey.low / (1 + model.z), survey.high / (1 + model.z));
-  const missing: { line: number; predictedFlux: number; expectedAt: number }[] = [];
+  const missing: { line: number; predictedFlux: number; expectedAt: number; above: number }[] = [];
   for (let line = first; line < end; line++) {
     if (isLocal(data, line)) continue;
     const scale = scaleOf(line);
     if (!(scale.seen > 0.8)) continue;
     const expectedAt = lines.wavelengthVac[line] * (1 + model.z);
     const log = logPredicted(line) + scale.mean;
-    if (log - survey.logLimitAt(expectedAt) < 0.5) continue;
+    const above = log - survey.logLimitAt(expectedAt);
+    if (above < 0.5) continue;
     if (nearestWithin(marks, expectedAt, (2 * toleranceKms * expectedAt) / SPEED_OF_LIGHT_KMS) === undefined)
-      missing.push({ line, predictedFlux: 10 ** log, expectedAt });
+      missing.push({ line, predictedFlux: 10 ** log, expectedAt, above });
   }
   return missing.sort((a, b) => b.predictedFlux - a.predictedFlux).slice(0, 40);
 }

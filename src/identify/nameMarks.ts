@@ -3,6 +3,7 @@ import type { Remark } from '../problems/index.ts';
 import { caseOf } from './caseOf.ts';
 import { kinOf, missingLines } from './companions.ts';
 import { asMeasured, shownDrift } from './drift.ts';
+import { impliedByAbsence, impliedByNameless } from './implications.ts';
 import { infer } from './inference.ts';
 import { judgeRedshifts } from './judgeRedshifts.ts';
 import { factsOf } from './lineFacts.ts';
@@ -62,9 +63,10 @@ export function nameMarks(
   control.progress?.(0.8);
   const kin = kinOf(data);
   const forced = new Set(fixedSorted.filter((f) => 'lines' in f).map((f) => f.mark));
-  const named = sorted.map((_mark, k) =>
-    caseOf(inferred.placed[k], k, inferred.placed, inferred, kin, data, survey, settings, forced.has(k), sorted[k].wavelength),
-  );
+  const named = sorted.map((mark, k) => ({
+    ...caseOf(inferred.placed[k], k, inferred.placed, inferred, kin, data, survey, settings, forced.has(k), mark.wavelength),
+    implies: impliedByNameless(mark, inferred.weighings[k], survey, data),
+  }));
   const { model, scales } = inferred;
   if (inferred.kind !== settings.kind) remarks.push(kindRemark(inferred.kind));
   const drift = shownDrift(inferred.drift, LEAST_DRIFT_KMS);
@@ -88,7 +90,12 @@ export function nameMarks(
       (line) => scales[factsOf(data).family[line]],
       (line) => predictedLog(factsOf(data), line, model),
       settings.toleranceKms,
-    ).map((m) => ({ ...m, expectedAt: asMeasured(inferred.drift, m.expectedAt) })),
+    ).map(({ line, predictedFlux, expectedAt, above }) => ({
+      line,
+      predictedFlux,
+      expectedAt: asMeasured(inferred.drift, expectedAt),
+      implies: impliedByAbsence(line, above, scales[factsOf(data).family[line]], data),
+    })),
   };
 }
 

@@ -73,6 +73,8 @@ export interface Candidate {
 export interface FeatureNaming {
   readonly candidates: readonly Candidate[];
   readonly noneProbability: number;
+  /** What the feature would imply if it stayed without a name, a sentence. */
+  readonly implies: string;
 }
 
 export interface RedshiftHypothesis {
@@ -108,6 +110,11 @@ export interface Naming {
    */
   readonly drift?: readonly { readonly wavelength: number; readonly kms: number }[];
   readonly remarks: readonly import('../problems/index.ts').Remark[];
-  /** Strong predicted lines without a feature: index into the line list, predicted flux, expected vacuum wavelength. */
-  readonly missing: readonly { readonly line: number; readonly predictedFlux: number; readonly expectedAt: number }[];
+  /** Strong predicted lines without a feature: index into the line list, predicted flux, expected vacuum wavelength, what the absence would imply (a sentence). */
+  readonly missing: readonly {
+    readonly line: number;
+    readonly predictedFlux: number;
+    readonly expectedAt: number;
+    readonly implies: string;
+  }[];
 }

@@ -130,6 +130,8 @@ export const words = {
     facts: 'Facts',
     remarks: 'Remarks',
     expected: 'Expected, not found',
+    nameless: 'Left without a name',
+    namelessHint: 'Features that no line of the list explains well enough.',
     expectedHint: 'Strong lines that the names given so far predict, where no feature was found.',
     expectedAt: (wavelength: string) => `at ${wavelength} Å`,
     noRemarks: 'Nothing had to be assumed.',
@@ -595,6 +597,13 @@ export const words = {
     noFeatures: 'Nothing stands out above the threshold.',
     acceptShown: (n: number) => `Accept ${n} at ≥ 0.9`,
     acceptedMany: (n: number) => `accepted ${n} names at 0.9 and more`,
+  },
+  changes: {
+    title: 'Other names that this changed',
+    hint: 'A verdict teaches: the rest was weighed anew with it.',
+    noName: 'no name',
+    fromTo: (from: string, to: string) => `${from} → ${to}`,
+    status: (n: number) => (n === 1 ? 'one other name changed' : `${n} other names changed`),
   },
   bulk: {
     label: 'Picked rows',

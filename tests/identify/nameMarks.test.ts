@@ -124,7 +124,7 @@ describe('verdicts', () => {
   });
 
   test('a feature declared nameless has no candidates', () => {
-    expect(name(marks, {}, [{ mark: 3, none: true }]).features[3]).toEqual({ candidates: [], noneProbability: 1 });
+    expect(name(marks, {}, [{ mark: 3, none: true }]).features[3]).toMatchObject({ candidates: [], noneProbability: 1 });
   });
 });
 

@@ -134,6 +134,7 @@ async function round(): Promise<void> {
 function arrive(answer: Analysed, isNew: boolean): void {
   const { verdicts } = desk().history.document;
   const rows = deskRows(answer.analysis, verdicts);
+  const { changes } = answer.analysis;
   const kept = isNew ? undefined : nearestRow(rows, desk().chosenAt);
   setDesk({
     stage: 'desk',
@@ -143,6 +144,7 @@ function arrive(answer: Analysed, isNew: boolean): void {
     outOfDate: false,
     // numbers mean other features when measuring has found more or fewer
     ...(rows.length === desk().rows.length ? {} : { picked: [], pickedFrom: undefined }),
+    ...(changes.length > 0 && !isNew ? { status: `${desk().status}; ${words.changes.status(changes.length)}` } : {}),
     chosenAt: (kept ?? mostProminent(rows))?.feature.at,
     ...(isNew ? { range: undefined, gain: 1, filter: {}, tab: 'case' } : {}),
   });

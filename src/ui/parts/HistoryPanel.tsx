@@ -3,6 +3,7 @@ import { useDesk } from '../desk/deskStore.ts';
 import { fixed } from '../figures.ts';
 import { words } from '../words.ts';
 import { CommandButton } from './CommandButton.tsx';
+import { NameChanges } from './NameChanges.tsx';
 
 /** All that was done, latest first; what was taken back stands above it. */
 export function HistoryPanel() {
@@ -16,6 +17,7 @@ export function HistoryPanel() {
         <CommandButton name="undo" className="small" enabled={past.length > 0} />
         <CommandButton name="redo" className="small" enabled={future.length > 0} />
       </div>
+      <NameChanges />
       {past.length + future.length === 0 && <p className="hint">{words.history.empty}</p>}
       <ol>
         {entries.map(({ number, sentence, isUndone }) => (

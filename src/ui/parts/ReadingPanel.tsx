@@ -1,10 +1,10 @@
 import { wordPlace } from '../../problems/index.ts';
 import { useDesk } from '../desk/deskStore.ts';
 import { chooseReading } from '../desk/readingChoices.ts';
-import { fixed } from '../figures.ts';
 import { words } from '../words.ts';
 import { ReadingForm } from './ReadingForm.tsx';
 import { ShelfBox } from './ShelfBox.tsx';
+import { UnexplainedBox } from './UnexplainedBox.tsx';
 
 const { reading: label } = words;
 
@@ -16,7 +16,7 @@ export function ReadingPanel() {
   const analysis = useDesk((state) => state.analysis);
   const choices = useDesk((state) => state.history.document.settings.reading);
   if (!analysis) return null;
-  const { reading, remarks, missing } = analysis;
+  const { reading, remarks } = analysis;
   return (
     <section className="reading">
       <ShelfBox />
@@ -45,19 +45,7 @@ export function ReadingPanel() {
           </li>
         ))}
       </ul>
-      {missing.length > 0 && (
-        <>
-          <h3>{label.expected}</h3>
-          <p className="hint">{label.expectedHint}</p>
-          <ul className="remarks">
-            {missing.map((line) => (
-              <li key={`${line.label} ${line.expectedAt}`}>
-                <strong>{line.label}</strong> {label.expectedAt(fixed(line.expectedAt, 2))}
-              </li>
-            ))}
-          </ul>
-        </>
-      )}
+      <UnexplainedBox />
       {reading.offers.length > 0 && (
         <>
           <h3>{label.offers}</h3>
