@@ -61,7 +61,7 @@ function bandShapes(frame: Frame, band: Band, index: number): Shape[] {
   const middle = curve(band.middle);
   const shown = middle.ys.findIndex(Number.isFinite);
   const last = middle.ys.findLastIndex(Number.isFinite);
-  const area = areaOf(frame, curve(band.low), curve(band.high));
+  const area = areaOf(frame, band);
   const share = ((index % LETTER_PLACES) + 0.5) / LETTER_PLACES;
   const label = shown < 0 ? -1 : Math.round(shown + share * (last - shown));
   return [
@@ -82,18 +82,21 @@ function bandShapes(frame: Frame, band: Band, index: number): Shape[] {
   ];
 }
 
-interface Curve {
-  readonly xs: readonly number[];
-  readonly ys: readonly number[];
-}
-
-/** Outline between the two sides where both are inside. */
-function areaOf({ x, y }: Frame, low: Curve, high: Curve): string {
-  const both = low.ys.flatMap((te, k) => (Number.isFinite(te) && Number.isFinite(high.ys[k]) ? [k] : []));
-  if (both.length < 2) return '';
-  const point = (curve: Curve, k: number) => `${px(place(x, curve.xs[k]))} ${px(place(y, curve.ys[k]))}`;
-  return `M${both.map((k) => point(low, k)).join('L')}L${both
+/** Outline between the two sides, cut at the frame; where both lie beyond one edge there is none. */
+function areaOf({ x, y }: Frame, { tells, at, low, high }: Band): string {
+  const isDensity = tells === 'density';
+  const inside = isDensity
+    ? { from: LOWEST_TE, to: HIGHEST_TE, least: 10 ** LOW_LOG, most: 10 ** HIGH_LOG }
+    : { from: 10 ** LOW_LOG, to: 10 ** HIGH_LOG, least: LOWEST_TE, most: HIGHEST_TE };
+  const cut = (value: number) => Math.min(Math.max(value, inside.least), inside.most);
+  const kept = at.flatMap((other, k) => (other >= inside.from && other <= inside.to && cut(low[k]) < cut(high[k]) ? [k] : []));
+  if (kept.length < 2) return '';
+  const point = (value: number, k: number) => {
+    const [ne, te] = isDensity ? [cut(value), at[k]] : [at[k], cut(value)];
+    return `${px(place(x, Math.log10(ne)))} ${px(place(y, te))}`;
+  };
+  return `M${kept.map((k) => point(low[k], k)).join('L')}L${kept
     .toReversed()
-    .map((k) => point(high, k))
+    .map((k) => point(high[k], k))
     .join('L')}Z`;
 }
