@@ -76,6 +76,23 @@ test('the sample is measured and named, accepted by peak, row and key, undone, k
   expect(desk.faults).toEqual([]);
 });
 
+test('a case shows its own candidates only, also after one in which two are called the same', async ({ page }) => {
+  const desk = new Desk(page);
+  await desk.openSample();
+  // H alpha of the object and of the night sky
+  await desk.chooseRow('H I 6562');
+  await expect(page.locator('.candidate-name').first()).toContainText('H I 6562');
+  await desk.chooseRow('[O III] 5006.84');
+  await expect(page.locator('.candidate-name').first()).toContainText('[O III] 5006.84');
+  await expect(page.locator('.candidate-name', { hasText: 'H I 6562' })).toHaveCount(0);
+  for (let k = 0; k < 25; k++) {
+    await page.keyboard.press('ArrowRight');
+    const numbers = await page.locator('.candidate kbd').allTextContents();
+    expect(numbers).toEqual(numbers.map((_, n) => (n < 9 ? String(n + 1) : '')));
+  }
+  expect(desk.faults).toEqual([]);
+});
+
 test('a refit keeps every verdict on its feature', async ({ page }) => {
   const desk = new Desk(page);
   await desk.openSample();

@@ -4,6 +4,7 @@ import { fixed, powerText, withError } from '../figures.ts';
 import { words } from '../words.ts';
 import { CompanionStrips } from './CompanionStrips.tsx';
 import { Ring } from './Mark.tsx';
+import { uniqueKeys } from './uniqueKeys.ts';
 
 const { case: label } = words;
 
@@ -13,8 +14,8 @@ export function CandidateCase({ row, candidate }: { row: DeskRow; candidate: Can
     <div className="case-body">
       <table className="evidence">
         <tbody>
-          {candidate.evidence.map((piece) => (
-            <tr key={`${piece.kind} ${piece.sentence}`}>
+          {uniqueKeys(candidate.evidence, ({ kind, sentence }) => `${kind} ${sentence}`).map(({ key, item: piece }) => (
+            <tr key={key}>
               <th scope="row">{label.evidence[piece.kind]}</th>
               <td>{piece.sentence}</td>
               <td className="number nats" title={label.natsTitle}>
@@ -60,8 +61,8 @@ function Transition({ transition, share }: { transition: TransitionView; share?:
         <details className="sources">
           <summary>{`${label.sources} (${transition.sources.length})`}</summary>
           <ul>
-            {transition.sources.map((source) => (
-              <li key={source}>{source}</li>
+            {uniqueKeys(transition.sources, (source) => source).map(({ key, item }) => (
+              <li key={key}>{item}</li>
             ))}
           </ul>
         </details>

@@ -7,25 +7,28 @@ import { words } from '../words.ts';
 import { CandidateCase } from './CandidateCase.tsx';
 import { Icon } from './Icon.tsx';
 import { Ring } from './Mark.tsx';
+import { uniqueKeys } from './uniqueKeys.ts';
 
 const { case: label } = words;
 
 /** Candidates of a feature, best first, the case of one of them open. */
 export function Candidates({ row }: { row: DeskRow }) {
   const [opened, setOpened] = useState<{ feature: number; candidate: string }>();
-  const shown = opened?.feature === row.feature.number ? opened.candidate : (row.name ?? row.candidates[0])?.label;
+  const keyed = uniqueKeys(row.candidates, (candidate) => candidate.label);
+  const first = keyed.find(({ item }) => item === row.name) ?? keyed[0];
+  const shown = opened?.feature === row.feature.number ? opened.candidate : first?.key;
   return (
     <section className="candidates" aria-label={label.candidates}>
       {row.candidates.length === 0 && <p className="hint">{label.noCandidates}</p>}
       <ol>
-        {row.candidates.map((candidate, k) => (
+        {keyed.map(({ key, item: candidate }, k) => (
           <CandidateCard
-            key={candidate.label}
+            key={key}
             row={row}
             candidate={candidate}
             digit={k + 1}
-            isOpen={candidate.label === shown}
-            toggle={() => setOpened({ feature: row.feature.number, candidate: candidate.label === shown ? '' : candidate.label })}
+            isOpen={key === shown}
+            toggle={() => setOpened({ feature: row.feature.number, candidate: key === shown ? '' : key })}
           />
         ))}
       </ol>
@@ -35,8 +38,8 @@ export function Candidates({ row }: { row: DeskRow }) {
       </p>
       {row.turnedDown.length > 0 && (
         <ul className="turned-down" aria-label={label.turnedDown}>
-          {row.turnedDown.map((candidate) => (
-            <li key={candidate.label}>
+          {uniqueKeys(row.turnedDown, (candidate) => candidate.label).map(({ key, item: candidate }) => (
+            <li key={key}>
               <s>{candidate.label}</s>
               <button type="button" className="small" onClick={() => acceptCandidate(row, candidate, 'go-on')}>
                 {label.acceptAfterAll}

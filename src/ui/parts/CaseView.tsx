@@ -12,6 +12,7 @@ import { FitByHand } from './FitByHand.tsx';
 import { Icon } from './Icon.tsx';
 import { Mark } from './Mark.tsx';
 import { NoteField } from './NoteField.tsx';
+import { uniqueKeys } from './uniqueKeys.ts';
 
 /** The chosen feature: close-up, numbers, candidates with their evidence, verdict. */
 export function CaseView() {
@@ -77,9 +78,9 @@ function Measured({ row }: { row: DeskRow }) {
           </div>
         ))}
       </dl>
-      {doubts.map((doubt) => (
-        <p key={doubt} className="doubt">
-          {doubt}
+      {uniqueKeys(doubts, (doubt) => doubt).map(({ key, item }) => (
+        <p key={key} className="doubt">
+          {item}
         </p>
       ))}
     </>

@@ -11,6 +11,7 @@ import type { Profile } from '../plot/profileCurve.ts';
 import { profileOf } from '../plot/profileOf.ts';
 import { extent, place, svgPath, svgSteps } from '../plot/svgPath.ts';
 import { words } from '../words.ts';
+import { uniqueKeys } from './uniqueKeys.ts';
 import { useCloseUpPointer } from './useCloseUpPointer.ts';
 
 const WIDTH = 360;
@@ -34,8 +35,8 @@ export function CloseUp({ row }: { row: DeskRow }) {
       <svg width={WIDTH} height={HEIGHT} aria-hidden="true">
         <path className="curve-chosen" d={`M${drawn.centre.toFixed(1)} 0V${HEIGHT}`} />
         <path className="curve-continuum" d={drawn.continuum} />
-        {drawn.components.map(({ at, d }) => (
-          <path key={at} className="curve-component" d={d} />
+        {uniqueKeys(drawn.components, ({ at }) => String(at)).map(({ key, item }) => (
+          <path key={key} className="curve-component" d={item.d} />
         ))}
         {shown !== undefined && <path className="curve-place" d={`M${place(drawn.xAxis, shown).toFixed(1)} 0V${HEIGHT}`} />}
         <path className="curve-data" d={drawn.data} />

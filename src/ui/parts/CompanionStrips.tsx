@@ -9,6 +9,7 @@ import { plotSamplesOf } from '../plot/plotSamples.ts';
 import { profileAt } from '../plot/profileCurve.ts';
 import { extent, svgPath, svgSteps } from '../plot/svgPath.ts';
 import { words } from '../words.ts';
+import { uniqueKeys } from './uniqueKeys.ts';
 
 const { case: label } = words;
 const WIDTH = 108;
@@ -30,8 +31,8 @@ export function CompanionStrips({ row, candidate }: { row: DeskRow; candidate: C
         {label.companions} {hasStrips && <span className="scale">{label.companionsScale}</span>}
       </h3>
       <ul>
-        {candidate.companions.map((companion) => (
-          <li key={`${companion.label} ${companion.expectedAt}`} className={`companion outcome-${companion.outcome}`}>
+        {uniqueKeys(candidate.companions, ({ label: name, expectedAt }) => `${name} ${expectedAt}`).map(({ key, item: companion }) => (
+          <li key={key} className={`companion outcome-${companion.outcome}`}>
             <CompanionHead companion={companion} />
             {samples && companion.outcome !== 'outside' && <Strip samples={samples} companion={companion} fwhmKms={fwhmKms} />}
           </li>

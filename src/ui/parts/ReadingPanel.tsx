@@ -5,6 +5,7 @@ import { words } from '../words.ts';
 import { ReadingForm } from './ReadingForm.tsx';
 import { ShelfBox } from './ShelfBox.tsx';
 import { UnexplainedBox } from './UnexplainedBox.tsx';
+import { uniqueKeys } from './uniqueKeys.ts';
 
 const { reading: label } = words;
 
@@ -23,8 +24,8 @@ export function ReadingPanel() {
       <h2>{label.title}</h2>
       <p className="hint">{label.samples(reading.samples, reading.maskedSamples)}</p>
       <dl className="facts-list" aria-label={label.facts}>
-        {reading.how.map(({ fact, value, reason }) => (
-          <div key={`${fact} ${value}`}>
+        {uniqueKeys(reading.how, ({ fact, value }) => `${fact} ${value}`).map(({ key, item: { fact, value, reason } }) => (
+          <div key={key}>
             <dt>{fact}</dt>
             <dd>
               <strong>{value}</strong>
@@ -36,8 +37,8 @@ export function ReadingPanel() {
       <h3>{label.remarks}</h3>
       {remarks.length === 0 && <p className="hint">{label.noRemarks}</p>}
       <ul className="remarks">
-        {remarks.map((remark) => (
-          <li key={`${remark.code} ${remark.found}`} className={`remark-${remark.weight}`}>
+        {uniqueKeys(remarks, ({ code, found }) => `${code} ${found}`).map(({ key, item: remark }) => (
+          <li key={key} className={`remark-${remark.weight}`}>
             {sentence(remark.found)}
             {remark.where.excerpt && <code>{remark.where.excerpt}</code>}
             {wordPlace(remark.where) && <span> ({wordPlace(remark.where)})</span>}
@@ -50,8 +51,8 @@ export function ReadingPanel() {
         <>
           <h3>{label.offers}</h3>
           <ul className="offers">
-            {reading.offers.map((offer) => (
-              <li key={offer.label}>
+            {uniqueKeys(reading.offers, ({ label: offered }) => offered).map(({ key, item: offer }) => (
+              <li key={key}>
                 <span>{offer.label}</span>
                 <button
                   type="button"
