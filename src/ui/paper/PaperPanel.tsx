@@ -1,24 +1,15 @@
-import { useState } from 'react';
-import {
-  PAPER_COLUMNS,
-  type PaperColumnKey,
-  PRESETS,
-  type PresetName,
-  TABLE_FORMATS,
-  type TableDesign,
-  type TableFormatName,
-} from '../../report/index.ts';
+import { PRESETS, type PresetName, TABLE_FORMATS, type TableDesign, type TableFormatName } from '../../report/index.ts';
 import { setDesk, useDesk } from '../desk/deskStore.ts';
 import { Segments } from '../parts/Segments.tsx';
 import { TextSetting } from '../parts/TextSetting.tsx';
 import { words } from '../words.ts';
+import { ColumnOrder } from './ColumnOrder.tsx';
 import { saveArchive, saveDesigned, saveProvenance } from './savePaper.ts';
 import { setDesign, setPaper, useDesign } from './setPaper.ts';
 import './paper.css';
 
 const { paper: label } = words;
 const PRESET_NAMES = Object.keys(PRESETS) as PresetName[];
-const COLUMN_KEYS = Object.keys(PAPER_COLUMNS) as PaperColumnKey[];
 const FORMATS = Object.keys(TABLE_FORMATS) as TableFormatName[];
 const ROWS = Object.keys(label.rows) as TableDesign['rows'][];
 const SCALES = Object.keys(label.scales) as TableDesign['scale'][];
@@ -53,7 +44,7 @@ export default function PaperPanel() {
           </button>
         ))}
       </fieldset>
-      <Columns design={design} />
+      <ColumnOrder design={design} />
       <Choice
         label={label.rowsLabel}
         options={ROWS}
@@ -179,83 +170,5 @@ function Choice<Option extends string>({ label: name, options, value, names, cho
         ))}
       </select>
     </label>
-  );
-}
-
-/** The columns in their order, each to be moved or left out, and those not taken. */
-function Columns({ design }: { readonly design: TableDesign }) {
-  const [added, setAdded] = useState('');
-  const { columns } = design;
-  const free = COLUMN_KEYS.filter((key) => !columns.includes(key));
-  const take = (next: readonly PaperColumnKey[], sentence: string) => setDesign(design, { columns: next }, sentence);
-  const move = (k: number, by: 1 | -1) => {
-    const next = [...columns];
-    [next[k], next[k + by]] = [next[k + by], next[k]];
-    take(next, label.movedColumn(PAPER_COLUMNS[columns[k]].label));
-  };
-  return (
-    <fieldset>
-      <legend>{label.columns}</legend>
-      <ol className="paper-columns">
-        {columns.map((key, k) => {
-          const name = PAPER_COLUMNS[key].label;
-          return (
-            <li key={key}>
-              <span>{name}</span>
-              <button type="button" className="small" disabled={k === 0} aria-label={label.earlier(name)} onClick={() => move(k, -1)}>
-                ↑
-              </button>
-              <button
-                type="button"
-                className="small"
-                disabled={k === columns.length - 1}
-                aria-label={label.later(name)}
-                onClick={() => move(k, 1)}
-              >
-                ↓
-              </button>
-              <button
-                type="button"
-                className="small"
-                disabled={columns.length === 1}
-                aria-label={label.without(name)}
-                onClick={() =>
-                  take(
-                    columns.filter((each) => each !== key),
-                    label.tookOut(name),
-                  )
-                }
-              >
-                ×
-              </button>
-            </li>
-          );
-        })}
-      </ol>
-      {free.length > 0 && (
-        <span className="with-unit">
-          <select value={added} aria-label={label.addColumn} onChange={(event) => setAdded(event.target.value)}>
-            <option value="">{label.addColumn}</option>
-            {free.map((key) => (
-              <option key={key} value={key}>
-                {PAPER_COLUMNS[key].label}
-              </option>
-            ))}
-          </select>
-          <button
-            type="button"
-            className="small"
-            disabled={added === ''}
-            onClick={() => {
-              const key = free.find((each) => each === added);
-              setAdded('');
-              if (key) take([...columns, key], label.addedColumn(PAPER_COLUMNS[key].label));
-            }}
-          >
-            {label.add}
-          </button>
-        </span>
-      )}
-    </fieldset>
   );
 }

@@ -1,24 +1,36 @@
 import { useState } from 'react';
+import type { FeatureView } from '../../engine/index.ts';
 import { ProblemError, wordProblem } from '../../problems/index.ts';
 import { compareSessions, readSession, type SessionDocument } from '../../session/index.ts';
 import { raiseAlert, useDesk } from '../desk/deskStore.ts';
 import { fixed } from '../figures.ts';
 import { words } from '../words.ts';
+import { AnsweredProblem } from '../workerClient.ts';
+import { weighFreely } from './weighFreely.ts';
 
 const { opinion: label } = words.paper;
+
+/** The other opinion, and the probabilities of all names as no verdict has touched them. */
+interface Other {
+  readonly name: string;
+  readonly document: SessionDocument;
+  readonly weighed: readonly FeatureView[];
+}
 
 /** Another session on the same spectrum beside this one: where they differ, and why. */
 export function SecondOpinion() {
   const document = useDesk((state) => state.history.document);
-  const features = useDesk((state) => state.analysis?.features);
-  const [other, setOther] = useState<{ readonly name: string; readonly document: SessionDocument }>();
-  const found = other && compareSessions(document, other.document, features);
+  const [other, setOther] = useState<Other>();
+  const found = other && compareSessions(document, other.document, other.weighed);
   const take = async (file: File | undefined) => {
     if (!file) return;
     try {
-      setOther({ name: file.name, document: readSession(await file.text(), file.name).document });
+      const opened = { name: file.name, document: readSession(await file.text(), file.name).document };
+      setOther({ ...opened, weighed: [] });
+      const { source, settings } = document;
+      if (source) setOther({ ...opened, weighed: await weighFreely(source, settings) });
     } catch (error) {
-      if (!(error instanceof ProblemError)) throw error;
+      if (!(error instanceof ProblemError || error instanceof AnsweredProblem)) throw error;
       raiseAlert(wordProblem(error.problem));
     }
   };
