@@ -3,7 +3,7 @@ import { abundanceResults, discrepanciesOf } from './abundanceResults.ts';
 import { bandOf } from './bands.ts';
 import { densityLadder, type MeasuredDensity } from './densityLadder.ts';
 import { diagnosticResults, zoneResults } from './diagnosticResults.ts';
-import { type Drawn, drawGas, lnIntensity, lnRatioOf } from './drawGas.ts';
+import { drawGas, lnIntensity } from './drawGas.ts';
 import type { DiagnosticResult, Gas } from './gas.ts';
 import type { GasSettings } from './gasSettings.ts';
 import { correctionOf, intensitiesOf } from './intensities.ts';
@@ -13,9 +13,9 @@ import { kinematicsOf } from './kinematics.ts';
 import { type LineFlux, lineFluxes } from './lineFluxes.ts';
 import { measuredRatios } from './measuredRatios.ts';
 import type { NamedLine } from './namedLine.ts';
-import { curveOf, type ReddeningResult, reddeningOf } from './reddening.ts';
+import { curveOf } from './reddening.ts';
 import { reddeningView } from './reddeningView.ts';
-import { type LnRatio, solveZones, type ZonesSolved } from './solveZones.ts';
+import { settleGas } from './settleGas.ts';
 
 /** What the gas is described from, beside its lines. */
 export interface GasContext {
@@ -30,8 +30,6 @@ export interface GasContext {
   readonly seed?: number;
 }
 
-/** Reddening hangs on Te and ne by a few per cent at most: it settles at once. */
-const ROUNDS = 3;
 const DRAWS = 200;
 const SEED = 1;
 /** The ladder's temperature goes in steps, so that its curves need not be solved anew for every verdict, K. */
@@ -51,29 +49,9 @@ export function describeGas(named: readonly NamedLine[], context: GasContext): G
   const f = Float64Array.from(fluxes, (flux) => curve(flux.restVac));
   const zoneSettings = { te: settings.te, ne: settings.ne, startTe: context.startTe, startNe: context.startNe };
 
-  let [te, ne] = [settings.te ?? context.startTe, settings.ne ?? context.startNe];
-  let reddening: ReddeningResult | undefined;
-  let solved: ZonesSolved | undefined;
-  let ln: LnRatio[] = [];
-  let c = 0;
-  for (let round = 0; round < ROUNDS; round++) {
-    reddening = reddeningOf(data, fluxes, settings, te, ne);
-    c = Math.max(0, settings.cHbeta ?? reddening.fit?.cHbeta ?? 0);
-    const lnI = fluxes.map(({ flux }, k) => lnIntensity(flux, c, f[k]));
-    const relativeErr = (indices: readonly number[]) => {
-      const sum = indices.reduce((total, index) => total + fluxes[index].flux, 0);
-      return Math.hypot(...indices.map((index) => fluxes[index].fluxErr / sum));
-    };
-    const cErr = settings.cHbeta === undefined ? (reddening.fit?.cHbetaErr ?? 0) : 0;
-    ln = ratios.map((ratio) => {
-      const reach = Math.LN10 * cErr * (f[ratio.over[0]] - f[ratio.under[0]]);
-      return { value: lnRatioOf(ratio, lnI), err: Math.hypot(relativeErr(ratio.over), relativeErr(ratio.under), reach) };
-    });
-    solved = solveZones(ratios, ln, zoneSettings);
-    // most of the hydrogen shines in the medium zone
-    ({ te, ne } = solved.zones.medium);
-  }
-  const { fit, zones } = { fit: (reddening as ReddeningResult).fit, zones: (solved as ZonesSolved).zones };
+  const { reddening, solved, ln, c, te, ne } = settleGas(data, fluxes, ratios, f, settings, zoneSettings);
+  const { fit, shares } = reddening;
+  const { zones } = solved;
   const correction = correctionOf(named, fluxes, fit, settings.cHbeta);
   const hBetaLine = data.hydrogenicLine('H I', 2, 4);
   const isHelium = (line: number) => data.lines.ions[data.lines.ion[line]].name === 'He II';
@@ -81,11 +59,10 @@ export function describeGas(named: readonly NamedLine[], context: GasContext): G
     ({ lines }) => lines.includes(hBetaLine) && lines.every((line) => line === hBetaLine || isHelium(line)),
   );
   const hBeta = hBetaIndex < 0 ? undefined : hBetaIndex;
-  const { shares } = reddening as ReddeningResult;
   // from here on Balmer lines count with their stellar absorption filled, H beta also without the He II under it
   const hydrogen = fluxes.map((flux, k) => scaled(flux, (k === hBeta ? shares.get(k)?.pure : shares.get(k)?.filled) ?? 1));
   const ions = collisionalIons(data, fluxes);
-  const drawn: Drawn = drawGas({
+  const drawn = drawGas({
     fluxes: hydrogen,
     f,
     c,
@@ -93,13 +70,13 @@ export function describeGas(named: readonly NamedLine[], context: GasContext): G
     hBeta,
     ratios,
     ions,
-    solved: solved as ZonesSolved,
+    solved,
     settings: zoneSettings,
     seed: context.seed ?? SEED,
     draws: context.draws ?? DRAWS,
   });
   const numbers = (indices: readonly number[]) => indices.flatMap((index) => fluxes[index].from.map((k) => named[k].feature));
-  const diagnostics = diagnosticResults(ratios, ln, solved as ZonesSolved, drawn, numbers);
+  const diagnostics = diagnosticResults(ratios, ln, solved, drawn, numbers);
   const ladderTe = LADDER_TE_STEP * Math.round(zones.medium.te / LADDER_TE_STEP);
   const lnI = hydrogen.map(({ flux }, k) => lnIntensity(flux, c, f[k]));
   const abundances = hBeta === undefined ? [] : abundanceResults({ data, fluxes: hydrogen, lnI, hBeta, ions, zones, drawn });
@@ -113,11 +90,11 @@ export function describeGas(named: readonly NamedLine[], context: GasContext): G
     probable: named.filter((line) => line.lines.length > 0 && !line.accepted).length,
     withoutErr: named.filter((line) => line.lines.length > 0 && !(line.fluxErr > 0)).length,
     ...(hBeta === undefined ? {} : { hBeta: { value: fluxes[hBeta].flux, err: fluxes[hBeta].fluxErr, features: numbers([hBeta]) } }),
-    reddening: reddeningView(data, named, fluxes, reddening as ReddeningResult, settings, te, ne),
+    reddening: reddeningView(data, named, fluxes, reddening, settings, te, ne),
     ...(intensities ? { intensities } : {}),
     diagnostics,
     unused,
-    zones: zoneResults(ratios, solved as ZonesSolved, drawn, zoneSettings),
+    zones: zoneResults(ratios, solved, drawn, zoneSettings),
     bands: ratios.map((ratio, k) => bandOf(ratio, ln[k])),
     jumps: context.continuum ? jumpResults(data, fluxes, context.continuum, c, curve, abundances) : [],
     abundances,

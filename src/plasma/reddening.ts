@@ -11,6 +11,8 @@ export const H_BETA_VAC = 4862.683;
 const HE_II_4686_VAC = 4687.02;
 /** Equivalent widths of stellar absorption among which one is fitted, Angstrom. */
 const HIGHEST_STELLAR_EW = 10;
+/** He II is never taken to be more than the rest of a line: such a line is no hydrogen line. */
+const LEAST_PURE = 0.01;
 const GOLDEN = (Math.sqrt(5) - 1) / 2;
 const GOLDEN_STEPS = 30;
 
@@ -69,7 +71,7 @@ export function reddeningOf(data: AtomicData, fluxes: readonly LineFlux[], setti
   const shares = lines.map((line) => {
     const filled = filledFlux(line, found.stellarEwA);
     const pure = filled - heliumUnder(line, he4686?.flux ?? 0, c, table, f);
-    return [line.index, { pure: pure / line.flux, filled: filled / line.flux }] as const;
+    return [line.index, { pure: Math.max(LEAST_PURE, pure / line.flux), filled: filled / line.flux }] as const;
   });
   return { lines, ...found, shares: new Map(shares), ...(helium ? { helium } : {}) };
 }

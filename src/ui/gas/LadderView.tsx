@@ -86,7 +86,9 @@ function RungItem({ ladder, rung, log }: { readonly ladder: DensityLadder; reado
     <li>
       <details>
         <summary>
-          <span className="rung-name">{rung.label}</span>
+          <span className="rung-name">
+            {rung.label} {!rung.accepted && <span className="muted">{words.standing.open}</span>}
+          </span>
           <span className="number">{rung.nCrit === undefined ? label.unknown : powerText(rung.nCrit, 2)}</span>
           <span className="number">{left === undefined ? '–' : `${percent(left)} %`}</span>
         </summary>
