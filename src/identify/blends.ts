@@ -7,6 +7,8 @@ export interface Single extends Option {
   readonly err: number;
   readonly errUp: number;
   readonly errDown: number;
+  /** How much the excitation of the gas moves the prediction of an ion that is not seen elsewhere, dex. */
+  readonly excited: number;
   /** Weighted number of other lines of the ion that were seen. */
   readonly seen: number;
   /** Nats against every name of the mark that leaves this line out. */

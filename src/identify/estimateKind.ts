@@ -17,11 +17,11 @@ const LEAST_SEEN = 0.8;
 export function estimateKind(data: AtomicData, scales: readonly FamilyScale[]): { kind: ObjectKind; probability: number } {
   const { families } = factsOf(data);
   const nats = KINDS.map((kind) =>
-    families.reduce((sum, { ion, local, mechanism }, i) => {
+    families.reduce((sum, { ion, local, mechanism, zoneEv }, i) => {
       // what light pumps follows the star's spectrum, not the kind of object
       if (local || mechanism === 'fluorescence') return sum;
       const { mean, variance, seen } = scales[i];
-      const off = mean - priorLogScale(data.lines.ions[ion], kind);
+      const off = mean - priorLogScale(data.lines.ions[ion], zoneEv, kind);
       // an ion that was not seen speaks only when it should be stronger than its limit
       if (!(seen > LEAST_SEEN) && off > 0) return sum;
       return sum - Math.min(MOST_NATS, (0.5 * off * off) / (SPREAD_DEX * SPREAD_DEX + variance)) * Math.min(1, 0.2 + seen);

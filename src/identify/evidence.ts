@@ -1,6 +1,7 @@
 import type { AtomicData } from '../atomic/index.ts';
 import { airFromVacuum, SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import type { WeighedCompanion } from './companions.ts';
+import { factsOf } from './lineFacts.ts';
 import type { Evidence, Mark } from './naming.ts';
 import { isLocal } from './options.ts';
 import type { Survey } from './survey.ts';
@@ -19,13 +20,13 @@ export function evidenceOf(
 ): Evidence[] {
   const evidence: Evidence[] = [
     { kind: 'wavelength', nats: weighed.wavelengthNats, sentence: wavelengthSentence(mark, weighed, data) },
-    { kind: 'strength', nats: weighed.strengthNats, sentence: strengthSentence(mark, weighed, data) },
+    { kind: 'strength', nats: weighed.strengthNats - weighed.excitationNats, sentence: strengthSentence(mark, weighed, data) },
   ];
   for (const { finding, nats, sameUpper } of companions) {
-    if (finding.outcome === 'outside' || finding.outcome === 'too-faint') continue;
     evidence.push({ kind: 'companion', nats, sentence: companionSentence(mark, finding, sameUpper, data, medium) });
   }
   const further: Evidence[] = [
+    { kind: 'excitation', nats: weighed.excitationNats, sentence: excitationSentence(weighed, data) },
     { kind: 'ion', nats: weighed.familyNats, sentence: familySentence(weighed, data) },
     { kind: 'ion', nats: weighed.owedNats, sentence: owedSentence(mark, weighed, data) },
     { kind: 'width', nats: weighed.widthNats, sentence: widthSentence(mark, weighed, survey) },
@@ -78,6 +79,10 @@ function companionSentence(
       return `${name}, ${kin}, should have ${share} of this feature’s flux; what stands there is fainter.`;
     case 'absent':
       return `${name}, ${kin}, should have ${share} of this feature’s flux, above the detection limit at ${shown(expectedAt)} Å, and is not there.`;
+    case 'outside':
+      return `${name}, ${kin}, lies outside the observed range.`;
+    case 'too-faint':
+      return `${name}, ${kin}, should have ${share} of this feature’s flux: too faint to be seen here.`;
     default:
       return `${name}, ${kin}, may hide in a stronger feature at its place.`;
   }
@@ -97,6 +102,16 @@ function owedSentence(mark: Mark, { lines, logPredicted, logPredictedErr }: Weig
   const share = Number((10 ** (logPredicted - Math.log10(Math.abs(mark.flux)))).toPrecision(2));
   const sure = 10 ** logPredictedErr;
   return `What is known of ${names} predicts ${share} of this flux here, within a factor ${sure.toFixed(sure < 3 ? 1 : 0)}, and no other feature at this place can be that line.`;
+}
+
+function excitationSentence({ lines, excitationNats }: Weighed, data: AtomicData): string {
+  const { family, families } = factsOf(data);
+  const { zoneEv } = families[family[lines[0]]];
+  const { name } = data.lines.ions[data.lines.ion[lines[0]]];
+  const how = excitationNats > 0 ? 'speaks for' : 'speaks against';
+  return zoneEv > 0
+    ? `${name} shines in gas that takes ${zoneEv.toFixed(0)} eV to make; the strength of other ions of such gas ${how} it.`
+    : `${name} is neutral gas; the strength of other such ions ${how} it.`;
 }
 
 function familySentence({ lines, ionSeen }: Weighed, data: AtomicData): string {

@@ -88,7 +88,7 @@ export function infer(
     );
     scales = posteriors.map((posterior) => summaryOf(posterior));
     missed = scales.reduce((sum, scale, family) => sum + logAbsent(scale.mean, absences[family], model.leftOut), 0);
-    const shared = { data, facts, settings, survey, model, sightings, posteriors, scales, claims: claimsOf(weighings) };
+    const shared = { data, facts, settings, survey, model, sightings, priors, posteriors, scales, claims: claimsOf(weighings) };
     const next = placed.map((mark, j) => weigh(mark, j, { ...shared, rule: rules[j] }));
     const moved = round + 1 < LEAST_ROUNDS ? 1 : shareMoved(weighings, next);
     weighings = next;

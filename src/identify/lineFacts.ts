@@ -26,6 +26,8 @@ export interface Family {
   /** Index into `lines.ions`. */
   readonly ion: number;
   readonly mechanism: Mechanism;
+  /** Energy that makes the gas it shines in, eV: of the ion, or of the ion that recombines to it. */
+  readonly zoneEv: number;
   /** Its lines stand still in the observer's frame. */
   readonly local: boolean;
 }
@@ -87,7 +89,8 @@ function familiesOf({ lines }: AtomicData): Pick<LineFacts, 'family' | 'families
     if (at === undefined) {
       at = families.length;
       index.set(key, at);
-      families.push({ ion: lines.ion[line], mechanism, local });
+      const { creationEv, ionizationEv } = lines.ions[lines.ion[line]];
+      families.push({ ion: lines.ion[line], mechanism, local, zoneEv: mechanism === 'recombination' ? ionizationEv : creationEv });
     }
     family[line] = at;
   }

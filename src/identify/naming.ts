@@ -35,7 +35,7 @@ export const DEFAULT_NAMING_SETTINGS: NamingSettings = { toleranceKms: 60, toler
 
 /** One piece of a case. */
 export interface Evidence {
-  readonly kind: 'wavelength' | 'strength' | 'companion' | 'width' | 'ion' | 'prior' | 'verdict';
+  readonly kind: 'wavelength' | 'strength' | 'excitation' | 'companion' | 'width' | 'ion' | 'prior' | 'verdict';
   /** Log odds it adds, natural logarithm; all pieces of a case add up to its log odds against "none of these". */
   readonly nats: number;
   /** A sentence a referee can read, with its numbers and units. */

@@ -4,6 +4,8 @@ import { chanceLeftOut, type LeftOut } from './leftOut.ts';
 /** What is expected of a family before its lines are looked at. */
 export interface ScalePrior {
   readonly mean: number;
+  /** Mean before the excitation that other ions show is taken in. */
+  readonly base: number;
   /** One sigma, dex. */
   readonly spread: number;
 }

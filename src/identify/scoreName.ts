@@ -65,8 +65,11 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
   const errDown = mixed((p) => p.errDown);
   const excess = Math.log10(Math.abs(mark.flux)) - logPredicted;
   // two halves of normals that join at the prediction
-  const sided = excess > 0 ? errUp : errDown;
-  const join = (2 * sided) / (errUp + errDown);
+  const strengthLog = (x: number) => {
+    const sided = x > 0 ? errUp : errDown;
+    const join = (2 * sided) / (errUp + errDown);
+    return Math.log((1 - WIDE_SHARE) * join * normal(x, sided) + WIDE_SHARE * normal(x, Math.hypot(sided, WIDE_DEX)));
+  };
   // against a stranger anywhere between the neighbours, and faint as strangers are
   const wavelengthNats =
     Math.log((1 - OUTLIER_SHARE) * normal(off, sigma) + OUTLIER_SHARE * normal(off, OUTLIER_SIGMAS * sigma)) +
@@ -76,8 +79,7 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
     sorted.reduce((sum, p) => sum + p.owed, 0),
   );
   const logStrangers = Math.log(strangersPerDex(Math.log10(Math.abs(mark.flux)) - survey.logLimitAt(mark.wavelength)));
-  const strengthNats =
-    Math.log((1 - WIDE_SHARE) * join * normal(excess, sided) + WIDE_SHARE * normal(excess, Math.hypot(sided, WIDE_DEX))) - logStrangers;
+  const strengthNats = strengthLog(excess) - logStrangers;
   let priorNats = -Math.log(context.model.strangers);
   if (parts.length > 1) priorNats += BLEND_PRIOR * (parts.length - 1);
   let claimNats = 0;
@@ -96,6 +98,7 @@ export function scoreName(mark: Mark, j: number, parts: readonly Single[], conte
     logPredictedErr: err,
     wavelengthNats,
     strengthNats,
+    excitationNats: strengthNats + logStrangers - strengthLog(excess + sorted.reduce((sum, p, k) => sum + sortedShares[k] * p.excited, 0)),
     widthNats: widthNats(mark, Math.sqrt(mixing), survey.fwhmKms),
     priorNats,
     claimNats,

@@ -95,10 +95,19 @@ function likelyOnes(mark: Mark, options: readonly Option[], context: WeighContex
       errUp: Math.sqrt(facts.errDex[line] ** 2 + scale.varianceUp),
       errDown: Math.sqrt(facts.errDex[line] ** 2 + scale.varianceDown),
       seen: scale.seen,
+      excited: excitedBy(line, scale, context),
       owed: 0,
     });
   });
   return singles;
+}
+
+/** Ions seen elsewhere stand on their own lines, not on the excitation of the gas. */
+const SEEN_ELSEWHERE = 0.7;
+
+function excitedBy(line: number, { seen }: FamilyScale, { facts, priors }: WeighContext): number {
+  const { mean, base } = priors[facts.family[line]];
+  return seen > SEEN_ELSEWHERE ? 0 : mean - base;
 }
 
 /** A line may hide as a part of a feature when it carries less than this share. */
@@ -132,6 +141,7 @@ function farSingle(mark: Mark, line: number, context: WeighContext, scaleOf: (fa
     errUp: Math.hypot(facts.errDex[line], Math.sqrt(scale.varianceUp)),
     errDown: Math.hypot(facts.errDex[line], Math.sqrt(scale.varianceDown)),
     seen: scale.seen,
+    excited: excitedBy(line, scale, context),
     owed: 0,
   };
 }

@@ -4,7 +4,7 @@ import type { LineFacts } from './lineFacts.ts';
 import type { SystemModel } from './model.ts';
 import type { NamingSettings } from './naming.ts';
 import type { Rule } from './rules.ts';
-import type { FamilyScale, ScalePosterior } from './scalePosterior.ts';
+import type { FamilyScale, ScalePosterior, ScalePrior } from './scalePosterior.ts';
 import type { Sightings } from './sightings.ts';
 import type { Survey } from './survey.ts';
 
@@ -17,6 +17,7 @@ export interface WeighContext {
   readonly model: SystemModel;
   readonly sightings: Sightings;
   readonly posteriors: readonly ScalePosterior[];
+  readonly priors: readonly ScalePrior[];
   readonly scales: readonly FamilyScale[];
   readonly claims: ReadonlyMap<number, Claim>;
   readonly rule: Rule;

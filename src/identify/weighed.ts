@@ -9,6 +9,8 @@ export interface Weighed {
   readonly logPredictedErr: number;
   readonly wavelengthNats: number;
   readonly strengthNats: number;
+  /** The part of `strengthNats` that comes from the excitation other ions show. */
+  readonly excitationNats: number;
   readonly widthNats: number;
   /** How rare strangers and blends are. */
   readonly priorNats: number;

@@ -536,6 +536,7 @@ export const words = {
     evidence: {
       wavelength: 'Wavelength',
       strength: 'Strength',
+      excitation: 'Excitation',
       companion: 'Companions',
       width: 'Width',
       ion: 'Ion',
