@@ -55,17 +55,26 @@ export function drawGas(input: DrawInput): Drawn {
   const drawn = { te: zonal(), ne: zonal(), diagnostics: ratios.map(fresh), abundances: ions.map(fresh) };
   const lnI = new Float64Array(fluxes.length);
   const spread = spreadNormals(draws);
-  const normals = independent(fluxes.map(() => shuffled(spread.slice(), random)));
+  // only what hangs on a flux is drawn: lines of ratios first, so that they are made independent of each other
+  const used = [
+    ...new Set([
+      ...ratios.flatMap(({ over, under }) => [...over, ...under]),
+      ...fluxes.flatMap((_, k) => (input.cSlopes[k] !== 0 || k === input.hBeta ? [k] : [])),
+      ...ions.flatMap(({ parts }) => parts.map(({ index }) => index)),
+    ]),
+  ];
+  const normals = independent(used.map(() => shuffled(spread.slice(), random)));
   const lnFlux = fluxes.map(({ flux }) => Math.log(flux));
   const relative = fluxes.map(({ flux, fluxErr }) => fluxErr / flux);
   for (let draw = 0; draw < draws; draw++) {
     let c = input.c;
-    for (let k = 0; k < fluxes.length; k++) {
-      const moved = Math.log(Math.max(LEAST_SHARE, 1 + relative[k] * normals[k][draw]));
+    for (let u = 0; u < used.length; u++) {
+      const k = used[u];
+      const moved = Math.log(Math.max(LEAST_SHARE, 1 + relative[k] * normals[u][draw]));
       c += input.cSlopes[k] * moved;
       lnI[k] = lnFlux[k] + moved;
     }
-    for (let k = 0; k < fluxes.length; k++) lnI[k] += Math.LN10 * c * f[k];
+    for (const k of used) lnI[k] += Math.LN10 * c * f[k];
     const lnRatios = ratios.map((ratio): LnRatio => ({ value: lnRatioOf(ratio, lnI), err: 1 }));
     const { zones, solutions } = solveZones(ratios, lnRatios, input.settings, solved);
     for (const zone of ZONES) {
@@ -82,13 +91,16 @@ export function drawGas(input: DrawInput): Drawn {
 
 const BISECTIONS = 40;
 const FAR_SIGMA = 6;
+/** Columns made independent of each other at once. */
+const MOST_TOGETHER = 60;
 
 /**
  * Normal deviates spread evenly over probability, ascending: their mean and width are those of the distribution for any number of draws. Shuffled anew for each flux they
  * make a Latin hypercube (McKay, Beckman & Conover 1979, Technometrics 21, 239), which needs far fewer draws than chance alone.
  */
 function spreadNormals(draws: number): Float64Array {
-  return Float64Array.from({ length: draws }, (_, k) => {
+  if (spreads.has(draws)) return spreads.get(draws) as Float64Array;
+  const values = Float64Array.from({ length: draws }, (_, k) => {
     const tail = 1 - (k + 0.5) / draws;
     let [low, high] = [-FAR_SIGMA, FAR_SIGMA];
     for (let step = 0; step < BISECTIONS; step++) {
@@ -98,7 +110,11 @@ function spreadNormals(draws: number): Float64Array {
     }
     return (low + high) / 2;
   });
+  spreads.set(draws, values);
+  return values;
 }
+
+const spreads = new Map<number, Float64Array>();
 
 /** In another order; Fisher & Yates. */
 function shuffled(values: Float64Array, random: SeededRandom): Float64Array {
@@ -111,7 +127,7 @@ function shuffled(values: Float64Array, random: SeededRandom): Float64Array {
 
 /**
  * Takes out of each column what it has in common by chance with the ones before (Gram & Schmidt), then makes its width 1 again: two lines whose draws hang together would
- * make the error of their ratio too small or too large. Columns beyond half the number of draws start anew.
+ * make the error of their ratio too small or too large. They go in groups.
  */
 function independent(columns: Float64Array[]): Float64Array[] {
   const n = columns[0]?.length ?? 0;
@@ -120,7 +136,7 @@ function independent(columns: Float64Array[]): Float64Array[] {
     for (let k = 0; k < n; k++) sum += p[k] * q[k];
     return sum / n;
   };
-  const group = Math.max(1, n >> 1);
+  const group = Math.max(1, Math.min(MOST_TOGETHER, n >> 1));
   columns.forEach((column, c) => {
     for (let before = c - (c % group); before < c; before++) {
       const common = dot(column, columns[before]);

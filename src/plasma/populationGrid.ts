@@ -44,6 +44,18 @@ function populationsOf(model: LevelModel): Float64Array {
  * Interpolation is good to 0.3 % (tests/plasma/populationGrid.test.ts).
  */
 export function emissionGrid(model: LevelModel, transitions: readonly Transition[]): PlasmaGrid {
+  const known = emissions.get(model) ?? new Map<string, PlasmaGrid>();
+  emissions.set(model, known);
+  const key = transitions.join(' ');
+  const grid = known.get(key) ?? newEmissionGrid(model, transitions);
+  known.set(key, grid);
+  return grid;
+}
+
+/** Grids at hand: the same sums are asked for at every verdict. */
+const emissions = new WeakMap<LevelModel, Map<string, PlasmaGrid>>();
+
+function newEmissionGrid(model: LevelModel, transitions: readonly Transition[]): PlasmaGrid {
   const all = populationsOf(model);
   const n = model.levels.length;
   const values = new Float64Array(TE_NODES * NE_NODES);
