@@ -1,11 +1,16 @@
-/** A piece of a printed line: plain text, raised, lowered, or in small capitals. Every printed form is made from these. */
-export type Inline = string | { readonly sup: string } | { readonly sub: string } | { readonly caps: string };
+/** A piece of a printed line: plain text, raised, lowered, in small capitals, or the sign of a quantity, which is set in italics. Every printed form is made from these. */
+export type Inline = string | { readonly sup: string } | { readonly sub: string } | { readonly caps: string } | { readonly sign: string };
 export type InlineText = readonly Inline[];
 
 /** The pieces as plain text: `[O III]`, `10^5`. */
 export const plainText = (pieces: InlineText): string =>
   pieces
-    .map((piece) => (typeof piece === 'string' ? piece : 'sup' in piece ? `^${piece.sup}` : 'sub' in piece ? `_${piece.sub}` : piece.caps))
+    .map((piece) => {
+      if (typeof piece === 'string') return piece;
+      if ('sup' in piece) return `^${piece.sup}`;
+      if ('sub' in piece) return `_${piece.sub}`;
+      return 'caps' in piece ? piece.caps : piece.sign;
+    })
     .join('');
 
 /** `[O III]` -> `[O`, small capitals `iii`, `]`; the parts of a blend keep their `+`. */

@@ -77,6 +77,7 @@ export function latexInline(pieces: InlineText): string {
     .map((piece) => {
       if (typeof piece === 'string') return latexText(piece);
       if ('caps' in piece) return `\\textsc{${latexText(piece.caps)}}`;
+      if ('sign' in piece) return `$${SPECIAL[piece.sign]?.replaceAll('$', '') ?? piece.sign}$`;
       return 'sup' in piece ? `$^{${mathText(piece.sup)}}$` : `$_{${mathText(piece.sub)}}$`;
     })
     .join('');

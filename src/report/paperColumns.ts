@@ -15,6 +15,8 @@ export interface PaperColumn {
   readonly cell: (row: LineRow, design: TableDesign) => InlineText;
 }
 
+/** The sign of a quantity. */
+const sign = (letter: string): Inline => ({ sign: letter });
 const NONE: InlineText = [];
 const ANGSTROM: InlineText = ['Å'];
 const KMS: InlineText = ['km s', { sup: '−1' }];
@@ -24,24 +26,24 @@ const ATOMIC_DIGITS = 2;
 
 export const PAPER_COLUMNS: Readonly<Record<PaperColumnKey, PaperColumn>> = {
   number: column('number', 'number', 'right', ['No.'], NONE, (row) => [String(row.feature)]),
-  observed: column('observed', 'observed wavelength', 'right', ['λ', { sub: 'obs' }], ANGSTROM, (row, { errorDigits }) =>
+  observed: column('observed', 'observed wavelength', 'right', [sign('λ'), { sub: 'obs' }], ANGSTROM, (row, { errorDigits }) =>
     row.wavelengthObsErr === undefined ? [decimals(row.wavelengthObs, 2)] : byError(row.wavelengthObs, row.wavelengthObsErr, errorDigits),
   ),
   ion: column('ion', 'ion', 'left', ['Ion'], NONE, ionCell),
-  laboratory: column('laboratory', 'laboratory wavelength', 'right', ['λ', { sub: 'lab' }], ANGSTROM, (row) =>
+  laboratory: column('laboratory', 'laboratory wavelength', 'right', [sign('λ'), { sub: 'lab' }], ANGSTROM, (row) =>
     row.wavelengthLab ? [row.wavelengthLab.map((w) => decimals(w, 2)).join(', ')] : NONE,
   ),
   transition: column('transition', 'transition', 'left', ['Transition'], NONE, (row) =>
     row.lower || row.upper ? [`${row.lower ?? ''} – ${row.upper ?? ''}`] : NONE,
   ),
-  velocity: column('velocity', 'velocity', 'right', ['v'], KMS, (row, { errorDigits }) =>
+  velocity: column('velocity', 'velocity', 'right', [sign('v')], KMS, (row, { errorDigits }) =>
     byError(row.velocity, row.velocityErr, errorDigits),
   ),
   flux: {
     key: 'flux',
     label: 'flux',
     align: 'right',
-    head: ({ scale }) => (scale === 'dereddened' ? ['I(λ)'] : ['F(λ)']),
+    head: ({ scale }) => [sign(scale === 'dereddened' ? 'I' : 'F'), '(', sign('λ'), ')'],
     unit: ({ scale }, table) => (scale === 'as-measured' ? fluxUnit(table.fluxUnit) : ['Hβ = 100']),
     cell: fluxCell,
   },
@@ -53,13 +55,13 @@ export const PAPER_COLUMNS: Readonly<Record<PaperColumnKey, PaperColumn>> = {
   snr: column('snr', 'signal to noise', 'right', ['S/N'], NONE, (row) =>
     row.snr === undefined ? NONE : [decimals(row.snr, row.snr < 10 ? 1 : 0)],
   ),
-  probability: column('probability', 'probability', 'right', ['P'], NONE, (row) =>
+  probability: column('probability', 'probability', 'right', [sign('P')], NONE, (row) =>
     row.probability === undefined ? NONE : [probability(row.probability)],
   ),
-  criticalDensity: column('criticalDensity', 'critical density', 'right', ['n', { sub: 'crit' }], ['cm', { sup: '−3' }], (row) =>
+  criticalDensity: column('criticalDensity', 'critical density', 'right', [sign('n'), { sub: 'crit' }], ['cm', { sup: '−3' }], (row) =>
     withExponent(row.nCrit),
   ),
-  lifetime: column('lifetime', 'lifetime', 'right', ['τ'], ['s'], (row) => withPower(row.lifetimeS, ATOMIC_DIGITS)),
+  lifetime: column('lifetime', 'lifetime', 'right', [sign('τ')], ['s'], (row) => withPower(row.lifetimeS, ATOMIC_DIGITS)),
   alternatives: column('alternatives', 'other names', 'left', ['Other names'], NONE, (row) => {
     const [first] = row.alternatives;
     return first

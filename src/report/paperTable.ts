@@ -91,7 +91,7 @@ function remarksOf(table: LineTable, design: TableDesign, rows: readonly LineRow
     [`Wavelengths in ${table.medium === 'air' ? 'standard air' : 'vacuum'}${table.mediumStated ? '' : ' (assumed)'}.`],
   ];
   if (design.columns.includes('criticalDensity'))
-    remarks.push(['Critical densities at T', { sub: 'e' }, ` = ${significant(table.te, 3)} K.`]);
+    remarks.push(['Critical densities at ', { sign: 'T' }, { sub: 'e' }, ` = ${significant(table.te, 3)} K.`]);
   if (design.columns.includes('ion') && rows.some((row) => row.thinGas))
     remarks.push([{ sup: '○' }, ' marks lines of a metastable upper level, which need low density.']);
   if (design.columns.includes('flux') && design.blends === 'a-row-each' && rows.some((row) => row.ion?.includes('+')))

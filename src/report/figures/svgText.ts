@@ -39,6 +39,7 @@ export function outlineText(pieces: InlineText | string, size: number): TextOutl
         x += 2.8 * r;
       } else set(piece.sup, SMALL, RAISE);
     } else if ('sub' in piece) set(piece.sub, SMALL, -LOWER);
+    else if ('sign' in piece) set(piece.sign, 1, 0);
     else set(piece.caps.toUpperCase(), SMALL_CAPS, 0);
   }
   return { width: x, svg: paths.join('') };
