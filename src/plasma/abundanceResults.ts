@@ -2,7 +2,7 @@ import type { AtomicData } from '../atomic/index.ts';
 import type { Drawn } from './drawGas.ts';
 import { estimateOf } from './estimate.ts';
 import type { AbundanceResult, Discrepancy } from './gas.ts';
-import { abundanceOf, type CollisionalIon, recombinationAbundances } from './ionAbundances.ts';
+import { abundanceOf, type CollisionalIon, recombinationAbundances, zonePlace } from './ionAbundances.ts';
 import type { LineFlux } from './lineFluxes.ts';
 import type { ZoneStates } from './solveZones.ts';
 import { zoneOfIon } from './zones.ts';
@@ -25,7 +25,7 @@ export function abundanceResults({ data, fluxes, lnI, hBeta, ions, zones, drawn 
   const relativeErr = (index: number) => Math.hypot(fluxes[index].fluxErr / fluxes[index].flux, fluxes[hBeta].fluxErr / fluxes[hBeta].flux);
   const collisional = ions.map((ion, k): AbundanceResult => {
     const state = zones[ion.zone];
-    const estimate = estimateOf(abundanceOf(ion, perHbeta, state), drawn.abundances[k]);
+    const estimate = estimateOf(abundanceOf(ion, perHbeta, zonePlace(state)), drawn.abundances[k]);
     const { value, low, high } = estimate.ended === 'value' ? estimate : { value: Number.NaN, low: Number.NaN, high: Number.NaN };
     return {
       ion: ion.ion,

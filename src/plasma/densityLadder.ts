@@ -1,7 +1,7 @@
-import { type AtomicData, criticalDensity, duration, isInsideRange, isMetastable, powerOfTen, radiativeLifetime } from '../atomic/index.ts';
+import { type AtomicData, duration, isInsideRange, isMetastable, powerOfTen, radiativeLifetime } from '../atomic/index.ts';
+import { densityEffects, densityWhereLeft, LADDER_LOG_NE, survivalAt } from './densityEffects.ts';
 import type { LineFlux } from './lineFluxes.ts';
 import type { NamedLine } from './namedLine.ts';
-import { densityWhereLeft, LADDER_LOG_NE, survivalAt, survivalCurves } from './survivalCurves.ts';
 import { type Zone, zoneOfIon } from './zones.ts';
 
 /** Gases people know, and how many particles a cm^3 of them holds: common practice, no source (the lamp: an ideal gas at 1 mbar and 300 K). */
@@ -116,9 +116,10 @@ function rungOf(data: AtomicData, named: readonly NamedLine[], flux: LineFlux, t
   }
   if (!isMetastable(model, level)) return [];
   const lifetimeS = radiativeLifetime(model, level);
-  const nCrit = criticalDensity(model, level, te);
+  const { curves, critical } = densityEffects(model, te);
+  const nCrit = critical[level];
   if (!Number.isFinite(nCrit)) return [{ ...common, lifetimeS, laboratory: unknownCollisions(flux.label), insideRange: true }];
-  const survival = survivalCurves(model, te)[level];
+  const survival = curves[level];
   const halfAt = densityWhereLeft(survival, 1 / 2);
   const tenthAt = densityWhereLeft(survival, CEILING_SHARE);
   return [

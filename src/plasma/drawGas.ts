@@ -1,5 +1,5 @@
 import { normalTail, type SeededRandom, seededRandom } from '../numeric/index.ts';
-import { abundanceOf, type CollisionalIon } from './ionAbundances.ts';
+import { abundanceOf, type CollisionalIon, zonePlace } from './ionAbundances.ts';
 import type { LineFlux } from './lineFluxes.ts';
 import type { MeasuredRatio } from './measuredRatios.ts';
 import { NE_RANGE, type Solution, TE_RANGE } from './populationGrid.ts';
@@ -157,8 +157,14 @@ function drawAbundances(
   draw: number,
 ): void {
   if (hBeta === undefined) return;
+  const places = {
+    neutral: zonePlace(zones.neutral),
+    low: zonePlace(zones.low),
+    medium: zonePlace(zones.medium),
+    high: zonePlace(zones.high),
+  };
   ions.forEach((ion, k) => {
-    into[k][draw] = abundanceOf(ion, (index) => Math.exp(lnI[index] - lnI[hBeta]), zones[ion.zone]);
+    into[k][draw] = abundanceOf(ion, (index) => Math.exp(lnI[index] - lnI[hBeta]), places[ion.zone]);
   });
 }
 

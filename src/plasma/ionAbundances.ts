@@ -4,7 +4,7 @@ import { PLANCK_ERG_S, SPEED_OF_LIGHT_KMS } from '../units/index.ts';
 import { hBetaEmissivity } from './hBetaEmissivity.ts';
 import type { LineFlux } from './lineFluxes.ts';
 import { transitionsOf } from './measuredRatios.ts';
-import { emissionGrid, type PlasmaGrid, valueAt } from './populationGrid.ts';
+import { emissionGrid, type PlasmaGrid, type Stencil, stencilAt, valueAt } from './populationGrid.ts';
 import type { ZoneState } from './solveZones.ts';
 import { type Zone, zoneOf } from './zones.ts';
 
@@ -48,19 +48,23 @@ export function collisionalIons(data: AtomicData, fluxes: readonly LineFlux[]): 
   });
 }
 
-/** N(ion)/N(H+) from one line; `perHbeta` = I(line)/I(H beta). */
-export const abundanceOfLine = (grid: PlasmaGrid, perHbeta: number, { te, ne }: ZoneState): number =>
-  (perHbeta * hBetaEmissivity(te)) / (Math.exp(valueAt(grid, te, ne)) * HC_ERG_CM);
+/** A zone's place on the grids and its H beta, for all its ions. */
+export interface ZonePlace {
+  readonly stencil: Stencil;
+  readonly hBeta: number;
+}
+
+export const zonePlace = ({ te, ne }: ZoneState): ZonePlace => ({ stencil: stencilAt(te, ne), hBeta: hBetaEmissivity(te) });
 
 /** N(ion)/N(H+), mean of the ion's lines. `perHbeta(index)` = I/I(H beta) of a flux. */
-export function abundanceOf({ parts }: CollisionalIon, perHbeta: (index: number) => number, state: ZoneState): number {
+export function abundanceOf({ parts }: CollisionalIon, perHbeta: (index: number) => number, { stencil, hBeta }: ZonePlace): number {
   let sum = 0;
   let total = 0;
   for (const { index, grid, weight } of parts) {
-    sum += weight * abundanceOfLine(grid, perHbeta(index), state);
+    sum += weight * perHbeta(index) * Math.exp(-valueAt(grid, stencil));
     total += weight;
   }
-  return sum / total;
+  return ((sum / total) * hBeta) / HC_ERG_CM;
 }
 
 /** What recombination lines say of the ion that recombines. */

@@ -96,16 +96,47 @@ const held = (at: number, nodes: number) => Math.min(Math.max(at, 0), nodes - 1)
 const placeOfTe = (te: number) => held(Math.log(te / LOWEST_TE) / LN_TE_STEP, TE_NODES);
 const placeOfNe = (ne: number) => held(Math.log(ne / LOWEST_NE) / LN_NE_STEP, NE_NODES);
 
-const column = new Float64Array(TE_NODES);
+/** Weights of the nodes about one (Te, ne), for many grids. */
+export interface Stencil {
+  /** Places of 16 nodes in `values`, and their weights. */
+  readonly nodes: Int32Array;
+  readonly weights: Float64Array;
+}
 
-/** Value of a grid at te (K), ne (cm^-3); held at its ends. */
-export function valueAt({ values }: PlasmaGrid, te: number, ne: number): number {
-  const i = placeOfTe(te);
-  const j = placeOfNe(ne);
-  const cell = Math.min(Math.floor(i), TE_NODES - 2);
-  for (let row = Math.max(0, cell - 1); row <= Math.min(TE_NODES - 1, cell + 2); row++)
-    column[row] = between(values, row * NE_NODES, 1, NE_NODES, j);
-  return between(column, 0, 1, TE_NODES, i);
+/** The nodes and weights of the cubic at a fraction among `count` nodes: the four nearest, the outer one continued straight at the ends. */
+function weightsAt(at: number, count: number): { readonly nodes: readonly number[]; readonly weights: readonly number[] } {
+  const cell = Math.min(Math.floor(at), count - 2);
+  const t = at - cell;
+  let [w0, w1, w2, w3] = [
+    (-t + 2 * t ** 2 - t ** 3) / 2,
+    (2 - 5 * t ** 2 + 3 * t ** 3) / 2,
+    (t + 4 * t ** 2 - 3 * t ** 3) / 2,
+    (t ** 3 - t ** 2) / 2,
+  ];
+  if (cell === 0) [w0, w1, w2] = [0, w1 + 2 * w0, w2 - w0];
+  if (cell === count - 2) [w1, w2, w3] = [w1 - w3, w2 + 2 * w3, 0];
+  return { nodes: [Math.max(0, cell - 1), cell, cell + 1, Math.min(count - 1, cell + 2)], weights: [w0, w1, w2, w3] };
+}
+
+/** @param te K; @param ne cm^-3; both held at the ends of the grid */
+export function stencilAt(te: number, ne: number): Stencil {
+  const rows = weightsAt(placeOfTe(te), TE_NODES);
+  const columns = weightsAt(placeOfNe(ne), NE_NODES);
+  const nodes = new Int32Array(16);
+  const weights = new Float64Array(16);
+  for (let i = 0; i < 4; i++)
+    for (let j = 0; j < 4; j++) {
+      nodes[4 * i + j] = rows.nodes[i] * NE_NODES + columns.nodes[j];
+      weights[4 * i + j] = rows.weights[i] * columns.weights[j];
+    }
+  return { nodes, weights };
+}
+
+/** Value of a grid at the place of a stencil. */
+export function valueAt({ values }: PlasmaGrid, { nodes, weights }: Stencil): number {
+  let sum = 0;
+  for (let k = 0; k < nodes.length; k++) sum += weights[k] * values[nodes[k]];
+  return sum;
 }
 
 /** A grid along ln ne at one temperature, or along ln Te at one density. */

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { survival } from '../../src/atomic/index.ts';
+import { criticalDensity, survival } from '../../src/atomic/index.ts';
 import { DEFAULT_GAS_SETTINGS, describeGas, type NamedLine } from '../../src/plasma/index.ts';
 import { bundled } from '../atomic/bundledData.ts';
 import { SOME_GAS, simulatedGas } from './simulatedGas.ts';
@@ -27,6 +27,15 @@ describe('the density ladder', () => {
     });
     expect(rung.halfAt).toBeGreaterThan(3e5);
     expect(rung.halfAt).toBeLessThan(1e6);
+  });
+
+  it('its critical densities are those the tables of the trade are checked with', () => {
+    for (const { label, ion, nCrit } of ladder.rungs) {
+      const model = bundled.levelModel(ion);
+      const line = simulatedGas(SOME_GAS).find((each) => each.label === label);
+      if (!model || !line || nCrit === undefined) throw new Error(label);
+      expect(nCrit / criticalDensity(model, bundled.lines.upperLevel[line.lines[0]], ladder.te), label).toBeCloseTo(1, 9);
+    }
   });
 
   it('counts the collisions in one lifetime: 5007 waits 37 s and is struck 10^13 times in air', () => {

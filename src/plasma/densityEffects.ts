@@ -1,4 +1,4 @@
-import { collisionRates, type LevelModel, populationsFromRates } from '../atomic/index.ts';
+import { collisionRates, type LevelModel, populationsFromRates, radiativeLifetime } from '../atomic/index.ts';
 
 /** Densities at which survival is tabulated, log10 cm^-3. */
 export const LADDER_LOG_NE: readonly number[] = Array.from({ length: 53 }, (_, k) => -1 + k * 0.4);
@@ -7,18 +7,25 @@ const FED_BY_OTHERS = 3;
 /** Stands for no density at all, cm^-3. */
 const NO_DENSITY_CM3 = 1e-6;
 
-const kept = new WeakMap<LevelModel, { readonly te: number; readonly curves: readonly Float64Array[] }>();
+/** What density does to the levels of an atom at one temperature; one entry a level. */
+export interface DensityEffects {
+  readonly te: number;
+  /** At the densities of `LADDER_LOG_NE`; NaN where no tabulated collision excites the level. */
+  readonly curves: readonly Float64Array[];
+  /** cm^-3, collisions to all levels; as `criticalDensity`. */
+  readonly critical: readonly number[];
+}
+
+const kept = new WeakMap<LevelModel, DensityEffects>();
 
 /**
  * Survival of all levels of an atom: emission per ion and electron over that in the thinnest gas (over its peak, where that is more than three times higher), at the densities of
  * `LADDER_LOG_NE`.
  * Solved at once for all levels; the last temperature of each atom is kept.
- *
- * @returns one curve a level; NaN where no tabulated collision excites it
  */
-export function survivalCurves(model: LevelModel, te: number): readonly Float64Array[] {
+export function densityEffects(model: LevelModel, te: number): DensityEffects {
   const known = kept.get(model);
-  if (known?.te === te) return known.curves;
+  if (known?.te === te) return known;
   const q = collisionRates(model, te);
   const thin = populationsFromRates(model, q, NO_DENSITY_CM3).map((share) => share / NO_DENSITY_CM3);
   const curves = model.levels.map(() => new Float64Array(LADDER_LOG_NE.length));
@@ -31,8 +38,18 @@ export function survivalCurves(model: LevelModel, te: number): readonly Float64A
     const peak = curve.reduce((most, value) => Math.max(value, most), 0);
     if (peak > FED_BY_OTHERS) for (let k = 0; k < curve.length; k++) curve[k] /= peak;
   }
-  kept.set(model, { te, curves });
-  return curves;
+  const effects = { te, curves, critical: model.levels.map((_, level) => criticalOf(model, level, q)) };
+  kept.set(model, effects);
+  return effects;
+}
+
+/** Critical density as `criticalDensity` defines it, from rates at hand. */
+function criticalOf(model: LevelModel, level: number, q: Float64Array): number {
+  const n = model.levels.length;
+  let out = 0;
+  for (let to = 0; to < n; to++) if (to !== level) out += q[level * n + to];
+  const lifetime = radiativeLifetime(model, level);
+  return Number.isFinite(lifetime) ? 1 / (lifetime * out) : Number.NaN;
 }
 
 /** Survival at a density between the nodes (cm^-3), straight in the logarithms; held outside. */
