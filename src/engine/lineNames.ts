@@ -21,22 +21,31 @@ export function lineLabel(data: AtomicData, line: number, medium: Medium): strin
   return `${ionLabel(data, line)} ${fromVacuum(data.lines.wavelengthVac[line], medium).toFixed(2)}`;
 }
 
-/** The key under which a verdict remembers a transition. */
+/** What tells a line of the sky from the same transition in the object. */
+const SKY_PREFIX = 'sky ';
+const isOfSky = (data: AtomicData, line: number) => ['sky', 'telluric'].includes(data.lines.nature(line));
+
+/** The key under which a verdict remembers a transition: `O III 5008.240`; `sky O I 5578.887` for one of the sky. */
 export function lineKey(data: AtomicData, line: number): LineKey {
-  return `${data.lines.ions[data.lines.ion[line]].name} ${data.lines.wavelengthVac[line].toFixed(KEY_DECIMALS)}`;
+  const key = `${data.lines.ions[data.lines.ion[line]].name} ${data.lines.wavelengthVac[line].toFixed(KEY_DECIMALS)}`;
+  return isOfSky(data, line) ? `${SKY_PREFIX}${key}` : key;
 }
 
 /** The transition a key means in this edition of the list; undefined when it holds none of that ion near that wavelength. */
 export function lineOfKey(data: AtomicData, key: LineKey): number | undefined {
+  const ofSky = key.startsWith(SKY_PREFIX);
   const cut = key.lastIndexOf(' ');
-  const ion = key.slice(0, cut);
+  const ion = key.slice(ofSky ? SKY_PREFIX.length : 0, cut);
   const wavelength = Number(key.slice(cut + 1));
   const [first, end] = linesBetween(data.lines, wavelength - KEY_REACH_A, wavelength + KEY_REACH_A);
-  let best: number | undefined;
-  for (let line = first; line < end; line++) {
-    if (data.lines.ions[data.lines.ion[line]].name !== ion) continue;
-    if (best === undefined || Math.abs(data.lines.wavelengthVac[line] - wavelength) < Math.abs(data.lines.wavelengthVac[best] - wavelength))
-      best = line;
-  }
-  return best;
+  const named = Array.from({ length: Math.max(0, end - first) }, (_, k) => first + k).filter(
+    (line) => data.lines.ions[data.lines.ion[line]].name === ion,
+  );
+  // keys from before lines of the sky had a mark of their own may mean either
+  const meant = named.filter((line) => isOfSky(data, line) === ofSky);
+  const away = (line: number) => Math.abs(data.lines.wavelengthVac[line] - wavelength);
+  return (meant.length > 0 ? meant : named).reduce<number | undefined>(
+    (best, line) => (best === undefined || away(line) < away(best) ? line : best),
+    undefined,
+  );
 }

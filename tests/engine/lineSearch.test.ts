@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { companionFinder } from '../../src/atomic/index.ts';
 import { lineRecord, searchLines } from '../../src/engine/index.ts';
+import { lineKey, lineOfKey } from '../../src/engine/lineNames.ts';
 import { bundled, lineAtAir } from '../atomic/bundledData.ts';
 
 const found = (query: string) => searchLines(bundled, query).lines.map((l) => `${l.ion} ${l.wavelengthAir.toFixed(2)}`);
@@ -52,4 +53,17 @@ test('a record holds levels, A value, lifetime, critical density, strength and s
   expect(doublet?.relation).toBe('same-upper-level');
   expect(1 / (doublet?.ratio ?? 0)).toBeCloseTo(2.98, 1);
   expect(() => lineRecord(bundled, -1, 10_000, 1_000, companionFinder(bundled))).toThrow(RangeError);
+});
+
+test('a line of the sky and the same transition of the object are remembered apart', () => {
+  const { lines } = bundled;
+  const oi = Array.from({ length: lines.count }, (_, line) => line).filter(
+    (line) => lines.ions[lines.ion[line]].name === 'O I' && Math.abs(lines.wavelengthVac[line] - 5578.887) < 0.05,
+  );
+  const keys = oi.map((line) => lineKey(bundled, line));
+  expect(oi.length).toBeGreaterThanOrEqual(2);
+  expect(new Set(keys).size).toBe(keys.length);
+  for (const [k, line] of oi.entries()) expect(lineOfKey(bundled, keys[k])).toBe(line);
+  // a key of an older session means the object's line
+  expect(lineKey(bundled, lineOfKey(bundled, keys[0].replace('sky ', '')) ?? -1)).not.toMatch(/^sky/);
 });
