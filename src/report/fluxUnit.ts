@@ -97,8 +97,14 @@ function times(unit: Unit, name: string, power: number): Unit {
   return { ...unit, powers };
 }
 
+/** Names that CDS spells otherwise. */
+const CDS_NAMES: Readonly<Record<string, string>> = { count: 'ct' };
+
 function spell({ exponent, powers }: Unit, style: UnitStyle): string {
-  const names = [...powers].map(([name, power]) => (power === 1 ? name : `${name}${style === 'vounits' ? '**' : ''}${power}`));
+  const names = [...powers].map(([standard, power]) => {
+    const name = style === 'cds' ? (CDS_NAMES[standard] ?? standard) : standard;
+    return power === 1 ? name : `${name}${style === 'vounits' ? '**' : ''}${power}`;
+  });
   if (exponent === 0) return names.join(style === 'fits' ? ' ' : '.');
   if (style === 'fits') return `10**${exponent} ${names.join(' ')}`;
   return style === 'vounits' ? `10**${exponent}${names.join('.')}` : `10${exponent > 0 ? '+' : ''}${exponent}${names.join('.')}`;

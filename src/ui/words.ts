@@ -437,6 +437,7 @@ export const words = {
     saveHint:
       'The archive holds the table in every format, figures, methods, references, provenance and the session. Machine-readable formats hold all columns of these lines.',
     archive: 'Everything as one ZIP',
+    making: 'Drawing the figures …',
     provenance: 'Provenance',
     noRows: 'No line is accepted yet: the table would be empty. Accept some, or take more lines.',
     takeAll: 'Take all lines',

@@ -18,4 +18,5 @@ test.each([
 test('every standard has its spelling', () => {
   expect(lineFluxUnit('1e-15 erg/s/cm2/A', 'vounits')).toBe('10**-15erg.s**-1.cm**-2');
   expect(lineFluxUnit('1e-15 erg/s/cm2/A', 'cds')).toBe('10-15erg.s-1.cm-2');
+  expect(lineFluxUnit('counts', 'cds')).toBe('ct.Angstrom');
 });

@@ -10,7 +10,7 @@ import {
   withResolution,
   zipArchive,
 } from '../../report/index.ts';
-import { desk, raiseAlert } from '../desk/deskStore.ts';
+import { desk, raiseAlert, setDesk } from '../desk/deskStore.ts';
 import { settled } from '../desk/engineRuns.ts';
 import { download, stem } from '../desk/files.ts';
 import { words } from '../words.ts';
@@ -56,6 +56,7 @@ export async function saveArchive(): Promise<void> {
   await settled();
   const material = await paperMaterial();
   if (!material) return;
+  setDesk({ status: words.paper.making });
   const more: Record<string, Uint8Array> = {};
   for (const figure of paperFigures(material)) more[`figures/${figure.name}.png`] = await pngOf(figure);
   download(`${stem()}-paper.zip`, zipArchive(paperFiles({ ...material, more })), 'application/zip');
