@@ -22,6 +22,7 @@ export { withResolution } from './figures/withResolution.ts';
 export { TABLE_FORMATS, type TableFormat, type TableFormatName } from './formats.ts';
 export { gasCsv } from './gasCsv.ts';
 export { type Inline, type InlineText, plainText } from './inline.ts';
+export { knownDesign } from './knownDesign.ts';
 export { latexText } from './latex.ts';
 export { acceptedRows, type LineRow, type LineTable, withoutArtefacts } from './lineTable.ts';
 export { citedMethods, type MethodFacts, methodsText } from './methods.ts';

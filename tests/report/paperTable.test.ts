@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { chosenRows, DEFAULT_DESIGN, PRESETS, paperTable, plainText } from '../../src/report/index.ts';
+import { chosenRows, DEFAULT_DESIGN, knownDesign, PRESETS, paperTable, plainText } from '../../src/report/index.ts';
 import { blend, oIII, table } from './someTable.ts';
 
 const nameless = { ...blend, feature: 3, ion: undefined, wavelengthLab: undefined, wavelengthObs: 4000, note: '' };
@@ -54,5 +54,19 @@ describe('a designed table', () => {
     expect(said(DEFAULT_DESIGN)).toContain('standard air');
     expect(said(DEFAULT_DESIGN)).not.toContain('proposals');
     expect(said(PRESETS.appendix)).toContain('proposals');
+  });
+});
+
+describe('a design out of a session file', () => {
+  test('comes back as it was when this release knows all of it', () => {
+    for (const design of Object.values(PRESETS)) expect(knownDesign(design)).toEqual(design);
+    expect(knownDesign({ ...PRESETS.letter, caption: 'Lines' })).toEqual({ ...PRESETS.letter, caption: 'Lines' });
+    expect(knownDesign(undefined)).toBe(DEFAULT_DESIGN);
+  });
+
+  test('loses what this release does not know, and never the table', () => {
+    const odd = knownDesign({ columns: ['ion', 'colour', 'ion', 7, 'constructor'], rows: 'some', errorDigits: 3, caption: 5 });
+    expect(odd).toEqual({ ...DEFAULT_DESIGN, columns: ['ion'] });
+    expect(paperTable(rows, knownDesign({ columns: 'all' })).columns).toHaveLength(DEFAULT_DESIGN.columns.length);
   });
 });

@@ -1,4 +1,4 @@
-import { bibtex, citedMethods, type MethodFacts, type PaperMaterial, type References } from '../../report/index.ts';
+import { bibtex, citedMethods, knownDesign, type MethodFacts, type PaperMaterial, type References } from '../../report/index.ts';
 import { writeSession } from '../../session/index.ts';
 import { desk } from '../desk/deskStore.ts';
 
@@ -27,7 +27,7 @@ export async function paperMaterial(): Promise<PaperMaterial | undefined> {
   const { width, panels, fits } = paperFigures;
   return {
     table: analysis.table,
-    ...(paper?.design ? { design: paper.design } : {}),
+    design: knownDesign(paper?.design),
     methods: analysis.methods,
     ...(paper?.methods === undefined ? {} : { methodsEdited: paper.methods }),
     references: await references(),

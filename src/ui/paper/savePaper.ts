@@ -1,7 +1,7 @@
 import {
-  DEFAULT_DESIGN,
   designedRows,
   type Figure,
+  knownDesign,
   paperFigures,
   paperFiles,
   provenanceJson,
@@ -23,7 +23,7 @@ export async function saveDesigned(name: TableFormatName): Promise<void> {
   await settled();
   const { analysis, history } = desk();
   if (!analysis) return;
-  const design = history.document.settings.paper?.design ?? DEFAULT_DESIGN;
+  const design = knownDesign(history.document.settings.paper?.design);
   const table = designedRows(analysis.table, design);
   if (table.rows.length === 0) return raiseAlert(words.paper.noRows);
   const format = TABLE_FORMATS[name];

@@ -1,4 +1,5 @@
-import { DEFAULT_DESIGN, type TableDesign } from '../../report/index.ts';
+import { useMemo } from 'react';
+import { knownDesign, type TableDesign } from '../../report/index.ts';
 import type { PaperSettings } from '../../session/index.ts';
 import { set } from '../desk/decisions.ts';
 import { useDesk } from '../desk/deskStore.ts';
@@ -12,7 +13,10 @@ export function setPaper(change: Partial<PaperSettings>, sentence: string): void
 }
 
 /** The design in force. */
-export const useDesign = (): TableDesign => useDesk((state) => state.history.document.settings.paper?.design) ?? DEFAULT_DESIGN;
+export function useDesign(): TableDesign {
+  const stored = useDesk((state) => state.history.document.settings.paper?.design);
+  return useMemo(() => knownDesign(stored), [stored]);
+}
 
 export const setDesign = (design: TableDesign, change: Partial<TableDesign>, sentence: string) =>
   setPaper({ design: { ...design, ...change } }, sentence);
