@@ -1,5 +1,6 @@
 /// <reference lib="webworker" />
 import { type AtomicData, type CompanionFinder, companionFinder, loadAtomicData } from '../atomic/index.ts';
+import { prepareNaming } from '../identify/index.ts';
 import { type Problem, ProblemError } from '../problems/index.ts';
 import type { ByteSource } from '../readers/index.ts';
 import type { SamplesView } from './analysis.ts';
@@ -64,6 +65,7 @@ async function start(id: number, bundleUrl: string): Promise<void> {
   const data = loadAtomicData(new Uint8Array(await response.arrayBuffer()));
   engine = createEngine(data, () => performance.now() / 1000);
   say({ say: 'started', id, atomicVersion: data.version, lineCount: data.lines.count });
+  prepareNaming(data);
 }
 
 async function analyse(running: Engine, request: Extract<WorkerRequest, { ask: 'analyse' }>): Promise<void> {

@@ -25,13 +25,13 @@ const MOST_COMPANIONS = 5;
 const SAME_UPPER_DEX = 0.07;
 const MULTIPLET_DEX = 0.16;
 /** Pumping fills the levels of a multiplet unevenly, dex. */
-const PUMPED_DEX = 0.5;
+const PUMPED_DEX = 0.35;
 /** The ion's scale already holds part of this evidence: it counts by this share. */
 const SHARE = 0.6;
 const MOST_FOR = 2.5;
 /** An observer's list leaves lines out: an absent companion counts this much at most, and all that speak against together. */
 const MOST_AGAINST = 2.5;
-const MOST_AGAINST_TOGETHER = 3;
+const MOST_AGAINST_TOGETHER = 5;
 /** Marks without a width: two lines nearer than this many errors of a mark could not be told apart. */
 const UNRESOLVED_SIGMAS = 3;
 

@@ -14,3 +14,4 @@ export {
   type ObjectKind,
   type RedshiftHypothesis,
 } from './naming.ts';
+export { prepareNaming } from './prepareNaming.ts';

@@ -10,6 +10,8 @@ const MOST_MARKS = 60;
 const ROUNDS = 3;
 /** Names of one redshift lean on each other: their evidence counts by this share. */
 const TRUST = 0.35;
+/** Hypotheses worth showing. */
+const MOST_SHOWN = 6;
 /** One or two features never settle a redshift. */
 const FEW_MARKS = 3;
 
@@ -26,7 +28,7 @@ export function judgeRedshifts(
   settings: NamingSettings,
 ): RedshiftHypothesis[] {
   const shown = marks.filter((m) => !m.artefact && m.flux > 0);
-  if (hypotheses.length < 2 || hypotheses[0].probability > SETTLED || shown.length < FEW_MARKS) return [...hypotheses];
+  if (hypotheses.length < 2 || hypotheses[0].probability > SETTLED || shown.length < FEW_MARKS) return hypotheses.slice(0, MOST_SHOWN);
   const bright = [...shown]
     .sort((a, b) => b.flux - a.flux)
     .slice(0, MOST_MARKS)
@@ -39,5 +41,8 @@ export function judgeRedshifts(
   const top = Math.max(...logs);
   const weights = logs.map((log) => Math.exp(log - top));
   const total = weights.reduce((a, b) => a + b, 0);
-  return hypotheses.map((h, k) => ({ ...h, probability: weights[k] / total })).sort((a, b) => b.probability - a.probability);
+  return hypotheses
+    .map((h, k) => ({ ...h, probability: weights[k] / total }))
+    .sort((a, b) => b.probability - a.probability)
+    .slice(0, MOST_SHOWN);
 }

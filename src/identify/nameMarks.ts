@@ -52,8 +52,8 @@ export function nameMarks(
       where: {},
       found: `the redshift is not certain: ${redshifts
         .slice(0, 3)
-        .map((h) => `z = ${h.z.toFixed(4)} (${(100 * h.probability).toFixed(0)} %)`)
-        .join(', ')}`,
+        .map((h) => `z = ${h.z.toFixed(4)} (${(100 * h.probability).toFixed(0)} %; ${h.reason})`)
+        .join(', or ')}`,
       doThis: 'Type the redshift if you know it.',
     });
   }

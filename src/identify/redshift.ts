@@ -198,5 +198,5 @@ function reasonOf(scored: Scored, data: AtomicData, marks: number, probability: 
     .map((line) => `${data.lines.ions[data.lines.ion[line]].name} ${Math.round(data.lines.wavelengthVac[line])}`);
   const few = marks < 3 ? `; ${marks === 1 ? 'one feature' : 'two features'} cannot settle a redshift` : '';
   const unsure = probability < 0.9 && marks >= 3 ? '; other redshifts fit nearly as well' : '';
-  return `${scored.matched.length} strong lines agree (${names.join(', ')}${scored.matched.length > 4 ? ' ...' : ''})${few}${unsure}`;
+  return `${scored.matched.length === 1 ? 'one strong line agrees' : `${scored.matched.length} strong lines agree`} (${names.join(', ')}${scored.matched.length > 4 ? ' ...' : ''})${few}${unsure}`;
 }

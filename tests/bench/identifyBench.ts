@@ -1,6 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { loadAtomicData } from '../../src/atomic/index.ts';
-import { DEFAULT_NAMING_SETTINGS, nameMarks } from '../../src/identify/index.ts';
+import { DEFAULT_NAMING_SETTINGS, nameMarks, prepareNaming } from '../../src/identify/index.ts';
 import { simulateNebula } from '../identify/simulatedNebula.ts';
 
 /** Speed of naming 800 features against the whole list, redshift unknown; one sentence a figure. */
@@ -16,6 +16,9 @@ export function identifyBench(): string[] {
     high: 9800,
     strangers: 0.03,
   });
+  const opened = performance.now();
+  prepareNaming(data);
+  const prepared = performance.now() - opened;
   const times = Array.from({ length: 9 }, () => {
     const start = performance.now();
     nameMarks(marks, data, DEFAULT_NAMING_SETTINGS, []);
@@ -24,6 +27,6 @@ export function identifyBench(): string[] {
   const [first] = times;
   times.sort((a, b) => a - b);
   return [
-    `naming ${marks.length} features against ${data.lines.count} lines: ${first.toFixed(0)} ms at first, ${times[4].toFixed(0)} ms median (budget 300)`,
+    `naming ${marks.length} features against ${data.lines.count} lines: ${first.toFixed(0)} ms at first (after ${prepared.toFixed(0)} ms of preparing when the list is opened), ${times[4].toFixed(0)} ms median (budget 300)`,
   ];
 }
