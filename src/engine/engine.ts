@@ -19,6 +19,7 @@ import { matchVerdicts, type OwnLines, type Settings, type Verdict } from '../se
 import type { Analysis, FeatureView, Progress } from './analysis.ts';
 import { assemble, featureViews, withVerdicts } from './assemble.ts';
 import { fixedNames } from './fixedNames.ts';
+import { gapsOf } from './gapsOf.ts';
 import { marksOf } from './marksOf.ts';
 import { guessKind, type Material, readMaterial, type SourceKind } from './material.ts';
 import { nameChanges } from './nameChanges.ts';
@@ -121,7 +122,12 @@ export function createEngine(data: AtomicData, now: () => number): Engine {
         verdicts,
         marks.map((mark, k) => ({ at: mark.wavelength, atErr: found[k].centroidErr })),
       );
-      const namingSettings: NamingSettings = { ...DEFAULT_NAMING_SETTINGS, ...settings.naming, medium: what.reading.medium };
+      const namingSettings: NamingSettings = {
+        ...DEFAULT_NAMING_SETTINGS,
+        ...settings.naming,
+        medium: what.reading.medium,
+        ...(spectrum ? { gaps: gapsOf(spectrum) } : {}),
+      };
       const fixed = fixedNames(byFeature, list);
       const gasSettings: GasSettings = { ...DEFAULT_GAS_SETTINGS, ...settings.gas };
       const { medium } = what.reading;

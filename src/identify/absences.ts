@@ -47,7 +47,7 @@ export function absencesOf(
     list.flatMap((line): Absence[] => {
       const at = lines.wavelengthVac[line] * (facts.local[line] === 1 ? 1 : 1 + model.z);
       const reach = Math.max((settings.toleranceKms / SPEED_OF_LIGHT_KMS) * at, 3 * lines.wavelengthErr[line]);
-      if (hasWithin(places, at, reach)) return [];
+      if (!survey.covers(at) || hasWithin(places, at, reach)) return [];
       const room = survey.logLimitAt(at) - predictedLog(facts, line, model);
       return room < FAR_BELOW_DEX
         ? [{ line, room, err: facts.errDex[line], unfed: lines.mechanism(line) === 'fluorescence' ? UNFED : 0 }]

@@ -97,7 +97,7 @@ export function findCompanions(
     const say = (outcome: CompanionFinding['outcome'], nats: number, feature?: number): WeighedCompanion[] => [
       { finding: { ...base, outcome, ...(feature === undefined ? {} : { feature }) }, nats: SHARE * nats, sameUpper },
     ];
-    if (expectedAt < survey.low || expectedAt > survey.high) return say('outside', 0);
+    if (!survey.covers(expectedAt)) return say('outside', 0);
     if (Math.abs(expectedAt - mark.wavelength) < mergedWithin(mark)) return [];
     const there = nearestWithin(marks, expectedAt, (settings.toleranceKms / SPEED_OF_LIGHT_KMS) * expectedAt);
     const above = logPredicted - survey.logLimitAt(expectedAt);
@@ -165,6 +165,7 @@ export function missingLines(
     const scale = scaleOf(line);
     if (!(scale.seen > 0.8)) continue;
     const expectedAt = lines.wavelengthVac[line] * (1 + model.z);
+    if (!survey.covers(expectedAt)) continue;
     const log = logPredicted(line) + scale.mean;
     const above = log - survey.logLimitAt(expectedAt);
     if (above < 0.5) continue;

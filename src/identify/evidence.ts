@@ -80,7 +80,7 @@ function companionSentence(
     case 'absent':
       return `${name}, ${kin}, should have ${share} of this feature’s flux, above the detection limit at ${shown(expectedAt)} Å, and is not there.`;
     case 'outside':
-      return `${name}, ${kin}, lies outside the observed range.`;
+      return `${name}, ${kin}, lies outside the observed range or in a gap of it.`;
     case 'too-faint':
       return `${name}, ${kin}, should have ${share} of this feature’s flux: too faint to be seen here.`;
     default:

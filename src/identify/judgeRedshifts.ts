@@ -33,7 +33,7 @@ export function judgeRedshifts(
     .sort((a, b) => b.flux - a.flux)
     .slice(0, MOST_MARKS)
     .sort((a, b) => a.wavelength - b.wavelength);
-  const survey = surveyOf(bright);
+  const survey = surveyOf(bright, settings.gaps);
   const logs = hypotheses.map((h) => {
     const { evidence } = infer(bright, data, { ...settings, kind: 'unknown' }, survey, h.z, h.zErr, [], ROUNDS);
     return Math.log(Math.max(1e-300, h.probability)) + TRUST * evidence;

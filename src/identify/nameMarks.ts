@@ -38,7 +38,7 @@ export function nameMarks(
   const order = marks.map((_, j) => j).sort((a, b) => marks[a].wavelength - marks[b].wavelength);
   const sorted = order.map((j) => marks[j]);
   const place = new Map(order.map((j, k) => [j, k]));
-  const survey = surveyOf(sorted);
+  const survey = surveyOf(sorted, settings.gaps);
   const given = settings.z !== undefined;
   const redshifts = given
     ? [{ z: settings.z ?? 0, zErr: 0, probability: 1, reason: 'given' }]

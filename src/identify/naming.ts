@@ -27,6 +27,8 @@ export interface NamingSettings {
   /** Electron temperature (K) and density (cm^-3) at which lifetimes and critical densities are stated and companions are predicted. */
   readonly te: number;
   readonly ne: number;
+  /** Stretches of the observed spectrum where nothing could be seen, vacuum Angstrom: lines in them are not missed. */
+  readonly gaps?: readonly (readonly [number, number])[];
   /** Medium in which sentences give wavelengths; absent = vacuum. */
   readonly medium?: 'air' | 'vacuum';
 }

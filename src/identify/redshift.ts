@@ -131,7 +131,7 @@ function scoreRedshift(z0: number, marks: readonly Mark[], anchors: readonly Anc
   }
   for (const anchor of anchors) {
     const at = anchor.wavelength * (1 + z);
-    if (at < survey.low || at > survey.high || matches.some((m) => m.anchor === anchor)) continue;
+    if (!survey.covers(at) || matches.some((m) => m.anchor === anchor)) continue;
     const above = anchor.logStrength + dimmed(anchor) - survey.logLimitAt(at);
     if (above > 0) score -= Math.min(2, above / LOG_FLUX_SCATTER) * 0.7;
   }
@@ -171,7 +171,7 @@ function matchAnchors(
   const matches: { mark: Mark; anchor: Anchor; toleranceLog: number }[] = [];
   for (const anchor of anchors) {
     const at = anchor.wavelength * (1 + z);
-    if (at < survey.low || at > survey.high) continue;
+    if (!survey.covers(at)) continue;
     const mark = nearestMark(marks, at);
     const toleranceLog = Math.max(AGREE_KMS / SPEED_OF_LIGHT_KMS, (3 * mark.wavelengthErr) / at);
     if (Math.abs(Math.log(mark.wavelength / at)) <= toleranceLog) matches.push({ mark, anchor, toleranceLog });

@@ -1,6 +1,6 @@
 import { quantile } from '../numeric/index.ts';
 import { SPEED_OF_LIGHT_KMS } from '../units/index.ts';
-import type { Mark } from './naming.ts';
+import type { Mark, NamingSettings } from './naming.ts';
 import { typicalFwhmKms } from './widths.ts';
 
 /** What the list of marks itself tells: where it looked and how faint a line it would have shown. */
@@ -8,6 +8,8 @@ export interface Survey {
   /** Vacuum Angstrom, observed. */
   readonly low: number;
   readonly high: number;
+  /** Whether a line there would have been looked at: inside the range and in no gap. */
+  readonly covers: (wavelength: number) => boolean;
   /** log10 of the faintest flux that would have been measured at a wavelength, in the marks' unit. */
   readonly logLimitAt: (wavelength: number) => number;
   /** Distance of neighbouring marks about a wavelength, Angstrom: lines of no list stand where lines stand. */
@@ -30,7 +32,7 @@ const FAINT_QUANTILE = 0.06;
 /** A lone mark stands for at least this much spectrum, Angstrom. */
 const MIN_RANGE = 100;
 
-export function surveyOf(marks: readonly Mark[]): Survey {
+export function surveyOf(marks: readonly Mark[], gaps: NamingSettings['gaps'] = []): Survey {
   const shown = marks.filter((m) => !m.artefact && m.flux > 0).sort((a, b) => a.wavelength - b.wavelength);
   const all = marks.map((m) => m.wavelength);
   const low = Math.min(...all) * (1 - MARGIN);
@@ -49,6 +51,7 @@ export function surveyOf(marks: readonly Mark[]): Survey {
   return {
     low,
     high,
+    covers: (at) => at >= low && at <= high && !gaps.some(([from, to]) => at > from && at < to),
     logLimitAt,
     spacingAt: spacingOf(
       all.sort((a, b) => a - b),
