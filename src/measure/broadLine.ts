@@ -19,7 +19,7 @@ const PRICE_LINES = 2;
  */
 export function withBroadLine(samples: FitSamples, fit: GroupFit, width: WidthPrior, price: number): GroupFit {
   const row = longestRow(fit.components, width);
-  if (row.length < FEWEST_LINES || isPlateau(samples, fit, row, width)) return fit;
+  if (row.length < FEWEST_LINES) return fit;
   const others = fit.components.filter((c) => !row.includes(c));
   const strongest = row.reduce((a, b) => (Math.abs(b.flux) > Math.abs(a.flux) ? b : a));
   const trials = [
@@ -42,7 +42,8 @@ export function withBroadLine(samples: FitSamples, fit: GroupFit, width: WidthPr
     const stays = trial.components.every((c) => !c.isBroad || c.sigma > BROAD_TIMES * width.sigmaAt(c.centre));
     if (trial.end.ended === 'converged' && stays && cost(trial) < cost(best)) best = trial;
   }
-  return best;
+  // a step up and down of the continuum looks like a broad line, too
+  return best !== fit && isPlateau(samples, fit, row, width) ? fit : best;
 }
 
 /** The longest run of emission lines each near the next. */

@@ -7,7 +7,7 @@ import { firstAtLeast } from './profile.ts';
  * Samples this many sigma above or below the last continuum are lines, not continuum, pass by pass ... The first passes are lenient: what is clipped against a
  * poor first estimate would never come back.
  */
-const CLIP_SIGMA = [8, 6, 5, 4, 3.5, 3, 2.7, 2.7];
+const CLIP_SIGMA = [8, 5.5, 4, 3.2, 2.7, 2.7];
 /** ... and so are their neighbours to either side, in line widths (FWHM). */
 const GROW_FWHM = 1.2;
 /** The stretch of the first estimate, in FWHM: longer than any crowd of lines. */
