@@ -72,7 +72,7 @@ export function fitContinuum(input: ContinuumInput, settings: ContinuumSettings 
     inverse[i] = 1 / noise[i];
     if (usable[i] && !excluded?.[i] && noise[i] > 0) whole[i] = Math.min(1e6, (unit * inverse[i]) ** 2);
   }
-  const y = Float64Array.from(flux);
+  const y = flux.slice();
   for (const { at, level } of pins) y[at] = level;
   const bin = Math.max(1, Math.floor(period / BINS_A_PERIOD));
   let level = firstEstimate(flux, usable, fwhm);

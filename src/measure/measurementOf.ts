@@ -71,7 +71,7 @@ function modelOf(
   fits: readonly GroupFit[],
   shapes: ReadonlyMap<Component, ShapeFit>,
 ): Float64Array {
-  const model = Float64Array.from(continuum.level);
+  const model = continuum.level.slice();
   for (const fit of fits) {
     const gaussians = shapes.size === 0 ? fit.components : fit.components.filter((c) => !shapes.has(c));
     addProfiles(samples, gaussians, model);

@@ -40,7 +40,7 @@ export function prepare(spectrum: Spectrum, settings: MeasureSettings, remarks: 
   const regular = regularAxis(spectrum.wavelength);
   const x = regular ?? spectrum.wavelength;
   if (regular) note('axis-unrounded', 'the wavelengths are a regular axis printed with few digits; fits use the regular one');
-  const noise = spectrum.fluxErr ? Float64Array.from(spectrum.fluxErr) : scatterNoise(spectrum);
+  const noise = spectrum.fluxErr ? spectrum.fluxErr.slice() : scatterNoise(spectrum);
   const usable = usableSamples(spectrum, noise);
   const sampleWidth = widthsOfSamples(x);
   const told = toldWidth(spectrum, settings);
