@@ -73,6 +73,8 @@ export interface DeskFields {
   readonly paperFigures: PaperFigures;
   /** Density tried on the ladder, log10 cm^-3; absent = none. */
   readonly ladderLogNe?: number;
+  /** Redshift while the ruler of rest wavelengths is dragged. */
+  readonly draggedZ?: number;
   /** A place on the spectrum that something is to be done at by hand, Angstrom of the file. */
   readonly handPlace?: number;
   readonly filter: RowFilter;

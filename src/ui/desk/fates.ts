@@ -33,6 +33,7 @@ export const FATES = {
   run: 'gone',
   outOfDate: 'gone',
   handPlace: 'gone',
+  draggedZ: 'gone',
   alerts: 'gone',
   picked: 'gone',
   pickedFrom: 'gone',

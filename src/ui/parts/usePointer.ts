@@ -3,6 +3,7 @@ import { choose, wholeRange } from '../desk/chosen.ts';
 import { desk, setDesk } from '../desk/deskStore.ts';
 import { pointAt } from '../desk/handEdits.ts';
 import { look, shownRange, wholeSpectrum } from '../desk/looking.ts';
+import { dragRuler, dropRuler } from '../desk/ruler.ts';
 import { waveAxis } from '../desk/waveAxis.ts';
 import { fixed, round } from '../figures.ts';
 import { UNNAMED_LANE } from '../plot/lanes.ts';
@@ -22,11 +23,16 @@ const WHEEL_RATE = 0.0016;
 const PINCH_RATE = 0.01;
 const MOST_GAIN = 1e5;
 
+/** The ruler of the other frame stands above the lanes, this high, pixels. */
+const RULER_PX = 20;
+
 interface Press {
   readonly x: number;
   readonly y: number;
   readonly range: Range;
   moved: boolean;
+  /** Observed wavelength where the ruler of the other frame was taken hold of. */
+  readonly ruler?: number;
 }
 
 /** Wheel, drag, pinch, click and double click on the spectrum. */
@@ -67,7 +73,8 @@ export function usePointer(area: RefObject<HTMLDivElement | null>, layout: Panel
       const at = local(event);
       event.currentTarget.setPointerCapture(event.pointerId);
       presses.current.set(event.pointerId, at);
-      press.current = { ...at, range: shownRange(), moved: presses.current.size > 1 };
+      const ruler = layout && onRuler(layout, at) ? { ruler: wavelengthAt(layout, at.x) } : {};
+      press.current = { ...at, range: shownRange(), moved: presses.current.size > 1, ...ruler };
       const [a, b] = [...presses.current.values()];
       if (a && b && layout) pinch.current = { fingers: [shareOf(layout, a.x), shareOf(layout, b.x)], range: shownRange() };
     },
@@ -78,6 +85,13 @@ export function usePointer(area: RefObject<HTMLDivElement | null>, layout: Panel
       const [a, b] = [...presses.current.values()];
       if (a && b && pinch.current)
         return look(pinched(pinch.current.range, pinch.current.fingers, [shareOf(layout, a.x), shareOf(layout, b.x)], wholeRange()));
+      if (press.current?.ruler !== undefined) {
+        const said = dragRuler(press.current.ruler, wavelengthAt(layout, at.x));
+        press.current.moved = true;
+        if (readout.current) readout.current.textContent = said;
+        return;
+      }
+      event.currentTarget.classList.toggle('on-ruler', onRuler(layout, at));
       if (press.current) drag(press.current, at.x, layout);
       pointAt(at.x > layout.left ? wavelengthAt(layout, at.x) : undefined);
       if (readout.current) readout.current.textContent = at.x > layout.left ? readoutAt(wavelengthAt(layout, at.x)) : '';
@@ -87,9 +101,11 @@ export function usePointer(area: RefObject<HTMLDivElement | null>, layout: Panel
       if (presses.current.size < 2) pinch.current = undefined;
       const { current } = press;
       press.current = undefined;
-      if (current && !current.moved && layout) click(layout, local(event));
+      if (current?.ruler !== undefined) dropRuler();
+      else if (current && !current.moved && layout) click(layout, local(event));
     },
     onPointerCancel(event: PointerEvent) {
+      if (press.current?.ruler !== undefined) setDesk({ draggedZ: undefined });
       presses.current.delete(event.pointerId);
       press.current = undefined;
       pinch.current = undefined;
@@ -102,6 +118,9 @@ export function usePointer(area: RefObject<HTMLDivElement | null>, layout: Panel
   };
   return { handlers, readout };
 }
+
+const onRuler = (layout: PanelLayout, at: { x: number; y: number }) =>
+  at.y < layout.top && at.y > layout.top - RULER_PX && at.x > layout.left && desk().samples !== undefined;
 
 const innerWidthOf = (layout: PanelLayout) => layout.width - layout.left - layout.right;
 
