@@ -13,6 +13,8 @@ const MOST_SIGMA = 3.5;
 /** The spectrum is looked at in so many stretches and their median is taken: crowds of faint lines spoil some, not all. */
 const STRETCHES = 40;
 const FEWEST_PAIRS = 60;
+/** More samples of one stretch than this tell nothing new. */
+const ENOUGH_SAMPLES = 1500;
 const MOST_DISTANCE = 16;
 /** Correlations below this are the smoothing of the continuum and chance. */
 const LEAST_CORRELATION = 0.08;
@@ -38,7 +40,7 @@ function correlationAt(residual: Float64Array, free: Uint8Array, distance: numbe
   const length = Math.max(200, Math.ceil(residual.length / STRETCHES));
   const found: number[] = [];
   for (let from = 0; from < residual.length; from += length) {
-    const to = Math.min(residual.length, from + length);
+    const to = Math.min(residual.length, from + Math.min(length, ENOUGH_SAMPLES));
     let products = 0;
     let squares = 0;
     let pairs = 0;

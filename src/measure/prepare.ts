@@ -1,12 +1,13 @@
 import { median } from '../numeric/index.ts';
 import type { Remark } from '../problems/index.ts';
 import type { Spectrum } from '../spectrum/index.ts';
+import { FWHM_PER_SIGMA } from '../units/index.ts';
 import { type Continuum, type ContinuumInput, fitContinuum, typical } from './continuum.ts';
 import { noiseCorrelation } from './correlation.ts';
 import type { MeasureSettings, WidthLaw } from './feature.ts';
 import type { FitSamples } from './fitSamples.ts';
 import { toldWidth } from './learnLineSpread.ts';
-import { constantResolvingPower, fwhmAt, sigmaInSamples, widthPrior } from './lineSpread.ts';
+import { constantResolvingPower, sigmaInSamples, widthPrior } from './lineSpread.ts';
 import { scatterNoise, scatterOverNoise } from './noise.ts';
 import { regularAxis } from './regularAxis.ts';
 import { saturatedSamples } from './saturation.ts';
@@ -15,6 +16,10 @@ import { widthOfTallPeaks } from './tallPeaks.ts';
 
 /** Errors are taken as they are when the scatter agrees with them this well. */
 const NOISE_AGREES = 0.1;
+/** A line is at least this wide where the continuum is drawn, samples. */
+const LEAST_FWHM = 1.5;
+/** Samples of a stretch that give its rough level. */
+const ENOUGH_FOR_MEDIAN = 500;
 /** Neighbours share their noise when it counts more than this. */
 const NOISE_SHARED = 1.1;
 
@@ -45,8 +50,8 @@ export function prepare(spectrum: Spectrum, settings: MeasureSettings, remarks: 
   const sampleWidth = widthsOfSamples(x);
   const told = toldWidth(spectrum, settings);
   const width = told ?? widthByPeaks(x, flux, noise, usable);
-  const fwhm = new Float64Array(x.length);
-  for (let i = 0; i < fwhm.length; i++) fwhm[i] = Math.max(1.5, fwhmAt(width.law, x[i]) / sampleWidth[i]);
+  const fwhm = sigmaInSamples({ x, sampleWidth }, widthPrior(width.law, 0));
+  for (let i = 0; i < fwhm.length; i++) fwhm[i] = Math.max(LEAST_FWHM, FWHM_PER_SIGMA * fwhm[i]);
   const input: ContinuumInput = { x, flux, noise, usable, fwhm, sampleWidth };
   let continuum = fitContinuum(input, settings.continuum);
   const factor = scatterOverNoise(flux, continuum.level, noise, usable);
@@ -106,11 +111,12 @@ function roughContinuum(flux: Float64Array, usable: Uint8Array): Float64Array {
   const n = flux.length;
   const rough = new Float64Array(n);
   const stretch = Math.max(30, Math.min(2000, Math.ceil(n / 60)));
+  const step = Math.ceil(stretch / ENOUGH_FOR_MEDIAN);
   const values = new Float64Array(stretch);
   for (let from = 0; from < n; from += stretch) {
     const to = Math.min(n, from + stretch);
     let count = 0;
-    for (let i = from; i < to; i++) if (usable[i]) values[count++] = flux[i];
+    for (let i = from; i < to; i += step) if (usable[i]) values[count++] = flux[i];
     rough.fill(median(values.subarray(0, count)), from, to);
   }
   return rough;
