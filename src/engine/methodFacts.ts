@@ -80,6 +80,7 @@ function measuringFacts({ measureSettings, features }: Done, measurement: Measur
     resolvingPowerFrom: measurement.resolvingPowerFrom,
     widthForm: measurement.lineWidth.form,
     edits: edits.length,
+    reshaped: features.filter((f) => f.measured.byHand?.startsWith('measured as')).length,
     tied: features.filter((f) => f.measured.byHand?.startsWith('tied to')).length,
     absorption: measureSettings.absorption,
   };

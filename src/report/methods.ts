@@ -36,6 +36,8 @@ export interface MethodFacts {
     readonly resolvingPowerFrom: 'user' | 'file' | 'lines' | 'sampling';
     readonly widthForm: 'constant-resolving-power' | 'constant-width' | 'linear';
     readonly edits: number;
+    /** Features measured as a Voigt profile or as two Gaussians. */
+    readonly reshaped: number;
     readonly tied: number;
     readonly absorption: boolean;
   };
@@ -136,6 +138,10 @@ function measuringSentences({ measuring, counts }: MethodFacts): string[] {
   if (measuring.tied > 0)
     said.push(
       `${measuring.tied} blended ${measuring.tied === 1 ? 'line was' : 'lines were'} tied in velocity and width to an unblended line of the same pair.`,
+    );
+  if (measuring.reshaped > 0)
+    said.push(
+      `${measuring.reshaped} ${measuring.reshaped === 1 ? 'feature was' : 'features were'} measured as a Voigt profile or a sum of two Gaussians instead of a single Gaussian.`,
     );
   if (measuring.edits > 0)
     said.push(`${measuring.edits} ${measuring.edits === 1 ? 'change was' : 'changes were'} made to the fits by hand.`);

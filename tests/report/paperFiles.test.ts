@@ -110,7 +110,14 @@ describe('methods and references', () => {
           before: EMPTY_DOCUMENT.settings,
           after: {
             ...EMPTY_DOCUMENT.settings,
-            measure: { thresholdSigma: 7, edits: [{ edit: 'split', at: 5007.36 }], continuum: { exclude: [[4990, 5020]] } },
+            measure: {
+              thresholdSigma: 7,
+              edits: [
+                { edit: 'split', at: 5007.36 },
+                { edit: 'profile', at: 4363.66, as: 'voigt' },
+              ],
+              continuum: { exclude: [[4990, 5020]] },
+            },
             naming: { z: 0.0001 },
           },
         },
@@ -118,7 +125,8 @@ describe('methods and references', () => {
     });
     const text = methodsText((await analyse(document)).methods);
     expect(text).toContain('above 7.0 sigma');
-    expect(text).toContain('1 change was made to the fits by hand');
+    expect(text).toContain('2 changes were made to the fits by hand');
+    expect(text).toContain('1 feature was measured as a Voigt profile or a sum of two Gaussians');
     expect(text).toContain('1 excluded stretches');
     expect(text).toContain('(given)');
   });
