@@ -31,7 +31,7 @@ export function methodFacts(done: Done): MethodFacts {
       edition: data.version,
       inputsHash: data.inputsHash,
       lines: data.lines.count - done.ownLines,
-      ions: new Set(data.lines.ions.map((ion) => ion.name)).size,
+      ions: ionsOf(data),
       ownLines: done.ownLines,
     },
     source: {
@@ -63,6 +63,16 @@ export function methodFacts(done: Done): MethodFacts {
     remarks: naming.remarks.map(wordProblem),
     citations: done.features.flatMap((feature) => feature.name?.transitions.flatMap((t) => t.sources) ?? []),
   };
+}
+
+/** Ions with lines of their own: carriers of sky lines and bands are none. */
+function ionsOf({ lines }: AtomicData): number {
+  const names = new Set<string>();
+  for (let line = 0; line < lines.count; line++) {
+    const { name } = lines.ions[lines.ion[line]];
+    if (/^[A-Z][a-z]? [IVXL]+$/.test(name) && !['sky', 'telluric'].includes(lines.nature(line))) names.add(name);
+  }
+  return names.size;
 }
 
 function measuringFacts({ measureSettings, features }: Done, measurement: Measurement, hasErrors: boolean): MethodFacts['measuring'] {

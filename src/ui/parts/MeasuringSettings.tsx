@@ -42,26 +42,24 @@ export function MeasuringSettings() {
         used={analysis.resolvingPower && Math.round(analysis.resolvingPower)}
         commit={(resolvingPower, said) => measure({ resolvingPower }, said)}
       />
-      <div className="two">
-        <NumberSetting
-          label={label.instrumentFwhm}
-          unit="Å"
-          low={0.0001}
-          high={1000}
-          value={chosen.instrumentFwhmA}
-          used={analysis.lineWidth && Number(analysis.lineWidth.fwhmA.toPrecision(3))}
-          commit={(instrumentFwhmA, said) => measure({ instrumentFwhmA }, said)}
-        />
-        <NumberSetting
-          label={label.instrumentSlope}
-          unit="Å per 1000 Å"
-          low={-100}
-          high={100}
-          value={chosen.instrumentFwhmSlope === undefined ? undefined : Number((1000 * chosen.instrumentFwhmSlope).toPrecision(6))}
-          used={0}
-          commit={(slope, said) => measure({ instrumentFwhmSlope: slope === undefined ? undefined : slope / 1000 }, said)}
-        />
-      </div>
+      <NumberSetting
+        label={label.instrumentFwhm}
+        unit="Å"
+        low={0.0001}
+        high={1000}
+        value={chosen.instrumentFwhmA}
+        used={analysis.lineWidth && Number(analysis.lineWidth.fwhmA.toPrecision(3))}
+        commit={(instrumentFwhmA, said) => measure({ instrumentFwhmA }, said)}
+      />
+      <NumberSetting
+        label={label.instrumentSlope}
+        unit="Å per 1000 Å"
+        low={-100}
+        high={100}
+        value={chosen.instrumentFwhmSlope === undefined ? undefined : Number((1000 * chosen.instrumentFwhmSlope).toPrecision(6))}
+        used={0}
+        commit={(slope, said) => measure({ instrumentFwhmSlope: slope === undefined ? undefined : slope / 1000 }, said)}
+      />
       <p className="hint">
         {label.instrumentHint} {analysis.lineWidth ? label.widthForm[analysis.lineWidth.form] : ''}
       </p>
